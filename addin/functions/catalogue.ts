@@ -1,0 +1,77 @@
+/**
+ * Every worksheet function with its help and the computation behind it, for all
+ * faces: the workbook, the command line, the local workbook, the README reference.
+ * Names and help come from functions.json, so each is written once, in functions.ts.
+ */
+import { acceptance, draw, envelope, InputError, profile } from '../../src/index';
+import type { Range } from '../../src/index';
+import metadata from './functions.json';
+
+export interface CatalogueParameter {
+  readonly name: string;
+  readonly description: string;
+  readonly optional: boolean;
+  readonly repeating: boolean;
+}
+
+export interface CatalogueEntry {
+  /** As in the worksheet, without the namespace: "DRAW". */
+  readonly name: string;
+  readonly description: string;
+  readonly parameters: readonly CatalogueParameter[];
+  /**
+   * The function's answer. Arguments by position, null when omitted; those of the
+   * repeating last parameter follow flat.
+   * @throws {InputError} when there are more arguments than parameters, or as the function says
+   */
+  call(args: readonly (Range | null)[]): Range;
+}
+
+/** The word before the dot in a worksheet: UNDERCURVE.DRAW. */
+export const namespace = 'UNDERCURVE';
+
+type Argument = Range | null;
+
+const computations: Record<string, (at: readonly Argument[], rest: readonly Range[]) => Range> = {
+  DRAW: ([density, limits, rows, seed, label], givens) =>
+    draw(density, limits, rows, seed, label, givens),
+  ENVELOPE: ([density, limits], givens) => envelope(density, limits, givens),
+  ACCEPTANCE: ([density, limits, rows, seed, label], givens) =>
+    acceptance(density, limits, rows, seed, label, givens),
+  PROFILE: ([density, limits, count], givens) => profile(density, limits, count, givens),
+};
+
+interface FunctionMetadata {
+  name: string;
+  description: string;
+  parameters: { name: string; description: string; optional?: boolean; repeating?: boolean }[];
+}
+
+function entryOf({ name, description, parameters: listed }: FunctionMetadata): CatalogueEntry {
+  const compute = computations[name];
+  if (compute === undefined) throw new Error(`bug: ${name} has help but no computation`);
+  const parameters = listed.map(({ optional = false, repeating = false, ...rest }) => ({
+    ...rest,
+    optional,
+    repeating,
+  }));
+  const repeats = parameters.at(-1)?.repeating ?? false;
+  const nFixed = parameters.length - (repeats ? 1 : 0);
+  const call = (args: readonly Argument[]): Range => {
+    if (!repeats && args.length > nFixed) {
+      throw new InputError(
+        name,
+        `${args.length} arguments are given`,
+        `it takes at most ${nFixed}`,
+      );
+    }
+    const fixed = Array.from({ length: nFixed }, (_, i) => args[i] ?? null);
+    return compute(
+      fixed,
+      args.slice(nFixed).filter((arg) => arg !== null),
+    );
+  };
+  return { name, description, parameters, call };
+}
+
+export const catalogue: readonly CatalogueEntry[] = metadata.functions.map(entryOf);
