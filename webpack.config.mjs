@@ -45,14 +45,14 @@ const forNode = (folder) => ({
 });
 
 /** The pane's page, with office.js from an address that its policy then allows. */
-function panePage(chunks, officeAddress, officeScript) {
+function panePage(chunks, office) {
   return new HtmlPlugin({
     template: 'addin/pane/pane.html',
     filename: 'pane.html',
     chunks,
     chunksSortMode: 'manual',
     inject: 'body',
-    templateParameters: { officeAddress, officeScript },
+    templateParameters: office,
   });
 }
 
@@ -66,12 +66,15 @@ async function addin() {
     ...forBrowser,
     entry: { functions: './addin/functions/register.ts', pane: './addin/pane/pane.ts' },
     plugins: [
-      panePage(['functions', 'pane'], OFFICE_ADDRESS, `${OFFICE_ADDRESS}/lib/1/hosted/office.js`),
+      panePage(['functions', 'pane'], {
+        officeAddress: OFFICE_ADDRESS,
+        officeScript: `${OFFICE_ADDRESS}/lib/1/hosted/office.js`,
+        localWorkbook: '',
+      }),
       new CopyPlugin({
         patterns: [
           icons,
           'addin/pane/support.html',
-          // The function help is also a page of its own file; see functions-json.mjs.
           ...Object.entries(made).map(([to, text]) => ({
             from: 'package.json',
             to,
@@ -88,12 +91,21 @@ function pane() {
     ...forBrowser,
     entry: { pane: './addin/pane/pane.ts' },
     plugins: [
-      panePage(['pane'], '', 'office/office.js'),
+      panePage(['pane'], {
+        officeAddress: '',
+        officeScript: 'office/office.js',
+        localWorkbook: '../',
+      }),
       new CopyPlugin({
         patterns: [
           icons,
           'addin/pane/support.html',
-          { from: `${officePackage}/office.js`, to: 'office/office.js', info: { minimized: true } },
+          // Outside any host office.js loads these two and nothing else.
+          ...['office.js', 'o15apptofilemappingtable.js'].map((file) => ({
+            from: `${officePackage}/${file}`,
+            to: `office/${file}`,
+            info: { minimized: true },
+          })),
         ],
       }),
     ],

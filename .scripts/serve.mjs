@@ -19,6 +19,9 @@ const TYPES = {
   '.xml': 'application/xml; charset=utf-8',
 };
 
+/** What an address that ends in a slash shows: the first of these that its folder has. */
+const STARTS = ['index.html', 'pane.html'];
+
 /** The file a request means, or undefined where there is none inside the mounted folder. */
 function fileFor(mounts, url) {
   const path = decodeURIComponent(new URL(url, 'http://127.0.0.1').pathname);
@@ -27,13 +30,18 @@ function fileFor(mounts, url) {
     .filter((prefix) => path.startsWith(prefix))
     .sort((a, b) => b.length - a.length)[0];
   if (mount === undefined) return undefined;
-  const { folder, index } = mounts[mount];
-  const file = resolve(folder, path.slice(mount.length) || index);
-  if (!file.startsWith(resolve(folder) + sep)) return undefined;
-  return statSync(file, { throwIfNoEntry: false })?.isFile() ? file : undefined;
+  const folder = resolve(mounts[mount]);
+  const rest = path.slice(mount.length);
+  return (rest === '' ? STARTS : [rest])
+    .map((name) => resolve(folder, name))
+    .filter((file) => file.startsWith(folder + sep))
+    .find((file) => statSync(file, { throwIfNoEntry: false })?.isFile());
 }
 
-/** Starts the server on a free port; resolves to its address, which ends in a slash. */
+/**
+ * Starts the server; mounts go from a path prefix to a folder. Port 0 is any free one.
+ * Resolves to the address, which ends in a slash.
+ */
 export function serve(mounts, port = 0) {
   const server = createServer((request, response) => {
     let file;
@@ -60,21 +68,6 @@ export function serve(mounts, port = 0) {
   });
 }
 
-/** Folders as the command line and the tests give them: index.html unless it is the pane. */
-export function mountsOf(folders) {
-  return Object.fromEntries(
-    Object.entries(folders).map(([prefix, folder]) => [
-      prefix,
-      {
-        folder,
-        index: statSync(`${folder}/index.html`, { throwIfNoEntry: false })
-          ? 'index.html'
-          : 'pane.html',
-      },
-    ]),
-  );
-}
-
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
-  console.log(await serve(mountsOf(JSON.parse(process.argv[2]))));
+  console.log(await serve(JSON.parse(process.argv[2])));
 }

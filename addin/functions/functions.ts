@@ -7,7 +7,7 @@
 import { answer } from './host';
 
 /**
- * Draws random values that follow the density exactly: one column for each label, the same values until an input changes.
+ * Draws random values that follow the density exactly: one column for each label, the same values until an input changes. In the unit of x.
  * @customfunction DRAW
  * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), a table of points (x and height, straight lines between), or a block of two columns that names density, from, to, rows, seed, label and constants. Heights need no particular unit.
  * @param limits Two cells, from and to, in the unit of x. A table needs none.
@@ -15,7 +15,6 @@ import { answer } from './host';
  * @param seed Any text or number except blank and 0. The same seed gives the same values.
  * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each.
  * @param givens Values for the names in the formula: two columns, name and value.
- * @returns One column of values for each label, in the unit of x.
  */
 export function draw(
   density: any[][],
@@ -29,19 +28,18 @@ export function draw(
 }
 
 /**
- * Lists the pieces of the proved envelope: in each piece the density lies on or below the upper line and on or above the lower line.
+ * Lists the pieces of the proved envelope: in each piece the density lies on or below the upper line and on or above the lower line. A heading row, then one row a piece: from and to in the unit of x, four heights, share of proposals and acceptance as fractions of 1.
  * @customfunction ENVELOPE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table needs none.
  * @param givens Values for the names in the formula: two columns, name and value.
- * @returns A heading row, then one row a piece: from and to in the unit of x, four heights, share of proposals and acceptance as fractions of 1.
  */
 export function envelope(density: any[][], limits?: any[][], givens?: any[][][]): any[][] {
   return answer('ENVELOPE', [density, limits], givens);
 }
 
 /**
- * Tells how the draws were made and whether that went as proved: inputs as read, proof, proposals, acceptance, test of the count, notes.
+ * Tells how the draws were made and whether that went as proved: inputs as read, proof, proposals, acceptance, test of the count, notes. Two columns: item and value.
  * @customfunction ACCEPTANCE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
  * @param limits Two cells, from and to, in the unit of x. A table needs none.
@@ -49,7 +47,6 @@ export function envelope(density: any[][], limits?: any[][], givens?: any[][][])
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
  * @param givens Values for the names in the formula: two columns, name and value.
- * @returns Two columns: item and value.
  */
 export function acceptance(
   density: any[][],
@@ -63,13 +60,12 @@ export function acceptance(
 }
 
 /**
- * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it.
+ * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it. A heading row, then one row a point: x in its unit, the rest in share per unit of x.
  * @customfunction PROFILE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table needs none.
  * @param count How many points.
  * @param givens Values for the names in the formula: two columns, name and value.
- * @returns A heading row, then one row a point: x in its unit, density, upper and lower in shares per unit of x.
  */
 export function profile(
   density: any[][],
