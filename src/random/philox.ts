@@ -7,33 +7,15 @@
  * Does not handle: other word sizes or round counts.
  */
 
-/** Upper and lower halves of the two multipliers, D2511F53 and CD9E8D57. */
-export const M0_HI = 0xd251;
-export const M0_LO = 0x1f53;
-export const M1_HI = 0xcd9e;
-export const M1_LO = 0x8d57;
+// Taken out once: where Math is not the engine's own (a sandbox), each look-up costs more than the product.
+const { imul } = Math;
 
-export const M0 = 0xd2511f53;
-export const M1 = 0xcd9e8d57;
-
+const M0 = 0xd2511f53;
+const M1 = 0xcd9e8d57;
 /** What the two key words grow by after each round (Weyl sequence). */
-export const W0 = 0x9e3779b9;
-export const W1 = 0xbb67ae85;
-
-export const ROUNDS = 10;
-
-/**
- * The upper 32 bits, signed, of the 64-bit product of `word` and the multiplier whose 16-bit
- * halves are `hi` and `lo`. Exact: long multiplication in which no sum passes 2^32 − 1, since
- * (2^16 − 1)² + 2·(2^16 − 1) = 2^32 − 1.
- */
-export function highWord(word: number, hi: number, lo: number): number {
-  const wordLo = word & 0xffff;
-  const wordHi = word >>> 16;
-  const middle = (Math.imul(wordHi, lo) + (Math.imul(wordLo, lo) >>> 16)) | 0;
-  const carry = (Math.imul(wordLo, hi) + (middle & 0xffff)) | 0;
-  return (Math.imul(wordHi, hi) + (middle >>> 16) + (carry >>> 16)) | 0;
-}
+const W0 = 0x9e3779b9;
+const W1 = 0xbb67ae85;
+const ROUNDS = 10;
 
 /**
  * Writes the four random words of counter (c0, c1, c2, c3) under key (k0, k1) to `out`.
@@ -56,10 +38,10 @@ export function philox4x32(
   let a = k0;
   let b = k1;
   for (let round = 0; round < ROUNDS; round++) {
-    const high0 = highWord(x0, M0_HI, M0_LO);
-    const high1 = highWord(x2, M1_HI, M1_LO);
-    const low0 = Math.imul(x0, M0);
-    const low1 = Math.imul(x2, M1);
+    const high0 = timesM0High(x0);
+    const high1 = timesM1High(x2);
+    const low0 = imul(x0, M0);
+    const low1 = imul(x2, M1);
     x0 = high1 ^ x1 ^ a;
     x1 = low1;
     x2 = high0 ^ x3 ^ b;
@@ -71,4 +53,80 @@ export function philox4x32(
   out[1] = x1;
   out[2] = x2;
   out[3] = x3;
+}
+
+/**
+ * Writes the blocks of counters (c0, 0, c2, c3), (c0 + 1, 0, c2, c3) … as fractions, two a
+ * block: words 0, 1 to out[at], words 2, 3 to out[at + 1], and so on.
+ * Guarantee: multiples of 2^-53 in [0, 1), those of `philox4x32` and `fraction` to the bit.
+ * Derived: `philox4x32` with its first two rounds opened up. Only word 0 varies from block to
+ * block, so half of each of those rounds is the same for all blocks and is done once.
+ */
+export function fillFractions(
+  c0: number,
+  c2: number,
+  c3: number,
+  k0: number,
+  k1: number,
+  out: Float64Array,
+  at: number,
+  blocks: number,
+): void {
+  const a1 = (k0 + W0) | 0;
+  const b1 = (k1 + W1) | 0;
+  const a2 = (a1 + W0) | 0;
+  const b2 = (b1 + W1) | 0;
+  const first0 = timesM1High(c2) ^ k0;
+  const first1 = imul(c2, M1);
+  const second2 = timesM0High(first0) ^ b1;
+  const second3 = imul(first0, M0);
+  for (let i = 0; i < blocks; i++) {
+    const first2 = timesM0High(c0 + i) ^ c3 ^ k1;
+    let x0 = timesM1High(first2) ^ first1 ^ a1;
+    let x1 = imul(first2, M1);
+    let x2 = second2 ^ imul(c0 + i, M0);
+    let x3 = second3;
+    let a = a2;
+    let b = b2;
+    for (let round = 2; round < ROUNDS; round++) {
+      const high0 = timesM0High(x0);
+      const high1 = timesM1High(x2);
+      const low0 = imul(x0, M0);
+      const low1 = imul(x2, M1);
+      x0 = high1 ^ x1 ^ a;
+      x1 = low1;
+      x2 = high0 ^ x3 ^ b;
+      x3 = low0;
+      a = (a + W0) | 0;
+      b = (b + W1) | 0;
+    }
+    out[at + 2 * i] = fraction(x0, x1);
+    out[at + 2 * i + 1] = fraction(x2, x3);
+  }
+}
+
+/** The upper 27 bits of one word followed by the upper 26 bits of the next, as a fraction of 1. */
+export function fraction(word: number, next: number): number {
+  return ((word >>> 5) * 67108864 + (next >>> 6)) * 1.1102230246251565e-16;
+}
+
+// The upper 32 bits, signed, of the 64-bit product with a multiplier, by long multiplication in
+// 16-bit halves. Exact: no sum passes (2^16 − 1)² + 2·(2^16 − 1) = 2^32 − 1. The halves of M0 and
+// M1 are written as literals so that they are folded: as constants imported from another file
+// they cost nearly half the speed (27 against 49 million numbers a second).
+
+function timesM0High(word: number): number {
+  const lo = word & 0xffff;
+  const hi = word >>> 16;
+  const middle = (imul(hi, 0x1f53) + (imul(lo, 0x1f53) >>> 16)) | 0;
+  const carry = (imul(lo, 0xd251) + (middle & 0xffff)) | 0;
+  return (imul(hi, 0xd251) + (middle >>> 16) + (carry >>> 16)) | 0;
+}
+
+function timesM1High(word: number): number {
+  const lo = word & 0xffff;
+  const hi = word >>> 16;
+  const middle = (imul(hi, 0x8d57) + (imul(lo, 0x8d57) >>> 16)) | 0;
+  const carry = (imul(lo, 0xcd9e) + (middle & 0xffff)) | 0;
+  return (imul(hi, 0xcd9e) + (middle >>> 16) + (carry >>> 16)) | 0;
 }

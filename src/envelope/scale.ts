@@ -1,0 +1,53 @@
+/**
+ * How far the density must be scaled so that neither its heights nor its areas
+ * overflow or underflow: an exponent e of two, from proved bounds of ln f alone.
+ * A height that a few sampled points suggest would miss a lone spike.
+ */
+import FlatQueue from 'flatqueue';
+import { Encloser } from '../formula/enclose';
+import type { Tape } from '../formula/tape';
+import * as elementary from '../numeric/elementary';
+import { middle } from '../numeric/float';
+
+/** While ln f and ln(f · width) at the peak stay within ± this, doubles serve as they are. */
+const PLAIN = 500;
+/** The peak of ln f is found to within this. */
+const NEAR = 20;
+const MAX_STEPS = 2000;
+const LN_2 = 0.6931471805599453;
+
+interface Stretch {
+  readonly a: number;
+  readonly b: number;
+}
+
+/** The exponent e by which the density of `tape` on [from, to] is scaled (× 2^-e); 0 in the usual case. */
+export function findExponent(tape: Tape, from: number, to: number): number {
+  const peak = enclosePeak(new Encloser(tape), from, to);
+  const widest = Math.max(0, elementary.ln(to / 2 - from / 2) + LN_2);
+  if (peak === null || (peak - NEAR >= -PLAIN && peak + widest <= PLAIN)) return 0;
+  return Math.round(peak / LN_2);
+}
+
+/** An upper bound of ln f that is within NEAR of its maximum; null if f is zero everywhere or has no bound. */
+function enclosePeak(encloser: Encloser, from: number, to: number): number | null {
+  const queue = new FlatQueue<Stretch>();
+  let reached = -Infinity;
+  const consider = (a: number, b: number): void => {
+    const m = middle(a, b);
+    reached = Math.max(reached, encloser.over(m, m, null, null).logarithm.lo);
+    queue.push({ a, b }, -encloser.over(a, b, null, null).logarithm.hi);
+  };
+  consider(from, to);
+  for (let i = 0; i < MAX_STEPS; i++) {
+    const top = -queue.peekValue()!;
+    if (top === -Infinity) return null;
+    if (top - reached <= NEAR) return top;
+    const { a, b } = queue.pop()!;
+    const m = middle(a, b);
+    if (m === a) break;
+    consider(a, m);
+    consider(m, b);
+  }
+  return reached === -Infinity ? null : reached;
+}

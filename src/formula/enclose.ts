@@ -1,0 +1,316 @@
+/**
+ * A tape over an interval of its one variable: enclosures of f, f′ and f″, and of
+ * ln|f| with its derivatives where the formula's structure gives them.
+ *
+ * Source: the rules of src/envelope/METHOD.md, "A piece". ln f is built structurally
+ * (product → sum, EXP(u) → u) and meets the direct enclosure, which keeps products
+ * of EXPs tight and lets a density that overflows doubles be scaled by 2^-exponent.
+ * Not handled: unbounded intervals, several variables.
+ */
+import type { Interval } from '../numeric/interval';
+import * as I from '../numeric/interval';
+import type { Jet } from '../numeric/jet';
+import * as J from '../numeric/jet';
+import { powerOfTwo } from '../numeric/float';
+import { Defined } from './operation';
+import type { Step, Tape } from './tape';
+import { CHOOSE_BY, EXP } from './vocabulary';
+
+/** ln 2, enclosed. */
+const LN_2: Interval = { lo: 0.6931471805599453, hi: 0.6931471805599454 };
+/** Beyond this exponent 2^-exponent is no double, and ln f alone gives the scaled density. */
+const MAX_DIRECT_EXPONENT = 1000;
+
+/** Enclosures of every step at one point; what `over` needs at the ends of an interval. */
+export interface PointValues {
+  x: number;
+  readonly values: readonly Interval[];
+  readonly defined: Uint8Array;
+  /** The scaled density at x; entire where it is undefined. */
+  readonly density: Interval;
+}
+
+/** What is known of the scaled density over an interval. */
+export interface Enclosure {
+  readonly density: Jet;
+  /** ln of the unscaled density. */
+  readonly logarithm: Interval;
+  defined: Defined;
+  /** A step that changes sign once inside and brings a kink, a jump or a domain's end there; −1: none. */
+  turn: number;
+}
+
+const scratch = I.interval();
+const scaled = J.jet();
+const term = I.interval();
+
+/** Sets out to the jet of ln|u| from the jet of u. */
+function logarithmOf(out: Jet, u: Jet): void {
+  I.absolute(scratch, u.v);
+  if (scratch.hi === 0) I.set(out.v, -Infinity, -Number.MAX_VALUE);
+  else I.logarithm(out.v, scratch);
+  if (I.holds(u.v, 0)) {
+    J.setJump(out);
+    return;
+  }
+  I.divide(out.d, u.d, u.v);
+  I.square(scratch, out.d);
+  I.divide(out.h, u.h, u.v);
+  I.subtract(out.h, out.h, scratch);
+}
+
+/** Tightens a jet known to be ≥ 0 by the jet of its logarithm. */
+function meetExponential(out: Jet, log: Jet): void {
+  I.exponential(scratch, log.v);
+  I.meet(out.v, scratch);
+  I.multiply(scratch, out.v, log.d);
+  I.meet(out.d, scratch);
+  I.square(scratch, log.d);
+  I.add(scratch, scratch, log.h);
+  I.multiply(scratch, out.v, scratch);
+  I.meet(out.h, scratch);
+}
+
+export class Encloser {
+  private readonly jets: Jet[];
+  /** Jets of ln|step| for the steps through which the root's is built. */
+  private readonly logs: (Jet | null)[];
+  private readonly hasOwnLog: boolean[];
+  private readonly defined: Uint8Array;
+  private readonly active: readonly (Step & { place: number })[];
+  private readonly variable: number;
+  private readonly shift = I.interval();
+  private readonly atPoint: PointValues;
+  private readonly result: Enclosure = { density: J.jet(), logarithm: I.interval(), defined: Defined.Everywhere, turn: -1 };
+
+  /** `exponent`: the density is taken × 2^-exponent. */
+  constructor(
+    private readonly tape: Tape,
+    readonly exponent = 0,
+  ) {
+    const { steps, root } = tape;
+    this.variable = tape.variables[0]!;
+    this.jets = steps.map((step) => {
+      const u = J.jet();
+      if (step.enclosure) {
+        I.copy(u.v, step.enclosure);
+        J.setConstantSlopes(u);
+      }
+      return u;
+    });
+    this.defined = new Uint8Array(steps.length);
+    this.active = steps.flatMap((step, place) => (step.nOperands > 0 ? [{ ...step, place }] : []));
+    const wanted = wantedLogs(steps, root);
+    this.logs = steps.map((_, i) => (wanted[i] ? J.jet() : null));
+    this.hasOwnLog = steps.map((step, i) => wanted[i]! && step.operation.logarithm !== undefined);
+    this.logs.forEach((log, i) => {
+      if (log && steps[i]!.enclosure) logarithmOf(log, this.jets[i]!);
+    });
+    I.scale(this.shift, LN_2, exponent);
+    this.atPoint = this.pointValues();
+  }
+
+  /** Room for `at`. */
+  pointValues(): PointValues {
+    return {
+      x: NaN,
+      values: this.tape.steps.map((step) => (step.enclosure ? { ...step.enclosure } : I.interval())),
+      defined: new Uint8Array(this.tape.steps.length),
+      density: I.interval(),
+    };
+  }
+
+  /** Encloses every step at the double x. */
+  at(x: number, out: PointValues): void {
+    out.x = x;
+    const { values, defined } = out;
+    if (this.variable >= 0) I.set(values[this.variable]!, x, x);
+    for (const { operation, a, b, c, place } of this.active) {
+      const u = values[a]!;
+      const v = values[b]!;
+      const state = definedState(operation, u, v, values[c]!, defined[a]!, defined[b]!, defined[c]!);
+      defined[place] = state;
+      if (state === Defined.Nowhere) I.setEntire(values[place]!);
+      else operation.enclose(values[place]!, u, v, values[c]!);
+    }
+    this.finishPoint(out);
+  }
+
+  private finishPoint(out: PointValues): void {
+    const { root } = this.tape;
+    const { density } = out;
+    if (out.defined[root] !== Defined.Everywhere) {
+      I.setEntire(density);
+      return;
+    }
+    I.copy(density, out.values[root]!);
+    // Where the direct value overflows or is lost to underflow, the logarithm may still know it.
+    if (this.exponent !== 0 || density.hi === Infinity || (density.lo === 0 && density.hi > 0)) {
+      I.copy(density, this.over(out.x, out.x, null, null).density.v);
+    }
+  }
+
+  /** Encloses the scaled density at the double x. */
+  densityAt(x: number, out: Interval): void {
+    this.at(x, this.atPoint);
+    I.copy(out, this.atPoint.density);
+  }
+
+  /**
+   * Encloses everything over [a, b]. Given the steps at both ends, a step that is
+   * monotone between them is bounded by its end values. The result is valid until
+   * the next call.
+   */
+  over(a: number, b: number, atA: PointValues | null, atB: PointValues | null): Enclosure {
+    const { jets, logs, defined } = this;
+    if (this.variable >= 0) {
+      const x = jets[this.variable]!;
+      I.set(x.v, a, b);
+      I.set(x.d, 1, 1);
+      I.set(x.h, 0, 0);
+      const log = logs[this.variable];
+      if (log) logarithmOf(log, x);
+    }
+    let mayTurn = false;
+    for (const { operation, a: p, b: q, c: r, place } of this.active) {
+      const out = jets[place]!;
+      const u = jets[p]!;
+      const v = jets[q]!;
+      const w = jets[r]!;
+      const state = definedState(operation, u.v, v.v, w.v, defined[p]!, defined[q]!, defined[r]!);
+      defined[place] = state;
+      if (state === Defined.Nowhere) J.setUnknown(out);
+      else {
+        operation.enclose(out.v, u.v, v.v, w.v);
+        if (state === Defined.Everywhere) operation.slopes(out, u, v, w);
+        else J.setJump(out);
+      }
+      if (operation.turnsOn !== undefined) {
+        const turning = jets[operation.turnsOn === 0 ? p : operation.turnsOn === 1 ? q : r]!.v;
+        if (turning.lo < 0 && turning.hi > 0) mayTurn = true;
+      }
+      this.logOf(place, operation.logarithm, p, q, r);
+      if (atA && atB && state === Defined.Everywhere) tightenMonotone(out, place, atA, atB);
+    }
+    return this.finish(mayTurn);
+  }
+
+  private logOf(place: number, structural: Step['operation']['logarithm'], p: number, q: number, r: number): void {
+    const { jets, logs } = this;
+    const log = logs[place];
+    if (!log) return;
+    const out = jets[place]!;
+    if (!this.hasOwnLog[place] || this.defined[place] !== Defined.Everywhere) {
+      logarithmOf(log, out);
+      return;
+    }
+    const fallback = log;
+    structural!(log, [logs[p] ?? fallback, logs[q] ?? fallback, logs[r] ?? fallback], [jets[p]!, jets[q]!, jets[r]!]);
+    if (out.v.lo >= 0 && structural !== EXP.logarithm) meetExponential(out, log);
+  }
+
+  private finish(mayTurn: boolean): Enclosure {
+    const { result } = this;
+    const { root } = this.tape;
+    const log = this.logs[root]!;
+    result.defined = this.defined[root]!;
+    if (this.exponent === 0) J.copyJet(result.density, this.jets[root]!);
+    else this.scaleRoot(result.density, this.jets[root]!, log);
+    I.copy(result.logarithm, log.v);
+    result.turn = mayTurn ? this.findTurn() : -1;
+    return result;
+  }
+
+  private scaleRoot(out: Jet, direct: Jet, log: Jet): void {
+    const isDirect = Math.abs(this.exponent) <= MAX_DIRECT_EXPONENT;
+    if (isDirect) {
+      const k = powerOfTwo(-this.exponent);
+      I.set(term, k, k);
+      J.scaleJet(out, direct, term);
+    } else if (direct.v.lo === 0 && direct.v.hi === 0) J.copyJet(out, direct);
+    else J.setUnknown(out);
+    if (direct.v.lo >= 0) {
+      if (out.v.lo < 0) I.set(out.v, 0, Infinity);
+      J.copyJet(scaled, log);
+      I.subtract(scaled.v, log.v, this.shift);
+      meetExponential(out, scaled);
+    }
+  }
+
+  /** The first turning step that counts and passes through 0 once, steadily. */
+  private findTurn(): number {
+    const { jets } = this;
+    const isRelevant = new Uint8Array(jets.length);
+    isRelevant[this.tape.root] = 1;
+    let found = -1;
+    for (let i = this.active.length - 1; i >= 0; i--) {
+      const { operation, a, b, c, place } = this.active[i]!;
+      if (!isRelevant[place]) continue;
+      isRelevant[a] = isRelevant[b] = isRelevant[c] = 1;
+      if (operation === CHOOSE_BY) {
+        const condition = jets[c]!.v;
+        if (condition.lo === 1 && a !== b) isRelevant[b] = 0;
+        if (condition.hi === 0 && a !== b) isRelevant[a] = 0;
+      }
+      if (operation.turnsOn === undefined) continue;
+      const turning = operation.turnsOn === 0 ? a : operation.turnsOn === 1 ? b : c;
+      const { v, d } = jets[turning]!;
+      if (v.lo < 0 && v.hi > 0 && (d.lo > 0 || d.hi < 0)) found = turning;
+    }
+    return found;
+  }
+
+  /** Why the last enclosed density is undefined: what its innermost undefined step says. */
+  undefinedReason(): string {
+    let place = this.tape.root;
+    for (;;) {
+      const { operation, a, b, c, nOperands } = this.tape.steps[place]!;
+      const bad = nOperands > 0 ? [a, b, c].find((operand) => this.defined[operand] !== Defined.Everywhere) : undefined;
+      if (bad === undefined) return operation.outside ?? 'a value is undefined';
+      place = bad;
+    }
+  }
+}
+
+/** A step is as defined as its operands and its own domain allow; IF asks only the branch it takes. */
+function definedState(
+  operation: Step['operation'],
+  u: Interval,
+  v: Interval,
+  w: Interval,
+  ofA: number,
+  ofB: number,
+  ofC: number,
+): Defined {
+  let state: number;
+  if (operation === CHOOSE_BY) {
+    const ofBranches =
+      w.lo === 1 ? ofA : w.hi === 0 ? ofB : ofA === ofB ? ofA : Defined.InPart;
+    state = Math.max(ofC, ofBranches);
+  } else state = Math.max(ofA, ofB, ofC);
+  if (operation.defined && state !== Defined.Nowhere) state = Math.max(state, operation.defined(u, v));
+  return state;
+}
+
+function tightenMonotone(out: Jet, place: number, atA: PointValues, atB: PointValues): void {
+  const { lo, hi } = out.d;
+  if (lo < 0 && hi > 0) return;
+  if (atA.defined[place] !== Defined.Everywhere || atB.defined[place] !== Defined.Everywhere) return;
+  const first = atA.values[place]!;
+  const last = atB.values[place]!;
+  if (lo >= 0) I.set(term, first.lo, last.hi);
+  else I.set(term, last.lo, first.hi);
+  I.meet(out.v, term);
+}
+
+/** The steps whose logarithms the root's logarithm is built from. */
+function wantedLogs(steps: readonly Step[], root: number): boolean[] {
+  const wanted = steps.map(() => false);
+  wanted[root] = true;
+  for (let i = root; i >= 0; i--) {
+    const { operation, a, b, nOperands } = steps[i]!;
+    if (!wanted[i] || nOperands === 0 || !operation.logarithm || operation === EXP) continue;
+    wanted[a] = wanted[b] = true;
+  }
+  return wanted;
+}

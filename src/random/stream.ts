@@ -1,0 +1,69 @@
+/**
+ * The random numbers of one input: every number belongs to (method, seed, label, row, attempt)
+ * and is the same whatever else is drawn. Seed and label are in the key (key.ts); the rest is
+ * the Philox counter (philox.ts):
+ *
+ * | word | first number of a row        | further numbers of a row |
+ * |------|------------------------------|--------------------------|
+ * | 0    | row pair, floor(row / 2)     | row                      |
+ * | 1    | 0                            | attempt                  |
+ * | 2    | 0, "first"                   | 1, "further"             |
+ * | 3    | method number                | method number            |
+ *
+ * A first block serves two rows: its words 0, 1 the even row, its words 2, 3 the odd one. A
+ * further block gives the pair u (words 0, 1) and v (words 2, 3) of one attempt: attempt k ≥ 1
+ * is a fresh proposal and uses both; attempt 0 continues the row's first number and uses only v.
+ *
+ * Two words w, w′ make one number with 53 random bits, a multiple of 2^-53 in [0, 1).
+ * Rows are whole numbers below 2^32, attempts likewise.
+ */
+import type { Key } from './key';
+import { fillFractions, fraction, philox4x32 } from './philox';
+
+const FIRST = 0;
+const FURTHER = 1;
+
+/** The numbers of one key; holds no position, so calls may come in any order. */
+export class RowStream {
+  private readonly k0: number;
+  private readonly k1: number;
+  private readonly block = new Uint32Array(4);
+
+  constructor(
+    key: Key,
+    private readonly method = 0,
+  ) {
+    [this.k0, this.k1] = key;
+  }
+
+  /**
+   * Writes the first numbers of rows firstRow … firstRow + count − 1 to out[0 … count − 1].
+   * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
+   */
+  fillFirst(firstRow: number, out: Float64Array, count: number): void {
+    let filled = 0;
+    if (count > 0 && firstRow & 1) out[filled++] = this.first(firstRow);
+    const pairs = (count - filled) >>> 1;
+    const pair = (firstRow + filled) >>> 1;
+    fillFractions(pair, FIRST, this.method, this.k0, this.k1, out, filled, pairs);
+    filled += 2 * pairs;
+    if (filled < count) out[filled] = this.first(firstRow + filled);
+  }
+
+  /**
+   * Writes u and v of an attempt of a row to out[0] and out[1].
+   * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
+   */
+  further(row: number, attempt: number, out: Float64Array): void {
+    const { block } = this;
+    philox4x32(row, attempt, FURTHER, this.method, this.k0, this.k1, block);
+    out[0] = fraction(block[0], block[1]);
+    out[1] = fraction(block[2], block[3]);
+  }
+
+  private first(row: number): number {
+    const { block } = this;
+    philox4x32(row >>> 1, 0, FIRST, this.method, this.k0, this.k1, block);
+    return row & 1 ? fraction(block[2], block[3]) : fraction(block[0], block[1]);
+  }
+}
