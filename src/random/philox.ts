@@ -7,7 +7,8 @@
  * Does not handle: other word sizes or round counts.
  */
 
-// Taken out once: where Math is not the engine's own (a sandbox), each look-up costs more than the product.
+// Taken out once: where Math is not the engine's own (a sandbox), looking it up costs far more
+// than the product.
 const { imul } = Math;
 
 const M0 = 0xd2511f53;

@@ -57,13 +57,13 @@ export class RowStream {
   further(row: number, attempt: number, out: Float64Array): void {
     const { block } = this;
     philox4x32(row, attempt, FURTHER, this.method, this.k0, this.k1, block);
-    out[0] = fraction(block[0], block[1]);
-    out[1] = fraction(block[2], block[3]);
+    out[0] = fraction(block[0]!, block[1]!);
+    out[1] = fraction(block[2]!, block[3]!);
   }
 
   private first(row: number): number {
     const { block } = this;
     philox4x32(row >>> 1, 0, FIRST, this.method, this.k0, this.k1, block);
-    return row & 1 ? fraction(block[2], block[3]) : fraction(block[0], block[1]);
+    return row & 1 ? fraction(block[2]!, block[3]!) : fraction(block[0]!, block[1]!);
   }
 }

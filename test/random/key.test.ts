@@ -9,7 +9,7 @@ import { keyOf, keyText } from '../../src/random/key';
 /** ARC4 keyed by the characters of a text, 256 outputs dropped, four bytes to a word, big end first. */
 function arc4Words(text: string, count: number): number[] {
   const s = Array.from({ length: 256 }, (_, i) => i);
-  const at = (i: number) => s[i & 255];
+  const at = (i: number) => s[i & 255]!;
   const swap = (i: number, j: number) => ([s[i], s[j]] = [at(j), at(i)]);
   for (let i = 0, j = 0; i < 256; i++) {
     j = (j + at(i) + text.charCodeAt(i % text.length)) & 255;

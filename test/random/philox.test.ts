@@ -1,7 +1,10 @@
 import fc from 'fast-check';
-import { highWord, M0, M0_HI, M0_LO, M1, M1_HI, M1_LO, philox4x32 } from '../../src/random/philox';
+import { fillFractions, fraction, philox4x32 } from '../../src/random/philox';
 
-const word = fc.integer({ min: 0, max: 0xffffffff });
+type Words = [number, number, number, number];
+
+const half = fc.oneof(fc.constantFrom(0, 1, 0x7fff, 0x8000, 0xfffe, 0xffff), fc.nat(0xffff));
+const word = fc.tuple(half, half).map(([hi, lo]) => hi * 65536 + lo);
 
 /** The generator once more in 64-bit whole numbers, word for word from the paper. */
 function philoxInBigInts(counter: readonly number[], key: readonly number[]): number[] {
@@ -18,12 +21,12 @@ function philoxInBigInts(counter: readonly number[], key: readonly number[]): nu
   return [x0, x1, x2, x3].map(Number);
 }
 
-function philox(counter: readonly number[], key: readonly number[]): number[] {
-  const [c0, c1, c2, c3] = counter as [number, number, number, number];
+function philox(counter: readonly number[], key: readonly number[]): Words {
+  const [c0, c1, c2, c3] = counter as Words;
   const [k0, k1] = key as [number, number];
   const out = new Uint32Array(4);
   philox4x32(c0, c1, c2, c3, k0, k1, out);
-  return [...out];
+  return [...out] as Words;
 }
 
 // Salmon, Moraes, Dror, Shaw, "Parallel random numbers: as easy as 1, 2, 3", SC11 (2011):
@@ -70,6 +73,7 @@ describe('philox4x32', () => {
   );
 
   it('philox4x32(counter, key) agrees with the paper written in 64-bit whole numbers [law]', () => {
+    // Words with extreme halves are where a lost carry of the long multiplication would show.
     fc.assert(
       fc.property(fc.tuple(word, word, word, word), fc.tuple(word, word), (counter, key) => {
         expect(philox(counter, key)).toEqual(philoxInBigInts(counter, key));
@@ -91,22 +95,41 @@ describe('philox4x32', () => {
   });
 });
 
-describe('highWord', () => {
-  const exact = (a: number, m: number) => Number(((BigInt(a) * BigInt(m)) >> 32n) & 0xffffffffn);
-
-  it('highWord(word, …) is the upper half of the exact product, extreme halves included [law]', () => {
-    const half = fc.oneof(fc.constantFrom(0, 1, 0x7fff, 0x8000, 0xffff), fc.nat(0xffff));
+describe('fillFractions', () => {
+  it('fillFractions(c0, …) gives the blocks of philox4x32 one after another [law]', () => {
+    const runs = fc.nat(40);
     fc.assert(
-      fc.property(half, half, half, half, (aHi, aLo, mHi, mLo) => {
-        const a = aHi * 65536 + aLo;
-        expect(highWord(a, mHi, mLo) >>> 0).toBe(exact(a, mHi * 65536 + mLo));
+      fc.property(word, word, word, word, word, runs, runs, (c0, c2, c3, k0, k1, at, blocks) => {
+        const out = new Float64Array(at + 2 * blocks + 3).fill(-1);
+        fillFractions(c0, c2, c3, k0, k1, out, at, blocks);
+        const expected = new Array<number>(out.length).fill(-1);
+        for (let i = 0; i < blocks; i++) {
+          const [w0, w1, w2, w3] = philox([c0 + i, 0, c2, c3], [k0, k1]);
+          expected[at + 2 * i] = fraction(w0, w1);
+          expected[at + 2 * i + 1] = fraction(w2, w3);
+        }
+        expect([...out]).toEqual(expected);
       }),
-      { seed: 3, numRuns: 5000 },
+      { seed: 3, numRuns: 500 },
+    );
+  });
+});
+
+describe('fraction', () => {
+  it('fraction(word, next) is the upper 27 and 26 bits read as a binary fraction [law]', () => {
+    fc.assert(
+      fc.property(word, word, (w, next) => {
+        const bits = ((BigInt(w) >> 5n) << 26n) + (BigInt(next) >> 6n);
+        expect(fraction(w, next)).toBe(Number(bits) / 2 ** 53);
+        expect(fraction(w | 0, next | 0)).toBe(fraction(w, next));
+      }),
+      { seed: 5, numRuns: 2000 },
     );
   });
 
-  it('the multiplier halves join to the multipliers [law]', () => {
-    expect(M0_HI * 65536 + M0_LO).toBe(M0);
-    expect(M1_HI * 65536 + M1_LO).toBe(M1);
+  it('fraction(word, next) reaches 0 and 1 − 2^-53 and nothing beyond [law]', () => {
+    expect(fraction(0, 0)).toBe(0);
+    expect(fraction(31, 63)).toBe(0);
+    expect(fraction(0xffffffff, 0xffffffff)).toBe(1 - 2 ** -53);
   });
 });
