@@ -2,7 +2,7 @@
  * One piece of an envelope: an upper and a lower straight line over [from, to],
  * both proved by the bounds on f″ (src/envelope/METHOD.md, "A piece").
  */
-import { addDown, addUp, down, mulDown, mulUp, up } from '../numeric/float';
+import { addDown, addUp, down, mulDown, mulUp, ulp, up } from '../numeric/float';
 import type { Interval } from '../numeric/interval';
 import type { Jet } from '../numeric/jet';
 
@@ -28,6 +28,9 @@ export interface Piece {
 /** Lines are evaluated in doubles when drawing: their ends leave room for that rounding. */
 const LINE_ROOM = 4e-16;
 
+/** The middle of a piece only a few doubles wide tells nothing. */
+const MAX_OFF = 1e-3;
+
 /** A trapezoid's area, rounded up. */
 function areaUp(left: number, right: number, width: number): number {
   return mulUp(addUp(left / 2, right / 2), width);
@@ -37,20 +40,57 @@ function areaDown(left: number, right: number, width: number): number {
   return mulDown(addDown(left / 2, right / 2), width);
 }
 
+/** Enclosures of the density at the ends and at the double `x` between them; entire where it is undefined. */
+export interface PieceEnds {
+  readonly atFrom: Interval;
+  readonly atTo: Interval;
+  readonly atMiddle: Interval;
+}
+
 /**
- * The piece that the bounds prove: `f` over [from, to], `atFrom` and `atTo` at its
- * ends (entire where the density is undefined). Negative parts of f count as 0.
+ * How far a function can rise above its chord, when −f″ ≤ bend and it lies `lift`
+ * above the chord at the middle: on each half it stays below a parabola through the
+ * known points.
+ *
+ *          ___
+ *       .'  |  '.      half = half the width
+ *      /    | lift     on the left half, s from the end:
+ *     a-----+------b   rise ≤ lift·s/half + bend·s(half − s)/2
  */
-export function provePiece(from: number, to: number, f: Jet, atFrom: Interval, atTo: Interval): Piece {
+function rise(bend: number, lift: number, half: number): number {
+  if (!(bend > 0)) return 0;
+  const whole = mulUp(mulUp(bend, half), half) / 2;
+  if (!(whole < Infinity && lift > -Infinity && lift < whole)) return whole;
+  const at = half / 2 + lift / (bend * half);
+  return at <= 0 ? 0 : Math.min(whole, ((bend * at * at) / 2) * (1 + 1e-14));
+}
+
+/**
+ * The piece that the bounds prove: `f` over [from, to] and the density at three
+ * points. Negative parts of f count as 0.
+ */
+export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atMiddle }: PieceEnds): Piece {
   const width = up(to - from);
   const widthLo = down(to - from);
   const top = Math.max(0, Math.min(f.v.hi, roof(f.d, atFrom.hi, atTo.hi, width)));
   const floor = Math.max(f.v.lo, -roof({ lo: -f.d.hi, hi: -f.d.lo }, -atFrom.lo, -atTo.lo, width));
   const bottom = Math.max(0, floor);
-  const rise = mulUp(Math.max(0, -f.h.lo), mulUp(width, width) / 8);
-  const sag = mulUp(Math.max(0, f.h.hi), mulUp(width, width) / 8);
-  const upper = betterUpper(Math.max(0, addUp(atFrom.hi, rise)), Math.max(0, addUp(atTo.hi, rise)), top);
-  const lower = betterLower(addDown(atFrom.lo, -sag), addDown(atTo.lo, -sag), bottom);
+  // The middle is a double, off the centre by this share of the width at most.
+  const off = ulp(Math.max(Math.abs(from), Math.abs(to))) / width;
+  const half = up((width / 2) * (1 + 2 * off));
+  const slack = off > MAX_OFF ? Infinity : mulUp(Math.max(atTo.hi - atFrom.lo, atFrom.hi - atTo.lo), off);
+  const lift = addUp(addUp(atMiddle.hi, -addDown(atFrom.lo, atTo.lo) / 2), slack);
+  const dip = addUp(addUp(addUp(atFrom.hi, atTo.hi) / 2, -atMiddle.lo), slack);
+  const gain = rise(-f.h.lo, lift, half);
+  const sag = rise(f.h.hi, dip, half);
+  const upper = betterUpper(Math.max(0, addUp(atFrom.hi, gain)), Math.max(0, addUp(atTo.hi, gain)), top);
+  const dent = mulUp(Math.max(0, f.h.hi), mulUp(width, width)) / 2;
+  const lower = bestLower(
+    [addDown(atFrom.lo, -sag), addDown(atTo.lo, -sag)],
+    [addDown(atFrom.lo, -dent), atTo.lo],
+    [atFrom.lo, addDown(atTo.lo, -dent)],
+    [bottom, bottom],
+  );
   const upperArea = areaUp(upper[0], upper[1], width);
   const lowerArea = areaDown(lower[0], lower[1], widthLo);
   const cube = mulUp(mulUp(width, width), width) / 12;
@@ -96,8 +136,17 @@ function betterUpper(left: number, right: number, top: number): readonly [number
   return isLine ? [room(left), room(right)] : top === 0 ? [0, 0] : [room(top), room(top)];
 }
 
-function betterLower(left: number, right: number, bottom: number): readonly [number, number] {
-  const isLine = left >= 0 && right >= 0 && left + right > bottom + bottom;
+/**
+ * The line of the largest area among those that stay ≥ 0. Besides the chord lowered
+ * evenly there is the chord that keeps one end and lowers the other four times as
+ * far (a tangent of the parabola f″w²τ(1 − τ)/2 at that end), for densities that
+ * come down to 0.
+ */
+function bestLower(...lines: readonly (readonly [number, number])[]): readonly [number, number] {
+  let best: readonly [number, number] = [0, 0];
+  for (const line of lines) {
+    if (line[0] >= 0 && line[1] >= 0 && line[0] + line[1] > best[0] + best[1]) best = line;
+  }
   const room = (height: number): number => Math.max(0, down(height * (1 - LINE_ROOM)));
-  return isLine ? [room(left), room(right)] : [room(bottom), room(bottom)];
+  return [room(best[0]), room(best[1])];
 }

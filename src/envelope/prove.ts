@@ -17,6 +17,7 @@ import { Defined } from '../formula/operation';
 import type { Tape } from '../formula/tape';
 import { middle, powerOfTwo } from '../numeric/float';
 import * as I from '../numeric/interval';
+import * as J from '../numeric/jet';
 import { shortNumber } from '../numeric/text';
 import { findCrossing } from './crossing';
 import type { Envelope } from './envelope';
@@ -58,6 +59,8 @@ class Prover {
   private readonly atLeft: PointValues;
   private readonly atMiddle: PointValues;
   private readonly atRight: PointValues;
+  private readonly atCentre = I.interval();
+  private readonly bounds = J.jet();
   private readonly urgent = new FlatQueue<Part>();
   private readonly byGap = new FlatQueue<Part>();
   /** All parts of the limits as they stand; the queues hold those that can be halved. */
@@ -85,7 +88,7 @@ class Prover {
 
   prove(): Envelope {
     this.refine();
-    const parts = [...this.parts].filter((part) => !this.isDropped(part)).sort((p, q) => p.from - q.from);
+    const parts = this.kept();
     const areas = totalAreas(parts);
     if (areas.upperArea === 0) throw this.zeroEverywhere();
     this.settleSigns(parts);
@@ -185,19 +188,19 @@ class Prover {
     if (part.turn >= 0) {
       const crossing = findCrossing(this.encloser, part.turn, from, to, this.atMiddle);
       if (crossing && (crossing.lo > from || crossing.hi < to)) {
-        this.cut(from, Math.max(from, crossing.lo), Math.min(to, crossing.hi), to);
+        this.cut([from, Math.max(from, crossing.lo), Math.min(to, crossing.hi), to]);
         return;
       }
     }
-    this.cut(from, middle(from, to), middle(from, to), to);
+    this.cut([from, middle(from, to), to]);
   }
 
-  /** Replaces [from, to] by its parts up to lo, from lo to hi and from hi on; empty ones are left out. */
-  private cut(from: number, lo: number, hi: number, to: number): void {
-    const bounds = [from, lo, hi, to].filter((x, i, all) => i === 0 || x > all[i - 1]!);
+  /** Replaces a part by the parts between these bounds; empty ones are left out. */
+  private cut(bounds: readonly number[]): void {
     let [left, right] = [this.atLeft, this.atMiddle];
-    this.encloser.at(from, left);
+    this.encloser.at(bounds[0]!, left);
     for (const x of bounds.slice(1)) {
+      if (x <= left.x) continue;
       this.encloser.at(x, right);
       this.add(this.examine(left, right));
       [left, right] = [right, left];
@@ -222,8 +225,12 @@ class Prover {
       return { ...part, defined: Defined.Everywhere };
     }
     this.useMonotone(enclosure, left, right);
-    const piece = provePiece(left.x, right.x, density, left.density, right.density);
-    return { ...piece, defined, turn, reason };
+    const part = { defined, turn, reason };
+    // Asking for the middle ends the life of the enclosure, so its bounds are kept first.
+    J.copyJet(this.bounds, density);
+    this.encloser.densityAt(middle(left.x, right.x), this.atCentre);
+    const ends = { atFrom: left.density, atTo: right.density, atMiddle: this.atCentre };
+    return { ...provePiece(left.x, right.x, this.bounds, ends), ...part };
   }
 
   /** A scaled density is tightened here; an unscaled one already was, as a step of the tape. */
@@ -234,10 +241,17 @@ class Prover {
     else if (hi <= 0) I.meet(density.v, { lo: right.density.lo, hi: left.density.hi });
   }
 
-  /** Stretches of a few doubles around jumps carry less than rounding does and are left out. */
-  private isDropped(part: Part): boolean {
-    const isSliver = part.to - part.from < NEGLIGIBLE * this.width;
-    return isSliver && part.upperArea < NEGLIGIBLE * NEGLIGIBLE * this.upperArea;
+  /** The parts in order, without slivers around jumps that carry less than rounding does. */
+  private kept(): Part[] {
+    const sorted = [...this.parts].sort((p, q) => p.from - q.from);
+    const limit = NEGLIGIBLE * this.lowerArea;
+    let dropped = 0;
+    return sorted.filter((part) => {
+      const isSliver = part.to - part.from < NEGLIGIBLE * this.width;
+      if (!isSliver || dropped + part.upperArea > limit) return true;
+      dropped += part.upperArea;
+      return false;
+    });
   }
 
   /** Proves f ≥ −10^-12 of the peak wherever a piece's own bound does not. */

@@ -63,6 +63,8 @@ function logarithmOf(out: Jet, u: Jet): void {
 function meetExponential(out: Jet, log: Jet): void {
   I.exponential(scratch, log.v);
   I.meet(out.v, scratch);
+  // Where the density touches 0 its logarithm has no slope, and 0 · ∞ says nothing.
+  if (!(log.d.lo > -Infinity && log.d.hi < Infinity)) return;
   I.multiply(scratch, out.v, log.d);
   I.meet(out.d, scratch);
   I.square(scratch, log.d);
