@@ -6,6 +6,8 @@ const noDefaultExport = {
   message: 'Export by name.',
 };
 
+const globalsOf = (...names) => Object.fromEntries(names.map((name) => [name, 'readonly']));
+
 export default tseslint.config(
   { ignores: ['.build/', 'node_modules/'] },
   js.configs.recommended,
@@ -33,7 +35,7 @@ export default tseslint.config(
     files: ['**/*.mjs'],
     extends: [tseslint.configs.disableTypeChecked],
     languageOptions: {
-      globals: { console: 'readonly', process: 'readonly', URL: 'readonly', Buffer: 'readonly' },
+      globals: globalsOf('console', 'process', 'URL', 'Buffer', 'performance', 'setTimeout'),
     },
     rules: { 'no-restricted-syntax': 'off' },
   },

@@ -14,7 +14,7 @@ function reference({ functions }) {
   return functions.map(section).join('\n');
 }
 
-function section({ name, description, parameters, result }) {
+function section({ name, description, parameters }) {
   const names = parameters.map(({ name, repeating }) => (repeating ? `${name}…` : name));
   const lines = parameters.map(
     ({ name, optional, description }) =>

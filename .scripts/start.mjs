@@ -14,7 +14,10 @@ const { values } = parseArgs({ options: { open: { type: 'boolean' } } });
 
 console.log('Building the local workbook …');
 await build(['page', 'pane']);
-const url = await serve({ '/': '.build/page', '/pane/': '.build/pane' }, Number(process.env.PORT));
+const url = await serve(
+  { '/': '.build/page', '/pane/': '.build/pane' },
+  Number(process.env.PORT ?? 0),
+);
 console.log(`Undercurve's local workbook: ${url}   (Ctrl+C ends it)`);
 if (values.open) {
   const opener = OPENERS[process.platform] ?? 'xdg-open';

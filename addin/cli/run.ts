@@ -3,7 +3,7 @@
  * Status 0 is an answer, 1 an error in the input of a function, 2 wrong usage.
  */
 import { parseArgs } from 'node:util';
-import { version } from '../../package.json';
+import packageJson from '../../package.json';
 import { CellErrorPassed, InputError } from '../../src/index';
 import { catalogue, namespace } from '../functions/catalogue';
 import type { CatalogueEntry } from '../functions/catalogue';
@@ -56,7 +56,7 @@ function answer(argv: readonly string[], streams: Streams): string {
   const { values, positionals } = parse(argv);
   const [command, ...rest] = positionals;
   if (values.help) return HELP;
-  if (values.version) return `${version}\n`;
+  if (values.version) return `${packageJson.version}\n`;
   if (values.json && command !== 'functions') {
     throw new UsageError('--json: belongs to the command functions; leave it out.');
   }

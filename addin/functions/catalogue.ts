@@ -32,13 +32,15 @@ export const namespace = 'UNDERCURVE';
 
 type Argument = Range | null;
 
+/** A missing argument is null, as an omitted one is. */
 const computations: Record<string, (at: readonly Argument[], rest: readonly Range[]) => Range> = {
-  DRAW: ([density, limits, rows, seed, label], givens) =>
+  DRAW: ([density = null, limits = null, rows = null, seed = null, label = null], givens) =>
     draw(density, limits, rows, seed, label, givens),
-  ENVELOPE: ([density, limits], givens) => envelope(density, limits, givens),
-  ACCEPTANCE: ([density, limits, rows, seed, label], givens) =>
+  ENVELOPE: ([density = null, limits = null], givens) => envelope(density, limits, givens),
+  ACCEPTANCE: ([density = null, limits = null, rows = null, seed = null, label = null], givens) =>
     acceptance(density, limits, rows, seed, label, givens),
-  PROFILE: ([density, limits, count], givens) => profile(density, limits, count, givens),
+  PROFILE: ([density = null, limits = null, count = null], givens) =>
+    profile(density, limits, count, givens),
 };
 
 interface FunctionMetadata {
@@ -65,11 +67,8 @@ function entryOf({ name, description, parameters: listed }: FunctionMetadata): C
         `it takes at most ${nFixed}`,
       );
     }
-    const fixed = Array.from({ length: nFixed }, (_, i) => args[i] ?? null);
-    return compute(
-      fixed,
-      args.slice(nFixed).filter((arg) => arg !== null),
-    );
+    const givens = args.slice(nFixed).filter((arg) => arg !== null);
+    return compute(args.slice(0, nFixed), givens);
   };
   return { name, description, parameters, call };
 }

@@ -55,8 +55,7 @@ async function copyExample(): Promise<void> {
   }
 }
 
-function sayWhere(host: string | null): void {
-  const inExcel = host === 'Excel';
+function sayWhere(inExcel: boolean): void {
   element('outside').hidden = inExcel;
   element('host').textContent = inExcel
     ? 'The functions are ready: type =UNDERCURVE. in a cell.'
@@ -69,11 +68,11 @@ element('copy').addEventListener('click', () => void copyExample());
 
 if (typeof Office === 'undefined') {
   // The host's script did not load, so there is neither a host nor a network.
-  sayWhere(null);
+  sayWhere(false);
 } else {
-  const giveUp = setTimeout(() => sayWhere(null), PATIENCE_MS);
+  const giveUp = setTimeout(() => sayWhere(false), PATIENCE_MS);
   void Office.onReady(({ host }) => {
     clearTimeout(giveUp);
-    sayWhere(host);
+    sayWhere(host === Office.HostType.Excel);
   });
 }
