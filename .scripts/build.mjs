@@ -1,4 +1,4 @@
-/** Builds bundles of webpack.config.mjs by name; throws with the tool's own report if one fails. */
+/** Builds bundles of webpack.config.mjs by name; ends the program with the tool's report if one fails. */
 import webpack from 'webpack';
 import configurations from '../webpack.config.mjs';
 
@@ -10,6 +10,9 @@ export async function build(names) {
   );
   await new Promise((done) => compiler.close(done));
   const report = stats.toString({ preset: 'errors-warnings', colors: process.stdout.isTTY });
-  if (stats.hasErrors()) throw new Error(report);
-  if (report) console.log(report);
+  if (stats.hasErrors()) {
+    console.error(report);
+    process.exit(1);
+  }
+  if (stats.hasWarnings()) console.log(report);
 }
