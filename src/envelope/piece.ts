@@ -72,8 +72,8 @@ function rise(bend: number, lift: number, half: number): number {
 export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atMiddle }: PieceEnds): Piece {
   const width = up(to - from);
   const widthLo = down(to - from);
-  const top = Math.max(0, Math.min(f.v.hi, roof(f.d, atFrom.hi, atTo.hi, width)));
-  const floor = Math.max(f.v.lo, -roof({ lo: -f.d.hi, hi: -f.d.lo }, -atFrom.lo, -atTo.lo, width));
+  const top = Math.max(0, Math.min(f.v.hi, roof(f.d.lo, f.d.hi, atFrom.hi, atTo.hi, width)));
+  const floor = Math.max(f.v.lo, -roof(-f.d.hi, -f.d.lo, -atFrom.lo, -atTo.lo, width));
   const bottom = Math.max(0, floor);
   // The middle is a double, off the centre by this share of the width at most.
   const off = ulp(Math.max(Math.abs(from), Math.abs(to))) / width;
@@ -113,18 +113,18 @@ export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atM
 }
 
 /**
- * The highest that a function can rise between two heights when its slope stays in d.
+ * The highest that a function can rise between two heights when its slope stays between fall and climb.
  *
  *      /\        the steepest rise from the left meets
  *     /  \       the steepest fall to the right
  *    l    r
  */
-function roof(d: Interval, left: number, right: number, width: number): number {
-  if (!(d.hi < Infinity && d.lo > -Infinity && left < Infinity && right < Infinity)) return Infinity;
-  if (d.hi <= 0) return left;
-  if (d.lo >= 0) return right;
-  const run = d.hi - d.lo;
-  const terms = [(right * d.hi) / run, (left * -d.lo) / run, d.hi * (-d.lo / run) * width];
+function roof(fall: number, climb: number, left: number, right: number, width: number): number {
+  if (!(climb < Infinity && fall > -Infinity && left < Infinity && right < Infinity)) return Infinity;
+  if (climb <= 0) return left;
+  if (fall >= 0) return right;
+  const run = climb - fall;
+  const terms = [(right * climb) / run, (left * -fall) / run, climb * (-fall / run) * width];
   const size = terms.reduce((sum, term) => sum + Math.abs(term), 0);
   const height = terms.reduce((sum, term) => sum + term, 0) + size * 2e-15;
   return height === height ? height : Infinity;

@@ -15,6 +15,7 @@ import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
 import type { Tape } from '../formula/tape';
+import * as elementary from '../numeric/elementary';
 import { middle, powerOfTwo } from '../numeric/float';
 import * as I from '../numeric/interval';
 import * as J from '../numeric/jet';
@@ -35,12 +36,16 @@ const SIGN_TOLERANCE = 1e-12;
 const NARROW = powerOfTwo(-60);
 /** A stretch this narrow, as a share of the limits, may be undefined: it is within rounding. */
 const NEGLIGIBLE = powerOfTwo(-42);
+/** At this acceptance the gaps follow the cubes of the widths well enough to place the bounds afresh. */
+const SPREAD_AT = 0.96;
 const MAX_SIGN_STEPS = 20_000;
 
 const WHERE = 'Density';
 
-interface Part extends Piece {
+interface Part {
+  readonly piece: Piece;
   readonly defined: Defined;
+  /** A step that turns inside, see Enclosure. */
   readonly turn: number;
   /** Why the density is undefined here. */
   readonly reason: string;
@@ -80,7 +85,9 @@ class Prover {
     private readonly to: number,
   ) {
     this.width = to - from;
-    this.encloser = new Encloser(tape, findExponent(tape, from, to));
+    const plain = new Encloser(tape);
+    const exponent = findExponent(plain, from, to);
+    this.encloser = exponent === 0 ? plain : new Encloser(tape, exponent);
     this.atLeft = this.encloser.pointValues();
     this.atMiddle = this.encloser.pointValues();
     this.atRight = this.encloser.pointValues();
@@ -89,7 +96,8 @@ class Prover {
   prove(): Envelope {
     this.refine();
     const parts = this.kept();
-    const areas = totalAreas(parts);
+    const pieces = parts.map((part) => part.piece);
+    const areas = totalAreas(pieces);
     if (areas.upperArea === 0) throw this.zeroEverywhere();
     this.settleSigns(parts);
     const promised = promisedAcceptance(areas);
@@ -101,7 +109,7 @@ class Prover {
     return {
       from: this.from,
       to: this.to,
-      pieces: parts,
+      pieces,
       exponent,
       densityAt: (x, out) => this.encloser.densityAt(x, out),
       heightAt: this.heightAt(),
@@ -114,10 +122,18 @@ class Prover {
     this.encloser.at(this.from, this.atLeft);
     this.encloser.at(this.to, this.atRight);
     this.add(this.examine(this.atLeft, this.atRight));
+    let isSpread = false;
     while (this.parts.size < MAX_PIECES) {
       if (this.urgent.length === 0 && this.isGoodEnough()) return;
+      if (!isSpread && this.urgent.length === 0 && this.lowerArea >= SPREAD_AT * this.upperArea) {
+        isSpread = true;
+        this.sumAfresh();
+        this.spreadGaps();
+        continue;
+      }
       const part = this.urgent.pop() ?? this.byGap.pop();
       if (!part) return;
+      if (!this.parts.has(part)) continue;
       this.remove(part);
       this.split(part);
       if (this.upperArea < this.largestArea / 1000) this.sumAfresh();
@@ -130,9 +146,9 @@ class Prover {
   private sumAfresh(): void {
     this.upperArea = this.lowerArea = 0;
     for (const part of this.parts) {
-      if (part.upperArea === Infinity) continue;
-      this.upperArea += part.upperArea;
-      this.lowerArea += part.lowerArea;
+      if (part.piece.upperArea === Infinity) continue;
+      this.upperArea += part.piece.upperArea;
+      this.lowerArea += part.piece.lowerArea;
     }
     this.largestArea = this.upperArea;
   }
@@ -146,45 +162,45 @@ class Prover {
 
   private remove(part: Part): void {
     this.parts.delete(part);
-    if (part.upperArea === Infinity) return;
-    this.upperArea -= part.upperArea;
-    this.lowerArea -= part.lowerArea;
+    if (part.piece.upperArea === Infinity) return;
+    this.upperArea -= part.piece.upperArea;
+    this.lowerArea -= part.piece.lowerArea;
   }
 
   private add(part: Part): void {
     this.parts.add(part);
-    if (part.upperArea < Infinity) {
-      this.upperArea += part.upperArea;
-      this.lowerArea += part.lowerArea;
+    if (part.piece.upperArea < Infinity) {
+      this.upperArea += part.piece.upperArea;
+      this.lowerArea += part.piece.lowerArea;
       this.largestArea = Math.max(this.largestArea, this.upperArea);
     }
-    const width = part.to - part.from;
-    const isIndivisible = middle(part.from, part.to) === part.from;
-    if (part.defined !== Defined.Everywhere || part.upperArea === Infinity) {
+    const width = part.piece.to - part.piece.from;
+    const isIndivisible = middle(part.piece.from, part.piece.to) === part.piece.from;
+    if (part.defined !== Defined.Everywhere || part.piece.upperArea === Infinity) {
       // A narrow part that still has no bound is refused; one that is defined in part loses only its last bits.
       if (width >= NARROW * this.width && !isIndivisible) this.urgent.push(part, -width);
-      else if (part.upperArea === Infinity) this.refuseUrgent(part);
-    } else if (part.upperArea > part.lowerArea && !isIndivisible) {
-      this.byGap.push(part, part.lowerArea - part.upperArea);
+      else if (part.piece.upperArea === Infinity) this.refuseUrgent(part);
+    } else if (part.piece.upperArea > part.piece.lowerArea && !isIndivisible) {
+      this.byGap.push(part, part.piece.lowerArea - part.piece.upperArea);
     }
   }
 
   private refuseUrgent(part: Part): never {
     if (part.defined === Defined.Nowhere) throw this.undefinedOn(part);
-    const near = shortNumber(Math.abs(part.from) < Math.abs(part.to) ? part.from : part.to);
+    const near = shortNumber(Math.abs(part.piece.from) < Math.abs(part.piece.to) ? part.piece.from : part.piece.to);
     throw new InputError(WHERE, `it cannot be bounded near x = ${near}`, 'keep the limits away from there, or write the formula so that it stays finite');
   }
 
   private undefinedOn(part: Part): InputError {
     return new InputError(
       WHERE,
-      `it is undefined from x = ${shortNumber(part.from)} to x = ${shortNumber(part.to)}, where ${part.reason}`,
+      `it is undefined from x = ${shortNumber(part.piece.from)} to x = ${shortNumber(part.piece.to)}, where ${part.reason}`,
       'keep the limits where it is defined, or give it a height there with IF',
     );
   }
 
   private split(part: Part): void {
-    const { from, to } = part;
+    const { from, to } = part.piece;
     if (part.turn >= 0) {
       const crossing = findCrossing(this.encloser, part.turn, from, to, this.atMiddle);
       if (crossing && (crossing.lo > from || crossing.hi < to)) {
@@ -193,6 +209,41 @@ class Prover {
       }
     }
     this.cut([from, middle(from, to), to]);
+  }
+
+  /**
+   * Places the bounds afresh so that all parts have about the same gap, which is how
+   * the fewest parts reach a total: a part's gap falls with the cube of its width, so
+   * a total of G wants gaps of (G / Σ ∛gap)^(3/2) each. Halving alone is a factor of
+   * two too coarse here and too fine there.
+   */
+  private spreadGaps(): void {
+    const parts = [...this.parts].sort((p, q) => p.piece.from - q.piece.from);
+    const roots = parts.map((part) => elementary.pow(part.piece.upperArea - part.piece.lowerArea, 1 / 3));
+    const total = roots.reduce((sum, root) => sum + root, 0);
+    const share = Math.sqrt(((1 - WANTED_ACCEPTANCE) * this.upperArea) / total);
+    for (let i = 0; i < parts.length; i++) {
+      const first = i;
+      let run = 0;
+      for (; i < parts.length && canMove(parts[i]!); i++) run += roots[i]!;
+      if (i - first > 1) this.cutEvenly(parts.slice(first, i), roots.slice(first, i), run, Math.max(1, Math.round(run / share)));
+    }
+  }
+
+  /** Replaces neighbouring parts by n parts, each with the same share of their roots' sum. */
+  private cutEvenly(parts: readonly Part[], roots: readonly number[], sum: number, n: number): void {
+    const bounds = [parts[0]!.piece.from];
+    let before = 0;
+    parts.forEach((part, i) => {
+      this.remove(part);
+      const after = before + roots[i]!;
+      for (let k = bounds.length; k < n && (sum * k) / n <= after; k++) {
+        bounds.push(part.piece.from + (part.piece.to - part.piece.from) * (((sum * k) / n - before) / roots[i]!));
+      }
+      before = after;
+    });
+    bounds.push(parts.at(-1)!.piece.to);
+    this.cut(bounds);
   }
 
   /** Replaces a part by the parts between these bounds; empty ones are left out. */
@@ -208,29 +259,31 @@ class Prover {
   }
 
   private examine(left: PointValues, right: PointValues): Part {
-    for (const { density, x, defined } of [left, right]) {
-      if (defined[this.tape.root] !== Defined.Everywhere) continue;
-      if (density.hi < 0) throw this.negativeAt(x, density);
-      if (density.lo > this.peak) this.peak = density.lo;
-    }
+    this.seePoint(left);
+    this.seePoint(right);
     const enclosure = this.encloser.over(left.x, right.x, left, right);
     const { defined, density, turn } = enclosure;
     if (defined === Defined.Everywhere && density.v.hi < 0) throw this.negativeAt(left.x, density.v);
     const isBeyondRounding = right.x - left.x > NEGLIGIBLE * this.width;
     const reason = defined === Defined.Everywhere ? '' : this.encloser.undefinedReason();
     if (defined === Defined.Nowhere) {
-      const part = { ...nothing(left.x, right.x), defined, turn, reason };
+      const part = { piece: nothing(left.x, right.x), defined, turn, reason };
       if (isBeyondRounding) throw this.undefinedOn(part);
       this.notes.push(`the density is undefined on a stretch of ${shortNumber(right.x - left.x)} at x = ${shortNumber(left.x)}, where ${reason}; nothing is drawn there`);
       return { ...part, defined: Defined.Everywhere };
     }
     this.useMonotone(enclosure, left, right);
-    const part = { defined, turn, reason };
     // Asking for the middle ends the life of the enclosure, so its bounds are kept first.
     J.copyJet(this.bounds, density);
     this.encloser.densityAt(middle(left.x, right.x), this.atCentre);
     const ends = { atFrom: left.density, atTo: right.density, atMiddle: this.atCentre };
-    return { ...provePiece(left.x, right.x, this.bounds, ends), ...part };
+    return { piece: provePiece(left.x, right.x, this.bounds, ends), defined, turn, reason };
+  }
+
+  private seePoint({ density, x, defined }: PointValues): void {
+    if (defined[this.tape.root] !== Defined.Everywhere) return;
+    if (density.hi < 0) throw this.negativeAt(x, density);
+    if (density.lo > this.peak) this.peak = density.lo;
   }
 
   /** A scaled density is tightened here; an unscaled one already was, as a step of the tape. */
@@ -243,13 +296,13 @@ class Prover {
 
   /** The parts in order, without slivers around jumps that carry less than rounding does. */
   private kept(): Part[] {
-    const sorted = [...this.parts].sort((p, q) => p.from - q.from);
+    const sorted = [...this.parts].sort((p, q) => p.piece.from - q.piece.from);
     const limit = NEGLIGIBLE * this.lowerArea;
     let dropped = 0;
     return sorted.filter((part) => {
-      const isSliver = part.to - part.from < NEGLIGIBLE * this.width;
-      if (!isSliver || dropped + part.upperArea > limit) return true;
-      dropped += part.upperArea;
+      const isSliver = part.piece.to - part.piece.from < NEGLIGIBLE * this.width;
+      if (!isSliver || dropped + part.piece.upperArea > limit) return true;
+      dropped += part.piece.upperArea;
       return false;
     });
   }
@@ -257,15 +310,15 @@ class Prover {
   /** Proves f ≥ −10^-12 of the peak wherever a piece's own bound does not. */
   private settleSigns(parts: readonly Part[]): void {
     const tolerance = -SIGN_TOLERANCE * this.peak;
-    const open = parts.filter((part) => part.least < tolerance).map(({ from, to }) => ({ from, to }));
-    let isRounded = parts.find((part) => part.least < 0 && part.least >= tolerance);
+    const open = parts.filter((part) => part.piece.least < tolerance).map(({ piece: { from, to } }) => ({ from, to }));
+    let isRounded = parts.find((part) => part.piece.least < 0 && part.piece.least >= tolerance);
     for (let steps = 0; open.length > 0; steps++) {
       const { from, to } = open.pop()!;
       this.encloser.at(from, this.atLeft);
       this.encloser.at(to, this.atRight);
       const part = this.examine(this.atLeft, this.atRight);
-      if (part.least >= tolerance) {
-        if (part.least < 0) isRounded ??= part;
+      if (part.piece.least >= tolerance) {
+        if (part.piece.least < 0) isRounded ??= part;
         continue;
       }
       const m = middle(from, to);
@@ -274,7 +327,7 @@ class Prover {
     }
     if (isRounded) {
       this.notes.push(
-        `the sign of the density cannot be settled to the last digit near x = ${shortNumber(isRounded.from)}; MAX(0, density) is drawn, which differs by less than 10^-12 of its peak`,
+        `the sign of the density cannot be settled to the last digit near x = ${shortNumber(isRounded.piece.from)}; MAX(0, density) is drawn, which differs by less than 10^-12 of its peak`,
       );
     }
   }
@@ -287,7 +340,7 @@ class Prover {
   private unsettledSign(part: Part): InputError {
     return new InputError(
       WHERE,
-      `whether it is negative near x = ${shortNumber(part.from)} cannot be settled`,
+      `whether it is negative near x = ${shortNumber(part.piece.from)} cannot be settled`,
       'write it so that it cannot be negative, for example as a square instead of its expanded powers, or with MAX(0, …)',
     );
   }
@@ -301,10 +354,10 @@ class Prover {
   }
 
   private acceptedTooRarely(promised: number, parts: readonly Part[]): InputError {
-    const worst = parts.reduce((p, q) => (q.upperArea - q.lowerArea > p.upperArea - p.lowerArea ? q : p));
+    const worst = parts.reduce((p, q) => (q.piece.upperArea - q.piece.lowerArea > p.piece.upperArea - p.piece.lowerArea ? q : p));
     return new InputError(
       WHERE,
-      `only ${shortNumber(promised)} of proposals are sure to be accepted after ${MAX_PIECES} pieces (worst near x = ${shortNumber(worst.from)})`,
+      `only ${shortNumber(promised)} of proposals are sure to be accepted after ${MAX_PIECES} pieces (worst near x = ${shortNumber(worst.piece.from)})`,
       'narrow the limits to where the density matters, or simplify the formula there',
     );
   }
@@ -317,6 +370,11 @@ class Prover {
       return out.lo / 2 + out.hi / 2;
     };
   }
+}
+
+/** True for a part whose ends may move: nothing turns inside and its gap is not nil. */
+function canMove(part: Part): boolean {
+  return part.turn < 0 && part.defined === Defined.Everywhere && part.piece.upperArea > part.piece.lowerArea && part.piece.upperArea < Infinity;
 }
 
 /** A part with no height. */

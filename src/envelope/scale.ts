@@ -4,8 +4,7 @@
  * A height that a few sampled points suggest would miss a lone spike.
  */
 import FlatQueue from 'flatqueue';
-import { Encloser } from '../formula/enclose';
-import type { Tape } from '../formula/tape';
+import type { Encloser } from '../formula/enclose';
 import * as elementary from '../numeric/elementary';
 import { middle } from '../numeric/float';
 
@@ -21,9 +20,9 @@ interface Stretch {
   readonly b: number;
 }
 
-/** The exponent e by which the density of `tape` on [from, to] is scaled (× 2^-e); 0 in the usual case. */
-export function findExponent(tape: Tape, from: number, to: number): number {
-  const peak = enclosePeak(new Encloser(tape), from, to);
+/** The exponent e by which an unscaled density on [from, to] is to be scaled (× 2^-e); 0 in the usual case. */
+export function findExponent(encloser: Encloser, from: number, to: number): number {
+  const peak = enclosePeak(encloser, from, to);
   const widest = Math.max(0, elementary.ln(to / 2 - from / 2) + LN_2);
   if (peak === null || (peak - NEAR >= -PLAIN && peak + widest <= PLAIN)) return 0;
   return Math.round(peak / LN_2);

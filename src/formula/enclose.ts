@@ -17,7 +17,7 @@ import type { Step, Tape } from './tape';
 import { CHOOSE_BY, EXP } from './vocabulary';
 
 /** ln 2, enclosed. */
-const LN_2: Interval = { lo: 0.6931471805599453, hi: 0.6931471805599454 };
+const LN_2 = I.interval(0.6931471805599453, 0.6931471805599454);
 /** Beyond this exponent 2^-exponent is no double, and ln f alone gives the scaled density. */
 const MAX_DIRECT_EXPONENT = 1000;
 
@@ -65,11 +65,11 @@ function meetExponential(out: Jet, log: Jet): void {
   I.meet(out.v, scratch);
   // Where the density touches 0 its logarithm has no slope, and 0 · ∞ says nothing.
   if (!(log.d.lo > -Infinity && log.d.hi < Infinity)) return;
-  I.multiply(scratch, out.v, log.d);
+  I.multiplyLoosely(scratch, out.v, log.d);
   I.meet(out.d, scratch);
-  I.square(scratch, log.d);
-  I.add(scratch, scratch, log.h);
-  I.multiply(scratch, out.v, scratch);
+  I.squareLoosely(scratch, log.d);
+  I.addLoosely(scratch, scratch, log.h);
+  I.multiplyLoosely(scratch, out.v, scratch);
   I.meet(out.h, scratch);
 }
 
@@ -116,7 +116,7 @@ export class Encloser {
   pointValues(): PointValues {
     return {
       x: NaN,
-      values: this.tape.steps.map((step) => (step.enclosure ? { ...step.enclosure } : I.interval())),
+      values: this.tape.steps.map(({ enclosure }) => (enclosure ? I.interval(enclosure.lo, enclosure.hi) : I.interval())),
       defined: new Uint8Array(this.tape.steps.length),
       density: I.interval(),
     };

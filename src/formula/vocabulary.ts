@@ -102,8 +102,8 @@ const ADD: Operation = {
   point: (a, b) => a + b,
   enclose: I.add,
   slopes(out, a, b) {
-    I.add(out.d, a.d, b.d);
-    I.add(out.h, a.h, b.h);
+    I.addLoosely(out.d, a.d, b.d);
+    I.addLoosely(out.h, a.h, b.h);
   },
   logarithm(out, [a, b], [u, v]) {
     if (u.v.lo >= 0 && v.v.lo >= 0) logOfSum(out, a, b);
@@ -116,8 +116,8 @@ const SUBTRACT: Operation = {
   point: (a, b) => a - b,
   enclose: I.subtract,
   slopes(out, a, b) {
-    I.subtract(out.d, a.d, b.d);
-    I.subtract(out.h, a.h, b.h);
+    I.subtractLoosely(out.d, a.d, b.d);
+    I.subtractLoosely(out.h, a.h, b.h);
   },
 };
 

@@ -94,6 +94,30 @@ function isInfinite(x: number): boolean {
   return x === Infinity || x === -Infinity;
 }
 
+/** An upper bound of a + b, cheaper than addUp: only 0 is kept exact. */
+export function looseSumUp(a: number, b: number): number {
+  const s = a + b;
+  if (s === 0) return 0;
+  return s > -Infinity ? s + (Math.abs(s) * HALF_ULP + SMALLEST) : s === s ? -Number.MAX_VALUE : Infinity;
+}
+
+/** A lower bound of a + b, cheaper than addDown: only 0 is kept exact. */
+export function looseSumDown(a: number, b: number): number {
+  return -looseSumUp(-a, -b);
+}
+
+/** An upper bound of a · b, cheaper than mulUp: only 0 is kept exact. */
+export function looseProductUp(a: number, b: number): number {
+  if (a === 0 || b === 0) return 0;
+  const p = a * b;
+  return p > -Infinity ? p + (Math.abs(p) * HALF_ULP + SMALLEST) : -Number.MAX_VALUE;
+}
+
+/** A lower bound of a · b, cheaper than mulDown: only 0 is kept exact. */
+export function looseProductDown(a: number, b: number): number {
+  return -looseProductUp(-a, b);
+}
+
 /** a / b rounded upward; b ≠ 0. 0 / b is 0 and a / ∞ reaches 0. */
 export function divUp(a: number, b: number): number {
   if (a === 0) return 0;

@@ -64,31 +64,32 @@ export function negateJet(out: Jet, a: Jet): void {
 
 export function addJet(out: Jet, a: Jet, b: Jet): void {
   I.add(out.v, a.v, b.v);
-  I.add(out.d, a.d, b.d);
-  I.add(out.h, a.h, b.h);
+  I.addLoosely(out.d, a.d, b.d);
+  I.addLoosely(out.h, a.h, b.h);
 }
 
 export function subtractJet(out: Jet, a: Jet, b: Jet): void {
   I.subtract(out.v, a.v, b.v);
-  I.subtract(out.d, a.d, b.d);
-  I.subtract(out.h, a.h, b.h);
+  I.subtractLoosely(out.d, a.d, b.d);
+  I.subtractLoosely(out.h, a.h, b.h);
 }
 
+/** Scratch for one rule at a time; it holds nothing between calls. */
 const s = I.interval();
 const t = I.interval();
 
 /** (uv)′ = u′v + uv′ and (uv)″ = u″v + 2u′v′ + uv″. `out` is none of the operands. */
 export function multiplyJet(out: Jet, a: Jet, b: Jet): void {
   I.multiply(out.v, a.v, b.v);
-  I.multiply(s, a.d, b.v);
-  I.multiply(t, a.v, b.d);
-  I.add(out.d, s, t);
-  I.multiply(s, a.h, b.v);
-  I.multiply(t, a.v, b.h);
-  I.add(s, s, t);
-  I.multiply(t, a.d, b.d);
+  I.multiplyLoosely(s, a.d, b.v);
+  I.multiplyLoosely(t, a.v, b.d);
+  I.addLoosely(out.d, s, t);
+  I.multiplyLoosely(s, a.h, b.v);
+  I.multiplyLoosely(t, a.v, b.h);
+  I.addLoosely(s, s, t);
+  I.multiplyLoosely(t, a.d, b.d);
   I.scale(t, t, 2);
-  I.add(out.h, s, t);
+  I.addLoosely(out.h, s, t);
 }
 
 /** (u/v)′ = (u′ − qv′)/v and (u/v)″ = (u″ − 2q′v′ − qv″)/v with q = u/v. `out` is none of the operands. */
@@ -98,22 +99,22 @@ export function divideJet(out: Jet, a: Jet, b: Jet): void {
     setJump(out);
     return;
   }
-  I.multiply(s, out.v, b.d);
-  I.subtract(s, a.d, s);
+  I.multiplyLoosely(s, out.v, b.d);
+  I.subtractLoosely(s, a.d, s);
   I.divide(out.d, s, b.v);
-  I.multiply(s, out.d, b.d);
+  I.multiplyLoosely(s, out.d, b.d);
   I.scale(s, s, 2);
-  I.multiply(t, out.v, b.h);
-  I.add(s, s, t);
-  I.subtract(s, a.h, s);
+  I.multiplyLoosely(t, out.v, b.h);
+  I.addLoosely(s, s, t);
+  I.subtractLoosely(s, a.h, s);
   I.divide(out.h, s, b.v);
 }
 
 /** Multiplication by an enclosed constant. */
 export function scaleJet(out: Jet, a: Jet, k: Interval): void {
   I.multiply(out.v, a.v, k);
-  I.multiply(out.d, a.d, k);
-  I.multiply(out.h, a.h, k);
+  I.multiplyLoosely(out.d, a.d, k);
+  I.multiplyLoosely(out.h, a.h, k);
 }
 
 /**
@@ -121,9 +122,9 @@ export function scaleJet(out: Jet, a: Jet, k: Interval): void {
  * `slope` and `curvature` enclose g′ and g″ over u.v and may be overwritten.
  */
 export function chain(out: Jet, u: Jet, slope: Interval, curvature: Interval): void {
-  I.square(s, u.d);
-  I.multiply(s, curvature, s);
-  I.multiply(t, slope, u.h);
-  I.multiply(out.d, slope, u.d);
-  I.add(out.h, s, t);
+  I.squareLoosely(s, u.d);
+  I.multiplyLoosely(s, curvature, s);
+  I.multiplyLoosely(t, slope, u.h);
+  I.multiplyLoosely(out.d, slope, u.d);
+  I.addLoosely(out.h, s, t);
 }
