@@ -1,6 +1,6 @@
 /**
  * One piece of an envelope: an upper and a lower straight line over [from, to],
- * both proved by the bounds on f″ (src/envelope/METHOD.md, "A piece").
+ * both proved by the bounds on f″ (src/METHOD.md, "A piece").
  */
 import { addDown, addUp, down, mulDown, mulUp, ulp, up } from '../numeric/float';
 import type { Interval } from '../numeric/interval';

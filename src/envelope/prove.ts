@@ -6,7 +6,7 @@
  * the upper ones. A step of the formula that changes sign inside a piece (a kink, a
  * jump) is cut out between neighbouring doubles. The refinement depends on the
  * shape alone, never on the number of rows or a clock.
- * Source: src/envelope/METHOD.md. Not handled: unbounded limits, integrable poles.
+ * Source: src/METHOD.md. Not handled: unbounded limits, integrable poles.
  */
 import FlatQueue from 'flatqueue';
 import { InputError } from '../errors';

@@ -2,7 +2,7 @@
  * A tape over an interval of its one variable: enclosures of f, f′ and f″, and of
  * ln|f| with its derivatives where the formula's structure gives them.
  *
- * Source: the rules of src/envelope/METHOD.md, "A piece". ln f is built structurally
+ * Source: the rules of src/METHOD.md, "A piece". ln f is built structurally
  * (product → sum, EXP(u) → u) and meets the direct enclosure, which keeps products
  * of EXPs tight and lets a density that overflows doubles be scaled by 2^-exponent.
  * Not handled: unbounded intervals, several variables.

@@ -1,0 +1,100 @@
+/**
+ * From an envelope to a table that turns one uniform number into a proposal.
+ *
+ * Segments stand in the order lower₁, gap₁, lower₂, gap₂ …: the trapezoid under a
+ * piece's lower line and the one between its two lines. A number u in [0, 1) falls
+ * into the segment whose share of the whole area it meets; what is left of u places
+ * x in that trapezoid by inversion, which needs a root and nothing else.
+ * Source: guide tables, Chen and Asau (1974); trapezoid inversion is elementary.
+ *
+ *     upper ──────╮          u in lower: x is a draw at once
+ *       gap       │          u in gap:   x is a draw if the height drawn there
+ *     lower ──────╯                      lies under the density
+ */
+import type { Envelope } from '../envelope/envelope';
+
+/** Numbers of one segment in `Guide.segments`, in this order. */
+export const STRIDE = 6;
+export const START = 0;
+export const INVERSE_SHARE = 1;
+export const LEFT = 2;
+export const WIDTH = 3;
+/** Left height over mean height, p in [0, 2], and its square. */
+export const SLANT = 4;
+export const SLANT_SQUARED = 5;
+
+export interface Guide {
+  /** STRIDE numbers a segment, then one closing START of 1. */
+  readonly segments: Float64Array;
+  /** For each segment the piece whose gap it is, −1 for the area under a lower line. */
+  readonly gapOf: Int32Array;
+  /** Cell ⌊u · cells⌋ names the segment to begin the search at. */
+  readonly cells: Int32Array;
+  /** The pieces' lines at STRIDE_LINES numbers each: from, 1/width, lower left, lower rise, gap left, gap rise. */
+  readonly lines: Float64Array;
+}
+
+export const LINES_STRIDE = 6;
+
+interface Trapezoid {
+  readonly piece: number;
+  readonly isGap: boolean;
+  readonly left: number;
+  readonly right: number;
+}
+
+/** The guide table of an envelope. */
+export function guideOf(envelope: Envelope): Guide {
+  const { pieces } = envelope;
+  const trapezoids: Trapezoid[] = [];
+  let tallest = 0;
+  pieces.forEach((p, piece) => {
+    tallest = Math.max(tallest, p.upperLeft, p.upperRight);
+    trapezoids.push({ piece, isGap: false, left: p.lowerLeft, right: p.lowerRight });
+    if (envelope.densityAt === null) return;
+    trapezoids.push({
+      piece,
+      isGap: true,
+      left: Math.max(0, p.upperLeft - p.lowerLeft),
+      right: Math.max(0, p.upperRight - p.lowerRight),
+    });
+  });
+  // Areas relative to the whole box neither overflow nor underflow.
+  const box = envelope.to - envelope.from;
+  const areaOf = ({ piece, left, right }: Trapezoid): number =>
+    ((pieces[piece]!.to - pieces[piece]!.from) / box) * (left / tallest / 2 + right / tallest / 2);
+  const used = trapezoids.filter((t) => areaOf(t) > 0);
+  const total = used.reduce((sum, t) => sum + areaOf(t), 0);
+  const segments = new Float64Array(used.length * STRIDE + 1);
+  let start = 0;
+  used.forEach((t, i) => {
+    const { from, to } = pieces[t.piece]!;
+    const share = areaOf(t) / total;
+    const slant = (2 * (t.left / tallest)) / (t.left / tallest + t.right / tallest);
+    segments.set([start, 1 / share, from, to - from, slant, slant * slant], i * STRIDE);
+    start += share;
+  });
+  segments[used.length * STRIDE] = 1;
+  return { segments, gapOf: Int32Array.from(used, (t) => (t.isGap ? t.piece : -1)), cells: cellsOf(segments, used.length), lines: linesOf(envelope) };
+}
+
+function cellsOf(segments: Float64Array, n: number): Int32Array {
+  let size = 4;
+  while (size < 2 * n) size *= 2;
+  const cells = new Int32Array(size);
+  for (let cell = 0, i = 0; cell < size; cell++) {
+    while (i + 1 < n && segments[(i + 1) * STRIDE + START]! <= cell / size) i++;
+    cells[cell] = i;
+  }
+  return cells;
+}
+
+function linesOf({ pieces }: Envelope): Float64Array {
+  const lines = new Float64Array(pieces.length * LINES_STRIDE);
+  pieces.forEach((p, i) => {
+    const gapLeft = p.upperLeft - p.lowerLeft;
+    const gapRight = p.upperRight - p.lowerRight;
+    lines.set([p.from, 1 / (p.to - p.from), p.lowerLeft, p.lowerRight - p.lowerLeft, gapLeft, gapRight - gapLeft], i * LINES_STRIDE);
+  });
+  return lines;
+}
