@@ -150,3 +150,22 @@ function bestLower(...lines: readonly (readonly [number, number])[]): readonly [
   const room = (height: number): number => Math.max(0, down(height * (1 - LINE_ROOM)));
   return [room(best[0]), room(best[1])];
 }
+
+/** A piece whose density is the straight line itself. */
+export function trapezoid(from: number, to: number, left: number, right: number): Piece {
+  const width = to - from;
+  const [areaLo, areaHi] = [areaDown(left, right, down(width)), areaUp(left, right, up(width))];
+  return {
+    from,
+    to,
+    upperLeft: left,
+    upperRight: right,
+    lowerLeft: left,
+    lowerRight: right,
+    upperArea: areaHi,
+    lowerArea: areaLo,
+    areaLo,
+    areaHi,
+    least: Math.min(left, right),
+  };
+}

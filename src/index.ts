@@ -1,0 +1,7 @@
+/** The engine's worksheet functions: cells in, cells out, for every face. */
+export type { Cell, ErrorCell, Range } from './density/cells';
+export { CellErrorPassed, InputError } from './errors';
+export { acceptance } from './worksheet/acceptance';
+export { draw } from './worksheet/draw';
+export { envelope } from './worksheet/envelope';
+export { profile } from './worksheet/profile';

@@ -1,0 +1,113 @@
+/** ACCEPTANCE: how exactly the draws of DRAW with the same arguments came about. */
+import type { Cell, Range } from '../density/cells';
+import { CURRENT_METHOD } from '../density/givens';
+import type { Shape } from '../density/shape';
+import type { Column } from '../draw/column';
+import { promisedAcceptance } from '../envelope/envelope';
+import { waitingPValue, wilson } from '../evidence/proportion';
+import type { Proved } from './proved';
+import { drawColumn, prove } from './proved';
+import type { ColumnRequest, DrawRequest } from './request';
+import { readDrawRequest } from './request';
+
+const CONFIDENCE = 0.95;
+const CAUTION =
+  'the draws follow the stated shape; they do not make the shape right, and they do not replace licensed or professional judgement';
+
+type Line = readonly [item: string, value: Cell];
+
+/**
+ * The diagnostics of a draw, its inputs as read first.
+ * Shapes: lines of item | value, with one column of values per label.
+ * Units: areas and heights × 2^-exponent, the line `scale exponent`; acceptances and shares as fractions of 1.
+ * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
+ */
+export function acceptance(
+  density: Range | null,
+  limits: Range | null,
+  rows: Range | null,
+  seed: Range | null,
+  label: Range | null,
+  givens: readonly Range[],
+): Range {
+  const request = readDrawRequest(density, limits, rows, seed, label, givens);
+  const tables = request.columns.map((column) => diagnose(column, request));
+  return tables[0]!.map(([item], i) => [item, ...tables.map((lines) => lines[i]![1])]);
+}
+
+function diagnose(request: ColumnRequest, { seed, firstRow, nRows, notes }: DrawRequest): readonly Line[] {
+  const proved = prove(request.shape);
+  const column = drawColumn(proved, request.key, firstRow, nRows);
+  const allNotes = [...notes, ...proved.envelope.notes];
+  return [
+    ...asRead(request.shape),
+    ['seed', seed],
+    ['label', request.label],
+    ['first row', firstRow],
+    ['rows', nRows],
+    ...proofLines(proved),
+    ...drawLines(proved, column, nRows),
+    ['method', CURRENT_METHOD],
+    ['notes', allNotes.length === 0 ? 'none' : allNotes.join('; ')],
+    ['caution', CAUTION],
+  ];
+}
+
+/** The inputs as they were understood. */
+function asRead(shape: Shape): readonly Line[] {
+  const { from, to } = shape.limits;
+  const ends = (variable: string): readonly Line[] => [
+    [`${variable} from`, from],
+    [`${variable} to`, to],
+  ];
+  if (shape.kind === 'table') {
+    const name = shape.heading === '' ? '' : ` "${shape.heading}"`;
+    return [['density', `table of points${name}, ${shape.polyline.x.length} ends of straight lines`], ...ends('x')];
+  }
+  const { sources, variable, constants } = shape;
+  const lines = sources.map(({ text }, i): Line => [i === 0 ? 'density' : `density, times`, withoutSign(text)]);
+  const named = [...constants].map(([name, value]): Line => [`given ${name}`, value]);
+  return [...lines, ...ends(variable), ...named];
+}
+
+/** A text that begins with = would be taken for a formula of the sheet. */
+function withoutSign(text: string): string {
+  return text.trim().replace(/^=\s*/, '');
+}
+
+function proofLines({ envelope }: Proved): readonly Line[] {
+  const isTable = envelope.densityAt === null;
+  return [
+    [
+      'proof',
+      isTable
+        ? 'nothing to prove: the envelope is the table itself'
+        : 'proved: the density lies between the lower and the upper line everywhere within the limits',
+    ],
+    ['pieces', envelope.pieces.length],
+    ['area at least', envelope.areaLo],
+    ['area at most', envelope.areaHi],
+    ['scale exponent', envelope.exponent],
+  ];
+}
+
+function drawLines({ envelope, area }: Proved, column: Column, nRows: number): readonly Line[] {
+  const { proposals, settledAtOnce, longestWait, nearTies } = column;
+  const isTable = envelope.densityAt === null;
+  const expected = isTable ? 1 : Math.min(1, area / envelope.upperArea);
+  const { lo, hi } = wilson(nRows, proposals, CONFIDENCE);
+  return [
+    ['proposals', proposals],
+    ['acceptance', nRows / proposals],
+    ['acceptance, 95 % interval from', lo],
+    ['acceptance, 95 % interval to', hi],
+    ['acceptance promised by the proof', isTable ? 1 : promisedAcceptance(envelope)],
+    ['acceptance expected from the areas', expected],
+    ['p-value of observed against expected', waitingPValue(nRows, proposals, expected)],
+    ['share of rows settled by the lower bound', settledAtOnce / nRows],
+    ['longest wait, in proposals', longestWait],
+    ['near-ties', nearTies],
+    // A breach throws while drawing, so a column that is shown has none.
+    ['breaches', 0],
+  ];
+}

@@ -1,0 +1,76 @@
+/**
+ * Proofs and columns, kept so that DRAW, ACCEPTANCE, ENVELOPE and PROFILE of one
+ * shape prove and draw once. Keyed by the canonical arguments; least recently used
+ * results go first; at most 64 MB. It is the only state that outlives a call, and
+ * results do not depend on it.
+ */
+import { LRUCache } from 'lru-cache';
+import type { Shape } from '../density/shape';
+import type { Column } from '../draw/column';
+import { Drawer } from '../draw/column';
+import type { Envelope } from '../envelope/envelope';
+import { polylineEnvelope } from '../envelope/polyline';
+import { proveEnvelope } from '../envelope/prove';
+import { areaOf } from '../exact/area';
+import { compile } from '../formula/compile';
+import type { Key } from '../random/key';
+
+const MAX_BYTES = 64 * 1024 * 1024;
+/** What a piece takes in its envelope and guide table, generously. */
+const BYTES_PER_PIECE = 600;
+const BYTES_PER_STEP = 1500;
+
+/** A shape with its proof and what is drawn and told from it. */
+export interface Proved {
+  readonly key: string;
+  readonly envelope: Envelope;
+  readonly drawer: Drawer;
+  /** The area under the scaled density, within its proved bounds. */
+  readonly area: number;
+}
+
+interface Entry {
+  readonly value: Proved | Column;
+  readonly bytes: number;
+}
+
+const cache = new LRUCache<string, Entry>({ maxSize: MAX_BYTES, sizeCalculation: ({ bytes }) => bytes });
+
+function remember<T extends Proved | Column>(key: string, make: () => { value: T; bytes: number }): T {
+  const known = cache.get(key);
+  if (known) return known.value as T;
+  const made = make();
+  cache.set(key, { value: made.value, bytes: Math.max(1, Math.ceil(made.bytes + 2 * key.length)) });
+  return made.value;
+}
+
+/** The proof of a shape. @throws {InputError} when it cannot be proved. */
+export function prove(shape: Shape): Proved {
+  const key = canonical(shape);
+  return remember(key, () => {
+    const { envelope, nSteps } = envelopeOf(shape);
+    const value = { key, envelope, drawer: new Drawer(envelope), area: areaOf(envelope) };
+    return { value, bytes: envelope.pieces.length * BYTES_PER_PIECE + nSteps * BYTES_PER_STEP };
+  });
+}
+
+/** The column of a proved shape under a key. */
+export function drawColumn({ key, drawer }: Proved, randomKey: Key, first: number, n: number): Column {
+  return remember(`${randomKey.join()} ${first} ${n} ${key}`, () => {
+    const value = drawer.column(randomKey, first, n);
+    return { value, bytes: value.values.byteLength };
+  });
+}
+
+function envelopeOf(shape: Shape): { envelope: Envelope; nSteps: number } {
+  if (shape.kind === 'table') return { envelope: polylineEnvelope(shape.polyline), nSteps: 0 };
+  const tape = compile(shape.sources, [shape.variable], shape.constants);
+  const { from, to } = shape.limits;
+  return { envelope: proveEnvelope(tape, from, to), nSteps: tape.steps.length };
+}
+
+function canonical(shape: Shape): string {
+  if (shape.kind === 'table') return JSON.stringify([shape.polyline.x, shape.polyline.heights]);
+  const { sources, variable, limits, constants } = shape;
+  return JSON.stringify([sources.map(({ text, where }) => [text, where]), variable, limits.from, limits.to, [...constants]]);
+}
