@@ -5,6 +5,8 @@ if (browser) process.env.UNDERCURVE_CHROMIUM = browser;
 
 export default {
   testEnvironment: 'node',
+  // In jest's sandbox every mention of Math is looked up in the host otherwise, 20 times slower.
+  sandboxInjectedGlobals: ['Math'],
   testMatch: ['<rootDir>/test/**/*.test.ts'],
   testPathIgnorePatterns: [
     '/node_modules/',
