@@ -10,10 +10,10 @@ import { answer } from './host';
  * Draws random values that follow the density exactly: one column for each label, the same values until an input changes. In the unit of x.
  * @customfunction DRAW
  * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), a table of points (x and height, straight lines between), or a block of two columns that names density, from, to, rows, seed, label and constants. Heights need no particular unit.
- * @param limits Two cells, from and to, in the unit of x. A table needs none.
- * @param rows How many values, 1 to 1048575, or two cells: first row and last row.
- * @param seed Any text or number except blank and 0. The same seed gives the same values.
- * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
+ * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
+ * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
  * @param givens Values for the names in the formula: two columns, name and value.
  */
 export function draw(
@@ -31,7 +31,7 @@ export function draw(
  * Lists the pieces of the proved envelope: in each piece the density lies on or below the upper line and on or above the lower line. A heading row, then one row a piece: from and to in the unit of x, four heights, share of proposals and acceptance as fractions of 1.
  * @customfunction ENVELOPE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table needs none.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param givens Values for the names in the formula: two columns, name and value.
  */
 export function envelope(density: any[][], limits?: any[][], givens?: any[][][]): any[][] {
@@ -42,7 +42,7 @@ export function envelope(density: any[][], limits?: any[][], givens?: any[][][])
  * Tells how the draws were made and whether that went as proved: inputs as read, proof, proposals, acceptance, test of the count, notes. Two columns: item and value.
  * @customfunction ACCEPTANCE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
- * @param limits Two cells, from and to, in the unit of x. A table needs none.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Give the same as to DRAW.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
@@ -63,8 +63,8 @@ export function acceptance(
  * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it. A heading row, then one row a point: x in its unit, the rest in share per unit of x.
  * @customfunction PROFILE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table needs none.
- * @param count How many points.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param count How many points, 2 to 100000. Left out: 201.
  * @param givens Values for the names in the formula: two columns, name and value.
  */
 export function profile(
