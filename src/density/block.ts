@@ -18,7 +18,11 @@ export interface Block {
 
 /** True for a range of two columns with a cell `density` in the first. */
 export function isBlock(range: Range): boolean {
-  return range[0]!.length === 2 && range.some((row) => word(row[0]!) === 'density') && !isListHeading(range[0]!);
+  return (
+    range[0]!.length === 2 &&
+    range.some((row) => word(row[0]!) === 'density') &&
+    !isListHeading(range[0]!)
+  );
 }
 
 /** True for the heading row of a shape list, which names label and density side by side. */
@@ -34,10 +38,16 @@ export function readBlock(range: Range, where: string): Block {
   range.forEach(([name, value], i) => {
     if (isBlankOrZero(name!)) return;
     const place = `${where}, row ${i + 1}`;
-    if (!isText(name!)) throw new InputError(place, `${quoted(name!)} is not a name`, 'give a word such as density or from, or the name of a given');
+    if (!isText(name!))
+      throw new InputError(
+        place,
+        `${quoted(name!)} is not a name`,
+        'give a word such as density or from, or the name of a given',
+      );
     const known = WORDS.find((w) => w === word(name));
     if (known === undefined) givens.push({ name, value: value! });
-    else if (words.has(known)) throw new InputError(place, `"${known}" stands twice`, 'keep one of the two');
+    else if (words.has(known))
+      throw new InputError(place, `"${known}" stands twice`, 'keep one of the two');
     else words.set(known, value!);
   });
   return { words, givens };

@@ -70,12 +70,20 @@ export function numberIn(cell: Cell, where: Where): number {
 /** The only cell of an argument that takes one. @throws {InputError} for a larger range. */
 export function singleCell(range: Range, where: Where): Cell {
   if (range.length === 1 && range[0]!.length === 1) return range[0]![0]!;
-  throw new InputError(where, `${range.length} rows and ${range[0]!.length} columns`, 'give one cell');
+  throw new InputError(
+    where,
+    `${range.length} rows and ${range[0]!.length} columns`,
+    'give one cell',
+  );
 }
 
 /** All cells of a range that is one row or one column. @throws {InputError} for another shape. */
 export function lineOfCells(range: Range, where: Where): readonly Cell[] {
   if (range.length === 1) return range[0]!;
   if (range[0]!.length === 1) return range.map((row) => row[0]!);
-  throw new InputError(where, `${range.length} rows and ${range[0]!.length} columns`, 'give one row or one column');
+  throw new InputError(
+    where,
+    `${range.length} rows and ${range[0]!.length} columns`,
+    'give one row or one column',
+  );
 }

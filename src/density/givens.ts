@@ -32,7 +32,11 @@ export class Givens {
       return;
     }
     if (this.variables.some((variable) => nameKey(variable) === key)) {
-      throw new InputError(at, 'it is the name of the variable', 'rename the given, or the variable in limits');
+      throw new InputError(
+        at,
+        'it is the name of the variable',
+        'rename the given, or the variable in limits',
+      );
     }
     if (VOCABULARY.has(key)) {
       throw new InputError(at, 'it is the name of a formula function', 'rename the given');
@@ -57,7 +61,11 @@ export class Givens {
 export function checkMethod(value: Cell, where: string): void {
   const method = numberIn(value, where);
   if (method !== CURRENT_METHOD) {
-    throw new InputError(where, `there is no method ${method}`, `use ${CURRENT_METHOD}, the only one so far`);
+    throw new InputError(
+      where,
+      `there is no method ${method}`,
+      `use ${CURRENT_METHOD}, the only one so far`,
+    );
   }
 }
 
@@ -82,7 +90,11 @@ function readConstants(range: Range, givens: Givens, where: string): void {
     const [name, value] = [row[0]!, row[1]!];
     if (isBlankOrZero(name)) return;
     if (!isText(name)) {
-      throw new InputError(`${where}, row ${i + 1}`, `${quoted(name)} is not a name`, 'give two columns, name and value');
+      throw new InputError(
+        `${where}, row ${i + 1}`,
+        `${quoted(name)} is not a name`,
+        'give two columns, name and value',
+      );
     }
     const isHeading = i === 0 && isText(value);
     if (!isHeading) givens.add(name, value, where);

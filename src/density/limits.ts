@@ -31,7 +31,8 @@ export interface Limits {
 export function readLimitCells(range: Range, where: string): LimitCells {
   passErrors(range);
   const cells = range.flat();
-  if (cells.length === 2) return { variable: DEFAULT_VARIABLE, from: cells[0]!, to: cells[1]!, where };
+  if (cells.length === 2)
+    return { variable: DEFAULT_VARIABLE, from: cells[0]!, to: cells[1]!, where };
   const rows = range.filter((row) => !row.every(isBlankOrZero));
   const body = word(rows[0]?.[1] ?? null) === 'from' ? rows.slice(1) : rows;
   const width = range[0]!.length;
@@ -43,10 +44,19 @@ export function readLimitCells(range: Range, where: string): LimitCells {
     );
   }
   if (body.length > 1) {
-    throw new InputError(where, `${body.length} variables`, 'give one row: only shapes of one variable can be drawn so far');
+    throw new InputError(
+      where,
+      `${body.length} variables`,
+      'give one row: only shapes of one variable can be drawn so far',
+    );
   }
   const [name, from, to, step = null] = body[0]!;
-  if (!isText(name!)) throw new InputError(where, `${quoted(name!)} is not a variable's name`, 'give a row name, from, to');
+  if (!isText(name!))
+    throw new InputError(
+      where,
+      `${quoted(name!)} is not a variable's name`,
+      'give a row name, from, to',
+    );
   checkStep(step, where);
   return { variable: name.trim(), from: from!, to: to!, where };
 }
@@ -54,7 +64,11 @@ export function readLimitCells(range: Range, where: string): LimitCells {
 /** @throws {InputError} for a step other than 0. */
 export function checkStep(step: Cell, where: string): void {
   if (numberIn(step, `${where}, step`) !== 0) {
-    throw new InputError(`${where}, step`, `${quoted(step)} asks for counted values`, 'give 0: only continuous quantities can be drawn so far');
+    throw new InputError(
+      `${where}, step`,
+      `${quoted(step)} asks for counted values`,
+      'give 0: only continuous quantities can be drawn so far',
+    );
   }
 }
 
@@ -63,26 +77,45 @@ export function checkStep(step: Cell, where: string): void {
  * @throws {InputError} when an end is no number and no given, when from ≥ to, or when an end is too far out.
  */
 export function readEnds({ from, to, where }: LimitCells, givens: Givens): Limits {
-  const limits = { from: readEnd(from, `${where}, from`, givens), to: readEnd(to, `${where}, to`, givens) };
+  const limits = {
+    from: readEnd(from, `${where}, from`, givens),
+    to: readEnd(to, `${where}, to`, givens),
+  };
   if (!(limits.from < limits.to)) {
-    throw new InputError(where, `from (${limits.from}) is not below to (${limits.to})`, 'give from first and a larger to');
+    throw new InputError(
+      where,
+      `from (${limits.from}) is not below to (${limits.to})`,
+      'give from first and a larger to',
+    );
   }
   return limits;
 }
 
 function readEnd(cell: Cell, where: string, givens: Givens): number {
   if (word(cell) === UNBOUNDED) {
-    throw new InputError(where, `"${UNBOUNDED}" cannot be drawn yet`, 'give a number beyond which the density does not matter');
+    throw new InputError(
+      where,
+      `"${UNBOUNDED}" cannot be drawn yet`,
+      'give a number beyond which the density does not matter',
+    );
   }
   if (isText(cell)) {
     const value = givens.find(cell);
     if (value !== undefined) return inReach(value, where);
-    throw new InputError(where, `${quoted(cell)} is neither a number nor the name of a given`, 'give a number');
+    throw new InputError(
+      where,
+      `${quoted(cell)} is neither a number nor the name of a given`,
+      'give a number',
+    );
   }
   return inReach(numberIn(cell, where), where);
 }
 
 function inReach(end: number, where: string): number {
   if (Math.abs(end) <= MAX_END) return end;
-  throw new InputError(where, `${end} is too far out`, `give a number between -${MAX_END} and ${MAX_END}`);
+  throw new InputError(
+    where,
+    `${end} is too far out`,
+    `give a number between -${MAX_END} and ${MAX_END}`,
+  );
 }

@@ -56,31 +56,60 @@ export interface Places {
  * @throws {InputError} with the place, for everything that cannot be read.
  * @throws {CellErrorPassed} when a cell holds an error value.
  */
-export function readShapes(density: Range | null, limits: Range | null, givens: readonly Range[], places: Places): Shapes {
+export function readShapes(
+  density: Range | null,
+  limits: Range | null,
+  givens: readonly Range[],
+  places: Places,
+): Shapes {
   const range = given(density);
   if (range === null) {
-    throw new InputError(places.density, 'it is blank', 'give a formula such as EXP(-x), a table of points, or a block with a row density');
+    throw new InputError(
+      places.density,
+      'it is blank',
+      'give a formula such as EXP(-x), a table of points, or a block with a row density',
+    );
   }
   passErrors(range);
   const limitsRange = given(limits);
   const block = isBlock(range) ? readBlock(range, places.density) : null;
-  const cells = limitsRange ? readLimitCells(limitsRange, places.limits) : block ? blockLimits(block, places.density) : null;
+  const cells = limitsRange
+    ? readLimitCells(limitsRange, places.limits)
+    : block
+      ? blockLimits(block, places.density)
+      : null;
   const variable = cells?.variable ?? DEFAULT_VARIABLE;
   const named = new Givens([variable]);
   for (const { name, value } of block?.givens ?? []) named.add(name, value, places.density);
   const method = block?.words.get('method');
   if (method !== undefined) checkMethod(method, `${places.density}, method`);
   readGivens(givens, named, places.givens);
-  if (!block && isPointTable(range)) return tableShapes(readTable(range, places.density), cells, named, places);
+  if (!block && isPointTable(range))
+    return tableShapes(readTable(range, places.density), cells, named, places);
   const sources = block ? [blockFormula(block, places.density)] : readLines(range, places.density);
   if (cells === null) {
-    throw new InputError(places.limits, 'they are missing', 'give two cells, from and to; a formula cannot be drawn without limits yet');
+    throw new InputError(
+      places.limits,
+      'they are missing',
+      'give two cells, from and to; a formula cannot be drawn without limits yet',
+    );
   }
-  const shape: FormulaShape = { kind: 'formula', sources, variable, limits: readEnds(cells, named), constants: named.constants };
+  const shape: FormulaShape = {
+    kind: 'formula',
+    sources,
+    variable,
+    limits: readEnds(cells, named),
+    constants: named.constants,
+  };
   return { shapes: [shape], block, notes: [] };
 }
 
-function tableShapes(table: PointTable, cells: LimitCells | null, named: Givens, places: Places): Shapes {
+function tableShapes(
+  table: PointTable,
+  cells: LimitCells | null,
+  named: Givens,
+  places: Places,
+): Shapes {
   const { x, columns, notes } = table;
   const own = { from: x[0]!, to: x.at(-1)! };
   const wanted = cells ? readEnds(cells, named) : own;
@@ -97,8 +126,16 @@ function blockLimits({ words }: Block, where: string): LimitCells | null {
   if (step !== undefined) checkStep(step, where);
   const [from, to] = [words.get('from'), words.get('to')];
   if (from === undefined && to === undefined) return null;
-  for (const [name, cell] of [['from', from], ['to', to]] as const) {
-    if (cell === undefined) throw new InputError(where, `the block has no row "${name}"`, `add a row ${name} and its value`);
+  for (const [name, cell] of [
+    ['from', from],
+    ['to', to],
+  ] as const) {
+    if (cell === undefined)
+      throw new InputError(
+        where,
+        `the block has no row "${name}"`,
+        `add a row ${name} and its value`,
+      );
   }
   return { variable: DEFAULT_VARIABLE, from: from!, to: to!, where };
 }
@@ -116,15 +153,28 @@ function readLines(range: Range, where: string): readonly Source[] {
       'give a formula, a column of formulas, a table of points (x and height), or a block with a row density',
     );
   }
-  const lines = range.map((row, i) => ({ cell: row[0]!, line: i + 1 })).filter(({ cell }) => !isBlankOrZero(cell));
-  if (lines.length === 0) throw new InputError(where, 'it is blank', 'give a formula such as EXP(-x)');
+  const lines = range
+    .map((row, i) => ({ cell: row[0]!, line: i + 1 }))
+    .filter(({ cell }) => !isBlankOrZero(cell));
+  if (lines.length === 0)
+    throw new InputError(where, 'it is blank', 'give a formula such as EXP(-x)');
   const isOne = range.length === 1;
-  return lines.map(({ cell, line }) => source(cell, isOne ? 'Formula' : `Formula, line ${line}`, isOne ? where : `${where}, row ${line}`));
+  return lines.map(({ cell, line }) =>
+    source(
+      cell,
+      isOne ? 'Formula' : `Formula, line ${line}`,
+      isOne ? where : `${where}, row ${line}`,
+    ),
+  );
 }
 
 function source(cell: Cell, where: string, place: string): Source {
   if (!isText(cell)) {
-    throw new InputError(place, `${quoted(cell)} is not a formula`, 'give a formula as text, such as EXP(-x)');
+    throw new InputError(
+      place,
+      `${quoted(cell)} is not a formula`,
+      'give a formula as text, such as EXP(-x)',
+    );
   }
   return { text: cell, where, tree: parse(cell, where) };
 }

@@ -21,7 +21,10 @@ export interface PointTable {
 
 /** True for a range that reads as a table of points: a number somewhere in its first two rows' first cell. */
 export function isPointTable(range: Range): boolean {
-  return range[0]!.length >= 2 && [range[0]![0]!, range[1]?.[0] ?? null].some((cell) => typeof cell === 'number');
+  return (
+    range[0]!.length >= 2 &&
+    [range[0]![0]!, range[1]?.[0] ?? null].some((cell) => typeof cell === 'number')
+  );
 }
 
 /**
@@ -32,23 +35,39 @@ export function isPointTable(range: Range): boolean {
 export function readTable(range: Range, where: string): PointTable {
   const hasHeading = range[0]!.some(isText) && !range[0]!.some((cell) => typeof cell === 'number');
   const firstRow = hasHeading ? 1 : 0;
-  const headings = hasHeading ? range[0]!.map((cell) => (isBlank(cell) ? '' : String(cell).trim())) : range[0]!.map(() => '');
+  const headings = hasHeading
+    ? range[0]!.map((cell) => (isText(cell) ? cell.trim() : ''))
+    : range[0]!.map(() => '');
   const { rows, dropped } = withoutTrailingBlanks(range.slice(firstRow));
   const place = (i: number): string => `${where}, row ${i + firstRow + 1}`;
   if (rows.length < 2) {
-    throw new InputError(where, `a table of ${rows.length} point${rows.length === 1 ? '' : 's'}`, 'give two points or more, x and height');
+    throw new InputError(
+      where,
+      `a table of ${rows.length} point${rows.length === 1 ? '' : 's'}`,
+      'give two points or more, x and height',
+    );
   }
   const x = rows.map((row, i) => numberIn(row[0]!, `${place(i)}, x`));
   const falls = x.findIndex((value, i) => i > 0 && value < x[i - 1]!);
   if (falls > 0) {
-    throw new InputError(place(falls), `x falls from ${x[falls - 1]} to ${x[falls]}`, 'order the points so that x never falls');
+    throw new InputError(
+      place(falls),
+      `x falls from ${x[falls - 1]} to ${x[falls]}`,
+      'order the points so that x never falls',
+    );
   }
   const columns = headings.slice(1).map((heading, j) => ({
     heading,
     heights: rows.map((row, i) => height(row[j + 1]!, `${place(i)}, column ${j + 2}`)),
   }));
-  for (const [j, { heights }] of columns.entries()) checkSomeArea(x, heights, `${where}, column ${j + 2}`);
-  const notes = dropped > 0 ? [`${dropped} blank or (0, 0) row${dropped === 1 ? '' : 's'} at the end of the table left out`] : [];
+  for (const [j, { heights }] of columns.entries())
+    checkSomeArea(x, heights, `${where}, column ${j + 2}`);
+  const notes =
+    dropped > 0
+      ? [
+          `${dropped} blank or (0, 0) row${dropped === 1 ? '' : 's'} at the end of the table left out`,
+        ]
+      : [];
   return { x, columns, notes };
 }
 
@@ -67,12 +86,21 @@ function numberOr0(cell: Cell): number {
 function height(cell: Cell, where: string): number {
   const value = numberIn(cell, where);
   if (value >= 0) return value;
-  throw new InputError(where, `the height ${quoted(cell)} is negative`, 'give heights of 0 or more');
+  throw new InputError(
+    where,
+    `the height ${quoted(cell)} is negative`,
+    'give heights of 0 or more',
+  );
 }
 
 function checkSomeArea(x: readonly number[], heights: readonly number[], where: string): void {
   const hasArea = x.some((to, i) => i > 0 && to > x[i - 1]! && heights[i - 1]! + heights[i]! > 0);
-  if (!hasArea) throw new InputError(where, 'there is no area under the points', 'give some height above 0 over a stretch of x');
+  if (!hasArea)
+    throw new InputError(
+      where,
+      'there is no area under the points',
+      'give some height above 0 over a stretch of x',
+    );
 }
 
 /** One density of straight lines: the part of a column of heights that lies within the limits. */
@@ -85,7 +113,12 @@ export interface Polyline {
  * Cuts a column to the limits.
  * @throws {InputError} when nothing of the table's area lies within them.
  */
-export function truncate(x: readonly number[], heights: readonly number[], limits: Limits, where: string): Polyline {
+export function truncate(
+  x: readonly number[],
+  heights: readonly number[],
+  limits: Limits,
+  where: string,
+): Polyline {
   const points: { x: number; height: number }[] = [];
   for (let i = 1; i < x.length; i++) {
     const [a, b] = [x[i - 1]!, x[i]!];
@@ -93,7 +126,11 @@ export function truncate(x: readonly number[], heights: readonly number[], limit
     const to = Math.min(b, limits.to);
     if (!(from < to)) continue;
     const at = (p: number): number =>
-      p === a ? heights[i - 1]! : p === b ? heights[i]! : heights[i - 1]! + (heights[i]! - heights[i - 1]!) * ((p - a) / (b - a));
+      p === a
+        ? heights[i - 1]!
+        : p === b
+          ? heights[i]!
+          : heights[i - 1]! + (heights[i]! - heights[i - 1]!) * ((p - a) / (b - a));
     points.push({ x: from, height: at(from) }, { x: to, height: at(to) });
   }
   const cut = { x: points.map((p) => p.x), heights: points.map((p) => p.height) };

@@ -86,7 +86,13 @@ export class Drawer {
   }
 
   /** Writes x of every first number; returns how many lie in gaps and lists them in `open`. */
-  private settleFirst(numbers: Float64Array, size: number, values: Float64Array, offset: number, open: Int32Array): number {
+  private settleFirst(
+    numbers: Float64Array,
+    size: number,
+    values: Float64Array,
+    offset: number,
+    open: Int32Array,
+  ): number {
     const { segments, gapOf, cells } = this.guide;
     const nCells = cells.length;
     let nOpen = 0;
@@ -110,7 +116,13 @@ export class Drawer {
   }
 
   /** Finishes a row whose first number u fell into a gap; returns the proposals it took. */
-  private finish(stream: RowStream, row: number, u: number, values: Float64Array, at: number): number {
+  private finish(
+    stream: RowStream,
+    row: number,
+    u: number,
+    values: Float64Array,
+    at: number,
+  ): number {
     stream.further(row, 0, this.pair);
     if (this.isUnder(values[at]!, this.gapAt(u), this.pair[1]!)) return 1;
     for (let attempt = 1; attempt < MAX_ATTEMPTS; attempt++) {

@@ -75,7 +75,12 @@ export function guideOf(envelope: Envelope): Guide {
     start += share;
   });
   segments[used.length * STRIDE] = 1;
-  return { segments, gapOf: Int32Array.from(used, (t) => (t.isGap ? t.piece : -1)), cells: cellsOf(segments, used.length), lines: linesOf(envelope) };
+  return {
+    segments,
+    gapOf: Int32Array.from(used, (t) => (t.isGap ? t.piece : -1)),
+    cells: cellsOf(segments, used.length),
+    lines: linesOf(envelope),
+  };
 }
 
 function cellsOf(segments: Float64Array, n: number): Int32Array {
@@ -94,7 +99,17 @@ function linesOf({ pieces }: Envelope): Float64Array {
   pieces.forEach((p, i) => {
     const gapLeft = p.upperLeft - p.lowerLeft;
     const gapRight = p.upperRight - p.lowerRight;
-    lines.set([p.from, 1 / (p.to - p.from), p.lowerLeft, p.lowerRight - p.lowerLeft, gapLeft, gapRight - gapLeft], i * LINES_STRIDE);
+    lines.set(
+      [
+        p.from,
+        1 / (p.to - p.from),
+        p.lowerLeft,
+        p.lowerRight - p.lowerLeft,
+        gapLeft,
+        gapRight - gapLeft,
+      ],
+      i * LINES_STRIDE,
+    );
   });
   return lines;
 }

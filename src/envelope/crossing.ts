@@ -23,7 +23,13 @@ function sign(u: Interval): number {
 }
 
 /** The crossing of `step` inside [a, b]; null when it cannot be told from the ends. */
-export function findCrossing(encloser: Encloser, step: number, a: number, b: number, room: PointValues): Crossing | null {
+export function findCrossing(
+  encloser: Encloser,
+  step: number,
+  a: number,
+  b: number,
+  room: PointValues,
+): Crossing | null {
   const valueAt = (x: number): Interval => {
     encloser.at(x, room);
     return room.values[step]!;
@@ -81,5 +87,7 @@ function crossingAtEnd(
   signB: number,
 ): Crossing | null {
   if (signA === 0 && signB === 0) return null;
-  return signA === 0 ? { lo: a, hi: outward(valueAt, a, b) } : { lo: outward(valueAt, b, a), hi: b };
+  return signA === 0
+    ? { lo: a, hi: outward(valueAt, a, b) }
+    : { lo: outward(valueAt, b, a), hi: b };
 }

@@ -30,7 +30,9 @@ export function promisedAcceptance(envelope: Pick<Envelope, 'upperArea' | 'lower
 }
 
 /** Sums of the pieces' areas, rounded outward. */
-export function totalAreas(pieces: readonly Piece[]): Pick<Envelope, 'upperArea' | 'lowerArea' | 'areaLo' | 'areaHi'> {
+export function totalAreas(
+  pieces: readonly Piece[],
+): Pick<Envelope, 'upperArea' | 'lowerArea' | 'areaLo' | 'areaHi'> {
   const sum = { upperArea: 0, lowerArea: 0, areaLo: 0, areaHi: 0 };
   for (const piece of pieces) {
     sum.upperArea = addUp(sum.upperArea, piece.upperArea);

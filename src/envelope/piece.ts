@@ -69,7 +69,12 @@ function rise(bend: number, lift: number, half: number): number {
  * The piece that the bounds prove: `f` over [from, to] and the density at three
  * points. Negative parts of f count as 0.
  */
-export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atMiddle }: PieceEnds): Piece {
+export function provePiece(
+  from: number,
+  to: number,
+  f: Jet,
+  { atFrom, atTo, atMiddle }: PieceEnds,
+): Piece {
   const width = up(to - from);
   const widthLo = down(to - from);
   const top = Math.max(0, Math.min(f.v.hi, roof(f.d.lo, f.d.hi, atFrom.hi, atTo.hi, width)));
@@ -78,12 +83,17 @@ export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atM
   // The middle is a double, off the centre by this share of the width at most.
   const off = ulp(Math.max(Math.abs(from), Math.abs(to))) / width;
   const half = up((width / 2) * (1 + 2 * off));
-  const slack = off > MAX_OFF ? Infinity : mulUp(Math.max(atTo.hi - atFrom.lo, atFrom.hi - atTo.lo), off);
+  const slack =
+    off > MAX_OFF ? Infinity : mulUp(Math.max(atTo.hi - atFrom.lo, atFrom.hi - atTo.lo), off);
   const lift = addUp(addUp(atMiddle.hi, -addDown(atFrom.lo, atTo.lo) / 2), slack);
   const dip = addUp(addUp(addUp(atFrom.hi, atTo.hi) / 2, -atMiddle.lo), slack);
   const gain = rise(-f.h.lo, lift, half);
   const sag = rise(f.h.hi, dip, half);
-  const upper = betterUpper(Math.max(0, addUp(atFrom.hi, gain)), Math.max(0, addUp(atTo.hi, gain)), top);
+  const upper = betterUpper(
+    Math.max(0, addUp(atFrom.hi, gain)),
+    Math.max(0, addUp(atTo.hi, gain)),
+    top,
+  );
   const dent = mulUp(Math.max(0, f.h.hi), mulUp(width, width)) / 2;
   const lower = bestLower(
     [addDown(atFrom.lo, -sag), addDown(atTo.lo, -sag)],
@@ -95,8 +105,14 @@ export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atM
   const lowerArea = areaDown(lower[0], lower[1], widthLo);
   const cube = mulUp(mulUp(width, width), width) / 12;
   const cubeLo = mulDown(mulDown(widthLo, widthLo), widthLo) / 12;
-  const areaHi = addUp(areaUp(atFrom.hi, atTo.hi, width), -mulDown(f.h.lo, f.h.lo > 0 ? cubeLo : cube));
-  const areaLo = addDown(areaDown(atFrom.lo, atTo.lo, widthLo), -mulUp(f.h.hi, f.h.hi > 0 ? cube : cubeLo));
+  const areaHi = addUp(
+    areaUp(atFrom.hi, atTo.hi, width),
+    -mulDown(f.h.lo, f.h.lo > 0 ? cubeLo : cube),
+  );
+  const areaLo = addDown(
+    areaDown(atFrom.lo, atTo.lo, widthLo),
+    -mulUp(f.h.hi, f.h.hi > 0 ? cube : cubeLo),
+  );
   return {
     from,
     to,
@@ -120,7 +136,8 @@ export function provePiece(from: number, to: number, f: Jet, { atFrom, atTo, atM
  *    l    r
  */
 function roof(fall: number, climb: number, left: number, right: number, width: number): number {
-  if (!(climb < Infinity && fall > -Infinity && left < Infinity && right < Infinity)) return Infinity;
+  if (!(climb < Infinity && fall > -Infinity && left < Infinity && right < Infinity))
+    return Infinity;
   if (climb <= 0) return left;
   if (fall >= 0) return right;
   const run = climb - fall;

@@ -16,7 +16,9 @@ const SHORTEST = 1e-140;
 export function polylineEnvelope({ x, heights }: Polyline): Envelope {
   const exponent = exponentOf(Math.max(...heights));
   const scaled = heights.map((height) => scaleBy(height, -exponent));
-  const pieces = x.slice(1).flatMap((to, i) => (to > x[i]! ? [trapezoid(x[i]!, to, scaled[i]!, scaled[i + 1]!)] : []));
+  const pieces = x
+    .slice(1)
+    .flatMap((to, i) => (to > x[i]! ? [trapezoid(x[i]!, to, scaled[i]!, scaled[i + 1]!)] : []));
   return {
     from: x[0]!,
     to: x.at(-1)!,

@@ -103,7 +103,9 @@ class Prover {
     const promised = promisedAcceptance(areas);
     if (promised < LEAST_ACCEPTANCE) throw this.acceptedTooRarely(promised, parts);
     if (promised < WANTED_ACCEPTANCE) {
-      this.notes.push(`the proof promises an acceptance of ${shortNumber(promised)} after ${MAX_PIECES} pieces; the draws are exact all the same`);
+      this.notes.push(
+        `the proof promises an acceptance of ${shortNumber(promised)} after ${MAX_PIECES} pieces; the draws are exact all the same`,
+      );
     }
     const { exponent } = this.encloser;
     return {
@@ -187,8 +189,14 @@ class Prover {
 
   private refuseUrgent(part: Part): never {
     if (part.defined === Defined.Nowhere) throw this.undefinedOn(part);
-    const near = shortNumber(Math.abs(part.piece.from) < Math.abs(part.piece.to) ? part.piece.from : part.piece.to);
-    throw new InputError(WHERE, `it cannot be bounded near x = ${near}`, 'keep the limits away from there, or write the formula so that it stays finite');
+    const near = shortNumber(
+      Math.abs(part.piece.from) < Math.abs(part.piece.to) ? part.piece.from : part.piece.to,
+    );
+    throw new InputError(
+      WHERE,
+      `it cannot be bounded near x = ${near}`,
+      'keep the limits away from there, or write the formula so that it stays finite',
+    );
   }
 
   private undefinedOn(part: Part): InputError {
@@ -219,26 +227,42 @@ class Prover {
    */
   private spreadGaps(): void {
     const parts = [...this.parts].sort((p, q) => p.piece.from - q.piece.from);
-    const roots = parts.map((part) => elementary.pow(part.piece.upperArea - part.piece.lowerArea, 1 / 3));
+    const roots = parts.map((part) =>
+      elementary.pow(part.piece.upperArea - part.piece.lowerArea, 1 / 3),
+    );
     const total = roots.reduce((sum, root) => sum + root, 0);
     const share = Math.sqrt(((1 - WANTED_ACCEPTANCE) * this.upperArea) / total);
     for (let i = 0; i < parts.length; i++) {
       const first = i;
       let run = 0;
       for (; i < parts.length && canMove(parts[i]!); i++) run += roots[i]!;
-      if (i - first > 1) this.cutEvenly(parts.slice(first, i), roots.slice(first, i), run, Math.max(1, Math.round(run / share)));
+      if (i - first > 1)
+        this.cutEvenly(
+          parts.slice(first, i),
+          roots.slice(first, i),
+          run,
+          Math.max(1, Math.round(run / share)),
+        );
     }
   }
 
   /** Replaces neighbouring parts by n parts, each with the same share of their roots' sum. */
-  private cutEvenly(parts: readonly Part[], roots: readonly number[], sum: number, n: number): void {
+  private cutEvenly(
+    parts: readonly Part[],
+    roots: readonly number[],
+    sum: number,
+    n: number,
+  ): void {
     const bounds = [parts[0]!.piece.from];
     let before = 0;
     parts.forEach((part, i) => {
       this.remove(part);
       const after = before + roots[i]!;
       for (let k = bounds.length; k < n && (sum * k) / n <= after; k++) {
-        bounds.push(part.piece.from + (part.piece.to - part.piece.from) * (((sum * k) / n - before) / roots[i]!));
+        bounds.push(
+          part.piece.from +
+            (part.piece.to - part.piece.from) * (((sum * k) / n - before) / roots[i]!),
+        );
       }
       before = after;
     });
@@ -263,13 +287,16 @@ class Prover {
     this.seePoint(right);
     const enclosure = this.encloser.over(left.x, right.x, left, right);
     const { defined, density, turn } = enclosure;
-    if (defined === Defined.Everywhere && density.v.hi < 0) throw this.negativeAt(left.x, density.v);
+    if (defined === Defined.Everywhere && density.v.hi < 0)
+      throw this.negativeAt(left.x, density.v);
     const isBeyondRounding = right.x - left.x > NEGLIGIBLE * this.width;
     const reason = defined === Defined.Everywhere ? '' : this.encloser.undefinedReason();
     if (defined === Defined.Nowhere) {
       const part = { piece: nothing(left.x, right.x), defined, turn, reason };
       if (isBeyondRounding) throw this.undefinedOn(part);
-      this.notes.push(`the density is undefined on a stretch of ${shortNumber(right.x - left.x)} at x = ${shortNumber(left.x)}, where ${reason}; nothing is drawn there`);
+      this.notes.push(
+        `the density is undefined on a stretch of ${shortNumber(right.x - left.x)} at x = ${shortNumber(left.x)}, where ${reason}; nothing is drawn there`,
+      );
       return { ...part, defined: Defined.Everywhere };
     }
     this.useMonotone(enclosure, left, right);
@@ -287,7 +314,11 @@ class Prover {
   }
 
   /** A scaled density is tightened here; an unscaled one already was, as a step of the tape. */
-  private useMonotone({ density, defined }: Enclosure, left: PointValues, right: PointValues): void {
+  private useMonotone(
+    { density, defined }: Enclosure,
+    left: PointValues,
+    right: PointValues,
+  ): void {
     if (this.encloser.exponent === 0 || defined !== Defined.Everywhere) return;
     const { lo, hi } = density.d;
     if (lo >= 0) I.meet(density.v, { lo: left.density.lo, hi: right.density.hi });
@@ -310,7 +341,9 @@ class Prover {
   /** Proves f ≥ −10^-12 of the peak wherever a piece's own bound does not. */
   private settleSigns(parts: readonly Part[]): void {
     const tolerance = -SIGN_TOLERANCE * this.peak;
-    const open = parts.filter((part) => part.piece.least < tolerance).map(({ piece: { from, to } }) => ({ from, to }));
+    const open = parts
+      .filter((part) => part.piece.least < tolerance)
+      .map(({ piece: { from, to } }) => ({ from, to }));
     let isRounded = parts.find((part) => part.piece.least < 0 && part.piece.least >= tolerance);
     for (let steps = 0; open.length > 0; steps++) {
       const { from, to } = open.pop()!;
@@ -334,7 +367,11 @@ class Prover {
 
   private negativeAt(x: number, height: I.Interval): InputError {
     const value = this.encloser.exponent === 0 ? ` (${shortNumber(height.hi)})` : '';
-    return new InputError(WHERE, `it is negative at x = ${shortNumber(x)}${value}`, 'heights must be 0 or more; use MAX(0, …) if that is meant');
+    return new InputError(
+      WHERE,
+      `it is negative at x = ${shortNumber(x)}${value}`,
+      'heights must be 0 or more; use MAX(0, …) if that is meant',
+    );
   }
 
   private unsettledSign(part: Part): InputError {
@@ -354,7 +391,9 @@ class Prover {
   }
 
   private acceptedTooRarely(promised: number, parts: readonly Part[]): InputError {
-    const worst = parts.reduce((p, q) => (q.piece.upperArea - q.piece.lowerArea > p.piece.upperArea - p.piece.lowerArea ? q : p));
+    const worst = parts.reduce((p, q) =>
+      q.piece.upperArea - q.piece.lowerArea > p.piece.upperArea - p.piece.lowerArea ? q : p,
+    );
     return new InputError(
       WHERE,
       `only ${shortNumber(promised)} of proposals are sure to be accepted after ${MAX_PIECES} pieces (worst near x = ${shortNumber(worst.piece.from)})`,
@@ -374,7 +413,12 @@ class Prover {
 
 /** True for a part whose ends may move: nothing turns inside and its gap is not nil. */
 function canMove(part: Part): boolean {
-  return part.turn < 0 && part.defined === Defined.Everywhere && part.piece.upperArea > part.piece.lowerArea && part.piece.upperArea < Infinity;
+  return (
+    part.turn < 0 &&
+    part.defined === Defined.Everywhere &&
+    part.piece.upperArea > part.piece.lowerArea &&
+    part.piece.upperArea < Infinity
+  );
 }
 
 /** A part with no height. */

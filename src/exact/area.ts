@@ -8,8 +8,13 @@
  */
 import type { Envelope } from '../envelope/envelope';
 
-const NODES = [0.1488743389816312, 0.4333953941292472, 0.6794095682990244, 0.8650633666889845, 0.9739065285171717];
-const WEIGHTS = [0.2955242247147529, 0.2692667193099963, 0.219086362515982, 0.1494513491505806, 0.0666713443086881];
+const NODES = [
+  0.1488743389816312, 0.4333953941292472, 0.6794095682990244, 0.8650633666889845,
+  0.9739065285171717,
+];
+const WEIGHTS = [
+  0.2955242247147529, 0.2692667193099963, 0.219086362515982, 0.1494513491505806, 0.0666713443086881,
+];
 
 /** The area under the scaled density. Guarantee: within [areaLo, areaHi] of the envelope. */
 export function areaOf(envelope: Envelope): number {
@@ -24,7 +29,10 @@ export function areaOf(envelope: Envelope): number {
       sum += WEIGHTS[i]! * (heightAt(centre - half * node) + heightAt(centre + half * node));
     });
     const estimate = sum * half;
-    area += Math.min(areaHi, Math.max(areaLo, estimate === estimate ? estimate : areaLo / 2 + areaHi / 2));
+    area += Math.min(
+      areaHi,
+      Math.max(areaLo, estimate === estimate ? estimate : areaLo / 2 + areaHi / 2),
+    );
   }
   return Math.min(envelope.areaHi, Math.max(envelope.areaLo, area));
 }

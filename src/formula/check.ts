@@ -35,7 +35,11 @@ export function place(where: string, at: number): string {
  */
 export function checkText(text: string, where: string): string {
   if (text.length > MAX_CHARACTERS) {
-    throw new InputError(where, `${text.length} characters`, `use at most ${MAX_CHARACTERS}, or split the formula with givens`);
+    throw new InputError(
+      where,
+      `${text.length} characters`,
+      `use at most ${MAX_CHARACTERS}, or split the formula with givens`,
+    );
   }
   const open: { bracket: string; at: number }[] = [];
   const commas: number[] = [];
@@ -51,7 +55,11 @@ export function checkText(text: string, where: string): string {
     else if (c === '(' || c === '{') {
       open.push({ bracket: c, at: i + 1 });
       if (open.length > MAX_DEPTH) {
-        throw new InputError(place(where, i + 1), `brackets ${open.length} deep`, `use at most ${MAX_DEPTH} levels, or name parts with LET`);
+        throw new InputError(
+          place(where, i + 1),
+          `brackets ${open.length} deep`,
+          `use at most ${MAX_DEPTH} levels, or name parts with LET`,
+        );
       }
     } else if (c === ')' || c === '}') close(open, c, i + 1, where);
     else if (open.at(-1)?.bracket !== '{') {
@@ -59,31 +67,62 @@ export function checkText(text: string, where: string): string {
       if (c === ';') semicolons.push(i);
       const meant = LOOKALIKES.get(c);
       if (meant !== undefined) {
-        throw new InputError(place(where, i + 1), `"${c}" is not a worksheet operator`, `write ${meant}`);
+        throw new InputError(
+          place(where, i + 1),
+          `"${c}" is not a worksheet operator`,
+          `write ${meant}`,
+        );
       }
     }
   }
   if (quote) {
-    throw new InputError(place(where, quote.at), `${quote.mark} is never closed`, `add ${quote.mark}`);
+    throw new InputError(
+      place(where, quote.at),
+      `${quote.mark} is never closed`,
+      `add ${quote.mark}`,
+    );
   }
   const left = open.at(-1);
   if (left) {
-    throw new InputError(place(where, left.at), `"${left.bracket}" is never closed`, `add "${left.bracket === '(' ? ')' : '}'}"`);
+    throw new InputError(
+      place(where, left.at),
+      `"${left.bracket}" is never closed`,
+      `add "${left.bracket === '(' ? ')' : '}'}"`,
+    );
   }
   if (semicolons.length === 0) return text;
   return withCommas(text, commas, semicolons, where);
 }
 
-function close(open: { bracket: string; at: number }[], c: string, at: number, where: string): void {
+function close(
+  open: { bracket: string; at: number }[],
+  c: string,
+  at: number,
+  where: string,
+): void {
   const last = open.pop();
   const wanted = c === ')' ? '(' : '{';
-  if (!last) throw new InputError(place(where, at), `"${c}" was never opened`, `remove it or add "${wanted}"`);
+  if (!last)
+    throw new InputError(
+      place(where, at),
+      `"${c}" was never opened`,
+      `remove it or add "${wanted}"`,
+    );
   if (last.bracket !== wanted) {
-    throw new InputError(place(where, at), `"${c}" closes the "${last.bracket}" of character ${last.at}`, 'close brackets in the order they were opened');
+    throw new InputError(
+      place(where, at),
+      `"${c}" closes the "${last.bracket}" of character ${last.at}`,
+      'close brackets in the order they were opened',
+    );
   }
 }
 
-function withCommas(text: string, commas: readonly number[], semicolons: readonly number[], where: string): string {
+function withCommas(
+  text: string,
+  commas: readonly number[],
+  semicolons: readonly number[],
+  where: string,
+): string {
   const first = commas[0];
   if (first !== undefined) {
     const decimal = commas.find((i) => isDecimalComma(text, i));

@@ -21,7 +21,12 @@ export const MAX_OPERATIONS = 10_000;
 type Value =
   | { readonly kind: 'step'; readonly step: number }
   | { readonly kind: 'array'; readonly rows: readonly (readonly number[])[] }
-  | { readonly kind: 'function'; readonly params: readonly string[]; readonly body: Tree; readonly scope: Scope };
+  | {
+      readonly kind: 'function';
+      readonly params: readonly string[];
+      readonly body: Tree;
+      readonly scope: Scope;
+    };
 
 /** Names are compared without case, cell addresses without `$`. */
 export function nameKey(name: string): string {
@@ -121,9 +126,17 @@ class Compiler {
     const value = this.value(tree, scope);
     if (value.kind === 'step') return value.step;
     if (value.kind === 'array') {
-      throw this.error(tree.at, 'an array where a single number belongs', 'put it inside SUM, PRODUCT or another function that takes many numbers');
+      throw this.error(
+        tree.at,
+        'an array where a single number belongs',
+        'put it inside SUM, PRODUCT or another function that takes many numbers',
+      );
     }
-    throw this.error(tree.at, 'a LAMBDA where a number belongs', 'give it its arguments in brackets');
+    throw this.error(
+      tree.at,
+      'a LAMBDA where a number belongs',
+      'give it its arguments in brackets',
+    );
   }
 
   private value(tree: Tree, scope: Scope): Value {
@@ -133,7 +146,11 @@ class Compiler {
       case 'truth':
         return { kind: 'step', step: this.call(tree.value ? 'TRUE' : 'FALSE', [], tree.at) };
       case 'text':
-        throw this.error(tree.at, `the text "${tree.value}" where a number belongs`, 'write a number or a name from the givens');
+        throw this.error(
+          tree.at,
+          `the text "${tree.value}" where a number belongs`,
+          'write a number or a name from the givens',
+        );
       case 'name':
         return this.named(tree.name, tree.isCell, tree.at, scope);
       case 'array': {
@@ -161,17 +178,29 @@ class Compiler {
       throw this.error(at, `"${name}" is a cell address with no given`, expected);
     }
     if (VOCABULARY.has(name.toUpperCase())) {
-      throw this.error(at, `"${name}" is a function without its brackets`, `write ${name.toUpperCase()}(…)`);
+      throw this.error(
+        at,
+        `"${name}" is a function without its brackets`,
+        `write ${name.toUpperCase()}(…)`,
+      );
     }
     const known = [...this.variables, ...this.constants.keys()].join(', ');
-    throw this.error(at, `"${name}" is not a known name`, `add it to the givens, or use one of: ${known}`);
+    throw this.error(
+      at,
+      `"${name}" is not a known name`,
+      `add it to the givens, or use one of: ${known}`,
+    );
   }
 
   private let(tree: Extract<Tree, { kind: 'let' }>, scope: Scope): Value {
     const inner = new Scope(scope);
     for (const { name, value, at } of tree.bindings) {
       if (value.kind === 'lambda' && !scope.find(nameKey(name)) && callsItself(name, value.body)) {
-        throw this.error(at, `${name} calls itself`, 'recursion is not part of the formula language; write the steps out');
+        throw this.error(
+          at,
+          `${name} calls itself`,
+          'recursion is not part of the formula language; write the steps out',
+        );
       }
       inner.set(nameKey(name), this.value(value, inner));
     }
@@ -185,27 +214,53 @@ class Compiler {
     const row = VOCABULARY.get(name);
     if (!row || tree.args.length < row.least) {
       const why = operator === '&' ? 'joins text' : 'is not part of the formula language';
-      throw this.error(at, `the operator "${operator}" ${why}`, 'use + - * / ^ %, comparisons, AND and OR');
+      throw this.error(
+        at,
+        `the operator "${operator}" ${why}`,
+        'use + - * / ^ %, comparisons, AND and OR',
+      );
     }
-    return this.elementwise(row, tree.args.map((arg) => this.value(arg, scope)), at);
+    return this.elementwise(
+      row,
+      tree.args.map((arg) => this.value(arg, scope)),
+      at,
+    );
   }
 
   private callTree(tree: Extract<Tree, { kind: 'call' }>, scope: Scope): Value {
     const { callee, at } = tree;
-    const own = typeof callee === 'string' ? scope.find(nameKey(callee)) : this.value(callee, scope);
+    const own =
+      typeof callee === 'string' ? scope.find(nameKey(callee)) : this.value(callee, scope);
     if (own?.kind === 'function') return this.applyLambda(own, tree, scope);
     if (typeof callee !== 'string' || own) {
-      throw this.error(at, 'brackets after something that is not a function', 'put * before the bracket to multiply');
+      throw this.error(
+        at,
+        'brackets after something that is not a function',
+        'put * before the bracket to multiply',
+      );
     }
     const row = VOCABULARY.get(callee.toUpperCase());
     if (!row || !/^[A-Z]/i.test(callee)) {
-      throw this.error(at, `"${callee}" is not a known function`, `use one of: ${functionNames().join(', ')}`);
+      throw this.error(
+        at,
+        `"${callee}" is not a known function`,
+        `use one of: ${functionNames().join(', ')}`,
+      );
     }
     this.checkCount(row, tree);
-    const args = tree.args.map((arg): Value => (arg ? this.value(arg, scope) : { kind: 'step', step: this.number(0) }));
+    const args = tree.args.map((arg): Value =>
+      arg ? this.value(arg, scope) : { kind: 'step', step: this.number(0) },
+    );
     // Functions of many numbers take an array as its numbers; the others work on it element by element.
     if (row.most !== Infinity) return this.elementwise(row, args, at);
-    return { kind: 'step', step: this.applyRow(row, args.flatMap((arg) => this.elements(arg, at)), at) };
+    return {
+      kind: 'step',
+      step: this.applyRow(
+        row,
+        args.flatMap((arg) => this.elements(arg, at)),
+        at,
+      ),
+    };
   }
 
   private elements(value: Value, at: number): readonly number[] {
@@ -218,21 +273,39 @@ class Compiler {
     const n = tree.args.length;
     if (n >= row.least && n <= row.most) return;
     const { text, where } = this.source;
-    const comma = text.split('').findIndex((c, i) => i >= tree.at && c === ',' && isDecimalComma(text, i));
+    const comma = text
+      .split('')
+      .findIndex((c, i) => i >= tree.at && c === ',' && isDecimalComma(text, i));
     if (comma >= 0) throw decimalComma(text, comma, where);
-    const wanted = row.least === row.most ? `${row.least}` : row.most === Infinity ? `${row.least} or more` : `${row.least} to ${row.most}`;
+    const wanted =
+      row.least === row.most
+        ? `${row.least}`
+        : row.most === Infinity
+          ? `${row.least} or more`
+          : `${row.least} to ${row.most}`;
     throw this.error(tree.at, `${row.name} has ${n} arguments`, `give it ${wanted}`);
   }
 
-  private applyLambda(own: Extract<Value, { kind: 'function' }>, tree: Extract<Tree, { kind: 'call' }>, scope: Scope): Value {
+  private applyLambda(
+    own: Extract<Value, { kind: 'function' }>,
+    tree: Extract<Tree, { kind: 'call' }>,
+    scope: Scope,
+  ): Value {
     if (own.params.length !== tree.args.length) {
-      throw this.error(tree.at, `a LAMBDA of ${own.params.length} parameters has ${tree.args.length} arguments`, `give it ${own.params.length}`);
+      throw this.error(
+        tree.at,
+        `a LAMBDA of ${own.params.length} parameters has ${tree.args.length} arguments`,
+        `give it ${own.params.length}`,
+      );
     }
     this.count(tree.at);
     const inner = new Scope(own.scope);
     own.params.forEach((name, i) => {
       const arg = tree.args[i];
-      inner.set(nameKey(name), arg ? this.value(arg, scope) : { kind: 'step', step: this.number(0) });
+      inner.set(
+        nameKey(name),
+        arg ? this.value(arg, scope) : { kind: 'step', step: this.number(0) },
+      );
     });
     return this.value(own.body, inner);
   }
@@ -241,13 +314,27 @@ class Compiler {
   private elementwise(row: Row, args: readonly Value[], at: number): Value {
     const arrays = args.filter((arg) => arg.kind === 'array');
     if (arrays.length === 0) {
-      return { kind: 'step', step: this.applyRow(row, args.map((arg) => this.elements(arg, at)[0]!), at) };
+      return {
+        kind: 'step',
+        step: this.applyRow(
+          row,
+          args.map((arg) => this.elements(arg, at)[0]!),
+          at,
+        ),
+      };
     }
     const nRows = Math.max(...arrays.map((a) => a.rows.length));
     const nColumns = Math.max(...arrays.map((a) => a.rows[0]!.length));
     for (const { rows } of arrays) {
-      const fits = (rows.length === 1 || rows.length === nRows) && (rows[0]!.length === 1 || rows[0]!.length === nColumns);
-      if (!fits) throw this.error(at, 'arrays of different sizes', 'use arrays with the same number of elements');
+      const fits =
+        (rows.length === 1 || rows.length === nRows) &&
+        (rows[0]!.length === 1 || rows[0]!.length === nColumns);
+      if (!fits)
+        throw this.error(
+          at,
+          'arrays of different sizes',
+          'use arrays with the same number of elements',
+        );
     }
     const pick = (arg: Value, i: number, j: number): number => {
       if (arg.kind !== 'array') return this.elements(arg, at)[0]!;
@@ -255,7 +342,13 @@ class Compiler {
       return line[line.length === 1 ? 0 : j]!;
     };
     const rows = Array.from({ length: nRows }, (_, i) =>
-      Array.from({ length: nColumns }, (__, j) => this.applyRow(row, args.map((arg) => pick(arg, i, j)), at)),
+      Array.from({ length: nColumns }, (__, j) =>
+        this.applyRow(
+          row,
+          args.map((arg) => pick(arg, i, j)),
+          at,
+        ),
+      ),
     );
     return { kind: 'array', rows };
   }
@@ -273,7 +366,11 @@ class Compiler {
   private count(at: number): void {
     this.work++;
     if (this.work > MAX_OPERATIONS || this.steps.length > MAX_OPERATIONS) {
-      throw this.error(at, `more than ${MAX_OPERATIONS} operations once LET and LAMBDA are written out`, 'shorten the formula');
+      throw this.error(
+        at,
+        `more than ${MAX_OPERATIONS} operations once LET and LAMBDA are written out`,
+        'shorten the formula',
+      );
     }
   }
 
@@ -313,7 +410,9 @@ class Compiler {
     const known = this.known.get(key);
     if (known !== undefined) return known;
     const isConstant = args.every((arg) => this.steps[arg]!.isConstant);
-    const step = (isConstant ? this.fold(operation, a, b, c) : undefined) ?? this.push(operation, args, key, isConstant);
+    const step =
+      (isConstant ? this.fold(operation, a, b, c) : undefined) ??
+      this.push(operation, args, key, isConstant);
     if (operation.isTruth) this.truths.add(step);
     return step;
   }
@@ -322,7 +421,8 @@ class Compiler {
   private fold(operation: Operation, a: number, b: number, c: number): number | undefined {
     const [u, v, w] = [this.steps[a]!, this.steps[b]!, this.steps[c]!];
     if (!u.enclosure || !v.enclosure || !w.enclosure || operation.isTruth) return undefined;
-    if (operation.defined && operation.defined(u.enclosure, v.enclosure) !== Defined.Everywhere) return undefined;
+    if (operation.defined && operation.defined(u.enclosure, v.enclosure) !== Defined.Everywhere)
+      return undefined;
     const out = I.interval();
     operation.enclose(out, u.enclosure, v.enclosure, w.enclosure);
     if (!Number.isFinite(out.lo) || !Number.isFinite(out.hi)) return undefined;
@@ -354,7 +454,10 @@ function callsItself(name: string, tree: Tree): boolean {
       case 'name':
         return nameKey(part.name) === key;
       case 'call':
-        return (typeof part.callee === 'string' ? nameKey(part.callee) === key : within(part.callee)) || part.args.some(within);
+        return (
+          (typeof part.callee === 'string' ? nameKey(part.callee) === key : within(part.callee)) ||
+          part.args.some(within)
+        );
       case 'operator':
         return part.args.some(within);
       case 'array':
@@ -381,7 +484,8 @@ function prune(steps: readonly Step[], root: number, variables: readonly number[
   isNeeded[root] = 1;
   for (let i = root; i >= 0; i--) {
     const step = steps[i]!;
-    if (isNeeded[i] && step.nOperands > 0) isNeeded[step.a] = isNeeded[step.b] = isNeeded[step.c] = 1;
+    if (isNeeded[i] && step.nOperands > 0)
+      isNeeded[step.a] = isNeeded[step.b] = isNeeded[step.c] = 1;
   }
   const moved = new Int32Array(steps.length).fill(-1);
   const kept: Step[] = [];

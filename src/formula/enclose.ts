@@ -83,7 +83,12 @@ export class Encloser {
   private readonly variable: number;
   private readonly shift = I.interval();
   private readonly atPoint: PointValues;
-  private readonly result: Enclosure = { density: J.jet(), logarithm: I.interval(), defined: Defined.Everywhere, turn: -1 };
+  private readonly result: Enclosure = {
+    density: J.jet(),
+    logarithm: I.interval(),
+    defined: Defined.Everywhere,
+    turn: -1,
+  };
 
   /** `exponent`: the density is taken × 2^-exponent. */
   constructor(
@@ -116,7 +121,9 @@ export class Encloser {
   pointValues(): PointValues {
     return {
       x: NaN,
-      values: this.tape.steps.map(({ enclosure }) => (enclosure ? I.interval(enclosure.lo, enclosure.hi) : I.interval())),
+      values: this.tape.steps.map(({ enclosure }) =>
+        enclosure ? I.interval(enclosure.lo, enclosure.hi) : I.interval(),
+      ),
       defined: new Uint8Array(this.tape.steps.length),
       density: I.interval(),
     };
@@ -130,7 +137,15 @@ export class Encloser {
     for (const { operation, a, b, c, place } of this.active) {
       const u = values[a]!;
       const v = values[b]!;
-      const state = definedState(operation, u, v, values[c]!, defined[a]!, defined[b]!, defined[c]!);
+      const state = definedState(
+        operation,
+        u,
+        v,
+        values[c]!,
+        defined[a]!,
+        defined[b]!,
+        defined[c]!,
+      );
       defined[place] = state;
       if (state === Defined.Nowhere) I.setEntire(values[place]!);
       else operation.enclose(values[place]!, u, v, values[c]!);
@@ -197,7 +212,13 @@ export class Encloser {
     return this.finish(mayTurn);
   }
 
-  private logOf(place: number, structural: Step['operation']['logarithm'], p: number, q: number, r: number): void {
+  private logOf(
+    place: number,
+    structural: Step['operation']['logarithm'],
+    p: number,
+    q: number,
+    r: number,
+  ): void {
     const { jets, logs } = this;
     const log = logs[place];
     if (!log) return;
@@ -207,7 +228,11 @@ export class Encloser {
       return;
     }
     const fallback = log;
-    structural!(log, [logs[p] ?? fallback, logs[q] ?? fallback, logs[r] ?? fallback], [jets[p]!, jets[q]!, jets[r]!]);
+    structural!(
+      log,
+      [logs[p] ?? fallback, logs[q] ?? fallback, logs[r] ?? fallback],
+      [jets[p]!, jets[q]!, jets[r]!],
+    );
     if (out.v.lo >= 0 && structural !== EXP.logarithm) meetExponential(out, log);
   }
 
@@ -267,7 +292,10 @@ export class Encloser {
     let place = this.tape.root;
     for (;;) {
       const { operation, a, b, c, nOperands } = this.tape.steps[place]!;
-      const bad = nOperands > 0 ? [a, b, c].find((operand) => this.defined[operand] !== Defined.Everywhere) : undefined;
+      const bad =
+        nOperands > 0
+          ? [a, b, c].find((operand) => this.defined[operand] !== Defined.Everywhere)
+          : undefined;
       if (bad === undefined) return operation.outside ?? 'a value is undefined';
       place = bad;
     }
@@ -280,24 +308,26 @@ function definedState(
   u: Interval,
   v: Interval,
   w: Interval,
-  ofA: number,
-  ofB: number,
-  ofC: number,
+  ofA: Defined,
+  ofB: Defined,
+  ofC: Defined,
 ): Defined {
-  let state: number;
+  let state: Defined;
   if (operation === CHOOSE_BY) {
-    const ofBranches =
-      w.lo === 1 ? ofA : w.hi === 0 ? ofB : ofA === ofB ? ofA : Defined.InPart;
+    const ofBranches = w.lo === 1 ? ofA : w.hi === 0 ? ofB : ofA === ofB ? ofA : Defined.InPart;
     state = Math.max(ofC, ofBranches);
   } else state = Math.max(ofA, ofB, ofC);
-  if (operation.defined && state !== Defined.Nowhere) state = Math.max(state, operation.defined(u, v));
+  if (operation.defined && state !== Defined.Nowhere) {
+    state = Math.max(state, operation.defined(u, v));
+  }
   return state;
 }
 
 function tightenMonotone(out: Jet, place: number, atA: PointValues, atB: PointValues): void {
   const { lo, hi } = out.d;
   if (lo < 0 && hi > 0) return;
-  if (atA.defined[place] !== Defined.Everywhere || atB.defined[place] !== Defined.Everywhere) return;
+  if (atA.defined[place] !== Defined.Everywhere || atB.defined[place] !== Defined.Everywhere)
+    return;
   const first = atA.values[place]!;
   const last = atB.values[place]!;
   if (lo >= 0) I.set(term, first.lo, last.hi);

@@ -32,7 +32,8 @@ function parseText(text: string, where: string): Expression {
     const tokens = tokenize(text, { withLocation: true });
     for (const token of tokens) {
       // The library takes a lone c or r for a piece of a row-and-column reference.
-      if (token.type === 'unknown' && /^[A-Za-z_]\w*$/.test(token.value)) token.type = 'range_named';
+      if (token.type === 'unknown' && /^[A-Za-z_]\w*$/.test(token.value))
+        token.type = 'range_named';
     }
     return parseTokens(tokens);
   } catch (error) {
@@ -71,7 +72,11 @@ class Reader {
       case 'Identifier':
         return { kind: 'name', name: node.name, isCell: false, at };
       case 'ArrayExpression':
-        return { kind: 'array', rows: node.elements.map((row) => row.map((element) => this.read(element))), at };
+        return {
+          kind: 'array',
+          rows: node.elements.map((row) => row.map((element) => this.read(element))),
+          at,
+        };
       case 'UnaryExpression':
       case 'BinaryExpression':
         return this.operator(node, at);
@@ -80,12 +85,19 @@ class Reader {
         return {
           kind: 'call',
           callee: callee.type === 'Identifier' ? callee.name : this.read(callee),
-          args: node.arguments.map((argument: Expression | null) => argument && this.read(argument)),
+          args: node.arguments.map(
+            (argument: Expression | null) => argument && this.read(argument),
+          ),
           at,
         };
       }
       case 'LambdaExpression':
-        return { kind: 'lambda', params: node.params.map((p) => p.name), body: this.read(node.body!), at };
+        return {
+          kind: 'lambda',
+          params: node.params.map((p) => p.name),
+          body: this.read(node.body!),
+          at,
+        };
       case 'LetExpression':
         return {
           kind: 'let',
@@ -113,13 +125,22 @@ class Reader {
     const operands = node.arguments;
     if (node.operator === '^') this.refuseBareMinus(operands[0]!);
     if (node.operator === ' ' || node.operator === ':') {
-      throw this.error(span(operands[0]!)[1] + 1, 'two parts with no operator between them', 'add * or another operator');
+      throw this.error(
+        span(operands[0]!)[1] + 1,
+        'two parts with no operator between them',
+        'add * or another operator',
+      );
     }
     if (node.operator === ',') {
       const comma = this.text.indexOf(',', span(operands[0]!)[1]);
       if (isDecimalComma(this.text, comma)) throw decimalComma(this.text, comma, this.where);
     }
-    return { kind: 'operator', operator: node.operator, args: operands.map((o) => this.read(o)), at };
+    return {
+      kind: 'operator',
+      operator: node.operator,
+      args: operands.map((o) => this.read(o)),
+      at,
+    };
   }
 
   /** In a worksheet -x^2 is (-x)^2. A negative number, as in -2^2, says plainly what it is. */

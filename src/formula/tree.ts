@@ -8,10 +8,30 @@ export type Tree =
   | { readonly kind: 'text'; readonly value: string; readonly at: number }
   | { readonly kind: 'name'; readonly name: string; readonly isCell: boolean; readonly at: number }
   | { readonly kind: 'array'; readonly rows: readonly (readonly Tree[])[]; readonly at: number }
-  | { readonly kind: 'let'; readonly bindings: readonly Binding[]; readonly body: Tree; readonly at: number }
-  | { readonly kind: 'lambda'; readonly params: readonly string[]; readonly body: Tree; readonly at: number }
-  | { readonly kind: 'call'; readonly callee: Tree | string; readonly args: readonly (Tree | null)[]; readonly at: number }
-  | { readonly kind: 'operator'; readonly operator: string; readonly args: readonly Tree[]; readonly at: number };
+  | {
+      readonly kind: 'let';
+      readonly bindings: readonly Binding[];
+      readonly body: Tree;
+      readonly at: number;
+    }
+  | {
+      readonly kind: 'lambda';
+      readonly params: readonly string[];
+      readonly body: Tree;
+      readonly at: number;
+    }
+  | {
+      readonly kind: 'call';
+      readonly callee: Tree | string;
+      readonly args: readonly (Tree | null)[];
+      readonly at: number;
+    }
+  | {
+      readonly kind: 'operator';
+      readonly operator: string;
+      readonly args: readonly Tree[];
+      readonly at: number;
+    };
 
 export interface Binding {
   readonly name: string;

@@ -387,7 +387,12 @@ const SIGN: Operation = {
 };
 
 /** The lesser or the greater of a and b, told by the sign of their difference c. */
-function extreme(name: string, sign: 1 | -1, point: (a: number, b: number) => number, enclose: Operation['enclose']): Operation {
+function extreme(
+  name: string,
+  sign: 1 | -1,
+  point: (a: number, b: number) => number,
+  enclose: Operation['enclose'],
+): Operation {
   const takesFirst = (c: Interval): boolean => (sign > 0 ? c.hi <= 0 : c.lo >= 0);
   const takesSecond = (c: Interval): boolean => (sign > 0 ? c.lo >= 0 : c.hi <= 0);
   return {
@@ -486,7 +491,12 @@ function unary(name: string, operation: Operation): Row {
 
 /** A function of any number of arguments as a chain of one of two. */
 function folded(name: string, operation: Operation): Row {
-  return { name, least: 1, most: ANY, rewrite: (make, args) => args.reduce((a, b) => make.apply(operation, a, b)) };
+  return {
+    name,
+    least: 1,
+    most: ANY,
+    rewrite: (make, args) => args.reduce((a, b) => make.apply(operation, a, b)),
+  };
 }
 
 function extremeOf(name: string, operation: Operation): Row {
@@ -494,7 +504,8 @@ function extremeOf(name: string, operation: Operation): Row {
     name,
     least: 1,
     most: ANY,
-    rewrite: (make, args) => args.reduce((a, b) => make.apply(operation, a, b, make.apply(SUBTRACT, a, b))),
+    rewrite: (make, args) =>
+      args.reduce((a, b) => make.apply(operation, a, b, make.apply(SUBTRACT, a, b))),
   };
 }
 
@@ -507,7 +518,8 @@ function gate(name: string, operation: Operation): Row {
     name,
     least: 1,
     most: ANY,
-    rewrite: (make, args) => args.map((a) => truthOf(make, a)).reduce((a, b) => make.apply(operation, a, b)),
+    rewrite: (make, args) =>
+      args.map((a) => truthOf(make, a)).reduce((a, b) => make.apply(operation, a, b)),
   };
 }
 
@@ -536,7 +548,11 @@ const MAX_WHOLE_POWER = 1024;
 function raise(make: Maker, [base, power]: readonly number[]): number {
   const p = make.exactValue(power!);
   if (p === 0) {
-    if (make.exactValue(base!) === 0) throw make.refuse('0^0, on which spreadsheet programs disagree', 'write the value that is meant');
+    if (make.exactValue(base!) === 0)
+      throw make.refuse(
+        '0^0, on which spreadsheet programs disagree',
+        'write the value that is meant',
+      );
     return make.number(1);
   }
   if (p === 0.5) return make.apply(SQRT, base!);
@@ -546,7 +562,10 @@ function raise(make: Maker, [base, power]: readonly number[]): number {
   if (make.isConstant(power!)) {
     const b = make.exactValue(base!);
     if (b !== undefined && b < 0) {
-      throw make.refuse(`(${b}) to a power that is not whole, on which spreadsheet programs disagree`, 'use a base that is not negative');
+      throw make.refuse(
+        `(${b}) to a power that is not whole, on which spreadsheet programs disagree`,
+        'use a base that is not negative',
+      );
     }
     return make.apply(REAL_POWER, base!, power!);
   }
@@ -560,7 +579,12 @@ const ROWS: readonly Row[] = [
   { name: '/', least: 2, most: 2, operation: DIVIDE },
   { name: '^', least: 2, most: 2, rewrite: raise },
   { name: 'negative', least: 1, most: 1, operation: NEGATE },
-  { name: '%', least: 1, most: 1, rewrite: (make, [x]) => make.apply(DIVIDE, x!, make.number(100)) },
+  {
+    name: '%',
+    least: 1,
+    most: 1,
+    rewrite: (make, [x]) => make.apply(DIVIDE, x!, make.number(100)),
+  },
   comparison('<', POSITIVE, true),
   comparison('>', POSITIVE, false),
   comparison('<=', NOT_NEGATIVE, true),
@@ -578,7 +602,8 @@ const ROWS: readonly Row[] = [
     name: 'AVERAGE',
     least: 1,
     most: ANY,
-    rewrite: (make, args) => make.apply(DIVIDE, make.call('SUM', ...args), make.number(args.length)),
+    rewrite: (make, args) =>
+      make.apply(DIVIDE, make.call('SUM', ...args), make.number(args.length)),
   },
   unary('SQRT', SQRT),
   unary('EXP', EXP),

@@ -98,7 +98,11 @@ function isInfinite(x: number): boolean {
 export function looseSumUp(a: number, b: number): number {
   const s = a + b;
   if (s === 0) return 0;
-  return s > -Infinity ? s + (Math.abs(s) * HALF_ULP + SMALLEST) : s === s ? -Number.MAX_VALUE : Infinity;
+  return s > -Infinity
+    ? s + (Math.abs(s) * HALF_ULP + SMALLEST)
+    : s === s
+      ? -Number.MAX_VALUE
+      : Infinity;
 }
 
 /** A lower bound of a + b, cheaper than addDown: only 0 is kept exact. */

@@ -249,7 +249,13 @@ export function exponential(out: Interval, a: Interval): void {
 /** ln of the part of a that is > 0; the caller has seen to a.hi > 0. */
 export function logarithm(out: Interval, a: Interval): void {
   const lo =
-    a.lo <= 0 ? -Infinity : a.lo === 1 ? 0 : a.lo === Infinity ? Number.MAX_VALUE : below(elementary.ln(a.lo));
+    a.lo <= 0
+      ? -Infinity
+      : a.lo === 1
+        ? 0
+        : a.lo === Infinity
+          ? Number.MAX_VALUE
+          : below(elementary.ln(a.lo));
   const hi = a.hi === 1 ? 0 : a.hi === Infinity ? Infinity : above(elementary.ln(a.hi));
   set(out, Math.min(lo, 710), hi);
 }
@@ -295,7 +301,11 @@ function wave(out: Interval, a: Interval, f: (x: number) => number, top: number)
   const most = Math.max(p, q);
   // Sine and cosine of a double round to 0 only at 0, where they are exact.
   const hi = mayHoldPhase(a, top, 2 * PI_LO) ? 1 : most === 0 ? 0 : Math.min(1, above(most));
-  const lo = mayHoldPhase(a, top + PI_LO, 2 * PI_LO) ? -1 : least === 0 ? 0 : Math.max(-1, below(least));
+  const lo = mayHoldPhase(a, top + PI_LO, 2 * PI_LO)
+    ? -1
+    : least === 0
+      ? 0
+      : Math.max(-1, below(least));
   set(out, lo, hi);
 }
 

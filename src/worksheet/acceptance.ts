@@ -35,7 +35,10 @@ export function acceptance(
   return tables[0]!.map(([item], i) => [item, ...tables.map((lines) => lines[i]![1])]);
 }
 
-function diagnose(request: ColumnRequest, { seed, firstRow, nRows, notes }: DrawRequest): readonly Line[] {
+function diagnose(
+  request: ColumnRequest,
+  { seed, firstRow, nRows, notes }: DrawRequest,
+): readonly Line[] {
   const proved = prove(request.shape);
   const column = drawColumn(proved, request.key, firstRow, nRows);
   const allNotes = [...notes, ...proved.envelope.notes];
@@ -62,10 +65,16 @@ function asRead(shape: Shape): readonly Line[] {
   ];
   if (shape.kind === 'table') {
     const name = shape.heading === '' ? '' : ` "${shape.heading}"`;
-    return [['density', `table of points${name}, ${shape.polyline.x.length} ends of straight lines`], ...ends('x')];
+    return [
+      ['density', `table of points${name}, ${shape.polyline.x.length} ends of straight lines`],
+      ...ends('x'),
+    ];
   }
   const { sources, variable, constants } = shape;
-  const lines = sources.map(({ text }, i): Line => [i === 0 ? 'density' : `density, times`, withoutSign(text)]);
+  const lines = sources.map(({ text }, i): Line => [
+    i === 0 ? 'density' : `density, times`,
+    withoutSign(text),
+  ]);
   const named = [...constants].map(([name, value]): Line => [`given ${name}`, value]);
   return [...lines, ...ends(variable), ...named];
 }

@@ -19,6 +19,8 @@ export function draw(
   givens: readonly Range[],
 ): Range {
   const { columns, firstRow, nRows } = readDrawRequest(density, limits, rows, seed, label, givens);
-  const drawn = columns.map(({ shape, key }) => drawColumn(prove(shape), key, firstRow, nRows).values);
+  const drawn = columns.map(
+    ({ shape, key }) => drawColumn(prove(shape), key, firstRow, nRows).values,
+  );
   return Array.from({ length: nRows }, (_, i) => drawn.map((values) => values[i]!));
 }

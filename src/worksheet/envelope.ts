@@ -7,7 +7,16 @@ import type { Piece } from '../envelope/piece';
 import { InputError } from '../errors';
 import { prove } from './proved';
 
-const HEADINGS = ['from', 'to', 'upper left', 'upper right', 'lower left', 'lower right', 'share of proposals', 'acceptance'];
+const HEADINGS = [
+  'from',
+  'to',
+  'upper left',
+  'upper right',
+  'lower left',
+  'lower right',
+  'share of proposals',
+  'acceptance',
+];
 const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)', givens: 3 };
 
 /**
@@ -16,15 +25,29 @@ const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)',
  * Shapes: a heading row, then pieces × 8. Units: x as in the density; heights × 2^-exponent (ACCEPTANCE tells it).
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
  */
-export function envelope(density: Range | null, limits: Range | null, givens: readonly Range[]): Range {
+export function envelope(
+  density: Range | null,
+  limits: Range | null,
+  givens: readonly Range[],
+): Range {
   const proved = prove(onlyShape(density, limits, givens, PLACES)).envelope;
   return [HEADINGS, ...proved.pieces.map((piece) => pieceRow(piece, proved))];
 }
 
 function pieceRow(piece: Piece, { upperArea, densityAt }: Envelope): readonly number[] {
   const { from, to, upperLeft, upperRight, lowerLeft, lowerRight } = piece;
-  const acceptance = densityAt === null || piece.upperArea === 0 ? 1 : piece.lowerArea / piece.upperArea;
-  return [from, to, upperLeft, upperRight, lowerLeft, lowerRight, piece.upperArea / upperArea, acceptance];
+  const acceptance =
+    densityAt === null || piece.upperArea === 0 ? 1 : piece.lowerArea / piece.upperArea;
+  return [
+    from,
+    to,
+    upperLeft,
+    upperRight,
+    lowerLeft,
+    lowerRight,
+    piece.upperArea / upperArea,
+    acceptance,
+  ];
 }
 
 /** The shape of a function that shows one. @throws {InputError} for a table with several columns of heights. */
@@ -36,7 +59,11 @@ export function onlyShape(
 ): Shape {
   const { shapes } = readShapes(density, limits, givens, places);
   if (shapes.length > 1) {
-    throw new InputError(places.density, `${shapes.length} columns of heights`, 'give x and one column of heights');
+    throw new InputError(
+      places.density,
+      `${shapes.length} columns of heights`,
+      'give x and one column of heights',
+    );
   }
   return shapes[0]!;
 }

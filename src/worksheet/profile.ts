@@ -18,7 +18,12 @@ const MAX_COUNT = 100_000;
  * Guarantee: none for the density's last digits (it is for looking at); the lines are the proved ones.
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
  */
-export function profile(density: Range | null, limits: Range | null, count: Range | null, givens: readonly Range[]): Range {
+export function profile(
+  density: Range | null,
+  limits: Range | null,
+  count: Range | null,
+  givens: readonly Range[],
+): Range {
   const { envelope, area } = prove(onlyShape(density, limits, givens, PLACES));
   const n = readCount(given(count));
   const { from, to } = envelope;
@@ -35,7 +40,11 @@ function readCount(range: Range | null): number {
   passErrors(range);
   const n = numberIn(singleCell(range, COUNT), COUNT);
   if (Math.floor(n) === n && n >= 2 && n <= MAX_COUNT) return n;
-  throw new InputError(COUNT, `${n} is not a whole number from 2 to ${MAX_COUNT}`, 'give how many points the chart needs, such as 201');
+  throw new InputError(
+    COUNT,
+    `${n} is not a whole number from 2 to ${MAX_COUNT}`,
+    'give how many points the chart needs, such as 201',
+  );
 }
 
 /** The density's height; where a single point is undefined (0^0 at an end), that of its neighbour. */

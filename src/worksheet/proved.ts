@@ -34,9 +34,15 @@ interface Entry {
   readonly bytes: number;
 }
 
-const cache = new LRUCache<string, Entry>({ maxSize: MAX_BYTES, sizeCalculation: ({ bytes }) => bytes });
+const cache = new LRUCache<string, Entry>({
+  maxSize: MAX_BYTES,
+  sizeCalculation: ({ bytes }) => bytes,
+});
 
-function remember<T extends Proved | Column>(key: string, make: () => { value: T; bytes: number }): T {
+function remember<T extends Proved | Column>(
+  key: string,
+  make: () => { value: T; bytes: number },
+): T {
   const known = cache.get(key);
   if (known) return known.value as T;
   const made = make();
@@ -55,7 +61,12 @@ export function prove(shape: Shape): Proved {
 }
 
 /** The column of a proved shape under a key. */
-export function drawColumn({ key, drawer }: Proved, randomKey: Key, first: number, n: number): Column {
+export function drawColumn(
+  { key, drawer }: Proved,
+  randomKey: Key,
+  first: number,
+  n: number,
+): Column {
   return remember(`${randomKey.join()} ${first} ${n} ${key}`, () => {
     const value = drawer.column(randomKey, first, n);
     return { value, bytes: value.values.byteLength };
@@ -72,5 +83,11 @@ function envelopeOf(shape: Shape): { envelope: Envelope; nSteps: number } {
 function canonical(shape: Shape): string {
   if (shape.kind === 'table') return JSON.stringify([shape.polyline.x, shape.polyline.heights]);
   const { sources, variable, limits, constants } = shape;
-  return JSON.stringify([sources.map(({ text, where }) => [text, where]), variable, limits.from, limits.to, [...constants]]);
+  return JSON.stringify([
+    sources.map(({ text, where }) => [text, where]),
+    variable,
+    limits.from,
+    limits.to,
+    [...constants],
+  ]);
 }

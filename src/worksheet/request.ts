@@ -48,12 +48,17 @@ export function readDrawRequest(
 ): DrawRequest {
   const shapes = readShapes(density, limits, givens, DRAW_PLACES);
   const { firstRow, nRows } = readRows(argumentOr(rows, shapes, 'rows'), DRAW_PLACES.rows);
-  const seedCell = keyPart(singleCell(argumentOr(seed, shapes, 'seed') ?? [[null]], DRAW_PLACES.seed), DRAW_PLACES.seed);
+  const seedCell = keyPart(
+    singleCell(argumentOr(seed, shapes, 'seed') ?? [[null]], DRAW_PLACES.seed),
+    DRAW_PLACES.seed,
+  );
   const labels = readLabels(argumentOr(label, shapes, 'label'));
   const columns = assignLabels(shapes.shapes, labels).map(({ shape, label: part }) => ({
     shape,
     label: String(part).trim(),
-    key: placed(DRAW_PLACES.label, 'label', () => placed(DRAW_PLACES.seed, 'seed', () => keyOf(seedCell, part))),
+    key: placed(DRAW_PLACES.label, 'label', () =>
+      placed(DRAW_PLACES.seed, 'seed', () => keyOf(seedCell, part)),
+    ),
   }));
   refuseEqualLabels(columns);
   return { columns, seed: String(seedCell).trim(), firstRow, nRows, notes: shapes.notes };
@@ -77,7 +82,11 @@ function readRows(range: Range | null, where: string): { firstRow: number; nRows
   if (cells.length === 1) return { firstRow: 1, nRows: cells[0]! };
   const [first, last] = cells;
   if (cells.length !== 2 || !(first! <= last!)) {
-    throw new InputError(where, `${cells.join(', ')}`, 'give one number of rows, or the first and the last row');
+    throw new InputError(
+      where,
+      `${cells.join(', ')}`,
+      'give one number of rows, or the first and the last row',
+    );
   }
   return { firstRow: first!, nRows: last! - first! + 1 };
 }
@@ -94,7 +103,8 @@ function wholeRow(cell: Cell, where: string, expected: string): number {
 
 function keyPart(cell: Cell, where: string): KeyPart {
   if (cell === null) return '';
-  if (typeof cell === 'object') throw new InputError(where, quoted(cell), 'give a text or a number');
+  if (typeof cell === 'object')
+    throw new InputError(where, quoted(cell), 'give a text or a number');
   return cell;
 }
 
@@ -107,7 +117,10 @@ function readLabels(range: Range | null): readonly KeyPart[] {
  * One column per label for one shape; one per column of heights otherwise, named by
  * its heading with the label before it.
  */
-function assignLabels(shapes: readonly Shape[], labels: readonly KeyPart[]): readonly { shape: Shape; label: KeyPart }[] {
+function assignLabels(
+  shapes: readonly Shape[],
+  labels: readonly KeyPart[],
+): readonly { shape: Shape; label: KeyPart }[] {
   if (shapes.length === 1) {
     const shape = shapes[0]!;
     const own = shape.kind === 'table' ? shape.heading : '';
@@ -123,7 +136,11 @@ function assignLabels(shapes: readonly Shape[], labels: readonly KeyPart[]): rea
   return shapes.map((shape, i) => {
     const heading = shape.kind === 'table' ? shape.heading : '';
     if (isBlank(heading)) {
-      throw new InputError(DRAW_PLACES.density, `column ${i + 2} has no heading`, 'give every column of heights a heading; it is the label of its draws');
+      throw new InputError(
+        DRAW_PLACES.density,
+        `column ${i + 2} has no heading`,
+        'give every column of heights a heading; it is the label of its draws',
+      );
     }
     return { shape, label: labels.length === 0 ? heading : `${String(labels[0])} ${heading}` };
   });
@@ -134,7 +151,11 @@ function refuseEqualLabels(columns: readonly ColumnRequest[]): void {
   for (const { label } of columns) {
     const text = keyText(label, 'label');
     if (seen.has(text)) {
-      throw new InputError(DRAW_PLACES.label, `"${label}" stands twice`, 'give each column its own label; equal labels draw equal numbers');
+      throw new InputError(
+        DRAW_PLACES.label,
+        `"${label}" stands twice`,
+        'give each column its own label; equal labels draw equal numbers',
+      );
     }
     seen.add(text);
   }
@@ -145,7 +166,8 @@ function placed<T>(where: string, what: string, read: () => T): T {
   try {
     return read();
   } catch (error) {
-    if (error instanceof InputError && error.where === what) throw new InputError(where, error.found, error.expected);
+    if (error instanceof InputError && error.where === what)
+      throw new InputError(where, error.found, error.expected);
     throw error;
   }
 }
