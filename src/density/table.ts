@@ -4,7 +4,7 @@
  */
 import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
-import { isBlank, isBlankOrZero, isText, numberIn, quoted } from './cells';
+import { isBlankOrZero, isText, numberIn, quoted } from './cells';
 import type { Limits } from './limits';
 
 export interface HeightColumn {

@@ -10,7 +10,7 @@
  */
 import FlatQueue from 'flatqueue';
 import { InputError } from '../errors';
-import type { Enclosure, PointValues } from '../formula/enclose';
+import type { Enclosure, PointValues, Turn } from '../formula/enclose';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
@@ -45,8 +45,7 @@ const WHERE = 'Density';
 interface Part {
   readonly piece: Piece;
   readonly defined: Defined;
-  /** A step that turns inside, see Enclosure. */
-  readonly turn: number;
+  readonly turn: Turn | null;
   /** Why the density is undefined here. */
   readonly reason: string;
 }
@@ -209,7 +208,7 @@ class Prover {
 
   private split(part: Part): void {
     const { from, to } = part.piece;
-    if (part.turn >= 0) {
+    if (part.turn) {
       const crossing = findCrossing(this.encloser, part.turn, from, to, this.atMiddle);
       if (crossing && (crossing.lo > from || crossing.hi < to)) {
         this.cut([from, Math.max(from, crossing.lo), Math.min(to, crossing.hi), to]);
@@ -414,7 +413,7 @@ class Prover {
 /** True for a part whose ends may move: nothing turns inside and its gap is not nil. */
 function canMove(part: Part): boolean {
   return (
-    part.turn < 0 &&
+    part.turn === null &&
     part.defined === Defined.Everywhere &&
     part.piece.upperArea > part.piece.lowerArea &&
     part.piece.upperArea < Infinity

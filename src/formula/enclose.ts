@@ -12,7 +12,7 @@ import * as I from '../numeric/interval';
 import type { Jet } from '../numeric/jet';
 import * as J from '../numeric/jet';
 import { powerOfTwo } from '../numeric/float';
-import { Defined } from './operation';
+import { Defined, turningLevel } from './operation';
 import type { Step, Tape } from './tape';
 import { CHOOSE_BY, EXP } from './vocabulary';
 
@@ -30,14 +30,20 @@ export interface PointValues {
   readonly density: Interval;
 }
 
+/** A step of the tape that brings a kink, a jump or a domain's end where it passes a level. */
+export interface Turn {
+  readonly step: number;
+  readonly level: number;
+}
+
 /** What is known of the scaled density over an interval. */
 export interface Enclosure {
   readonly density: Jet;
   /** ln of the unscaled density. */
   readonly logarithm: Interval;
   defined: Defined;
-  /** A step that changes sign once inside and brings a kink, a jump or a domain's end there; −1: none. */
-  turn: number;
+  /** A step that passes its level once inside; null: none is known. */
+  turn: Turn | null;
 }
 
 const scratch = I.interval();
@@ -87,7 +93,7 @@ export class Encloser {
     density: J.jet(),
     logarithm: I.interval(),
     defined: Defined.Everywhere,
-    turn: -1,
+    turn: null,
   };
 
   /** `exponent`: the density is taken × 2^-exponent. */
@@ -202,9 +208,9 @@ export class Encloser {
         if (state === Defined.Everywhere) operation.slopes(out, u, v, w);
         else J.setJump(out);
       }
-      if (operation.turnsOn !== undefined) {
+      if (operation.turnsOn !== undefined && !mayTurn) {
         const turning = jets[operation.turnsOn === 0 ? p : operation.turnsOn === 1 ? q : r]!.v;
-        if (turning.lo < 0 && turning.hi > 0) mayTurn = true;
+        mayTurn = turningLevel(operation, turning) === turningLevel(operation, turning);
       }
       this.logOf(place, operation.logarithm, p, q, r);
       if (atA && atB && state === Defined.Everywhere) tightenMonotone(out, place, atA, atB);
@@ -244,7 +250,7 @@ export class Encloser {
     if (this.exponent === 0) J.copyJet(result.density, this.jets[root]!);
     else this.scaleRoot(result.density, this.jets[root]!, log);
     I.copy(result.logarithm, log.v);
-    result.turn = mayTurn ? this.findTurn() : -1;
+    result.turn = mayTurn ? this.findTurn() : null;
     return result;
   }
 
@@ -264,12 +270,12 @@ export class Encloser {
     }
   }
 
-  /** The first turning step that counts and passes through 0 once, steadily. */
-  private findTurn(): number {
+  /** The first turning step that counts and passes its level once, steadily. */
+  private findTurn(): Turn | null {
+    let found: Turn | null = null;
     const { jets } = this;
     const isRelevant = new Uint8Array(jets.length);
     isRelevant[this.tape.root] = 1;
-    let found = -1;
     for (let i = this.active.length - 1; i >= 0; i--) {
       const { operation, a, b, c, place } = this.active[i]!;
       if (!isRelevant[place]) continue;
@@ -282,7 +288,10 @@ export class Encloser {
       if (operation.turnsOn === undefined) continue;
       const turning = operation.turnsOn === 0 ? a : operation.turnsOn === 1 ? b : c;
       const { v, d } = jets[turning]!;
-      if (v.lo < 0 && v.hi > 0 && (d.lo > 0 || d.hi < 0)) found = turning;
+      const level = turningLevel(operation, v);
+      if (level === level && (d.lo > 0 || d.hi < 0)) {
+        found = { step: turning, level };
+      }
     }
     return found;
   }

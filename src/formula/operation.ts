@@ -28,8 +28,10 @@ export interface Operation {
   readonly logarithm?: (out: Jet, logs: Operands, values: Operands) => void;
   /** How much of the operands lies in the domain; absent: everywhere. */
   readonly defined?: (a: Interval, b: Interval) => Defined;
-  /** The operand whose change of sign brings a kink, a jump or the end of the domain. */
+  /** The operand whose passage through 0 (or through a level) brings a kink, a jump or the end of the domain. */
   readonly turnsOn?: 0 | 1 | 2;
+  /** A level inside the operand's enclosure at which it turns, NaN for none; absent: 0 if it lies inside. */
+  readonly level?: (u: Interval) => number;
   /** Completes "…, where {outside}" in messages about undefined stretches. */
   readonly outside?: string;
   /** True for results that are TRUE or FALSE (1 or 0). */
@@ -54,6 +56,7 @@ interface Smooth {
   readonly logarithm?: Operation['logarithm'];
   readonly defined?: Operation['defined'];
   readonly turnsOn?: 0;
+  readonly level?: Operation['level'];
   readonly outside?: string;
 }
 
@@ -89,4 +92,10 @@ export function truth(row: Pick<Operation, 'name' | 'point' | 'enclose' | 'turns
 /** Encloses a truth that is settled one way, the other, or not at all. */
 export function setTruth(out: Interval, surely: boolean, surelyNot: boolean): void {
   I.set(out, surely ? 1 : 0, surelyNot ? 0 : 1);
+}
+
+/** The level at which an operation turns inside the enclosure u of its turning operand; NaN for none. */
+export function turningLevel(operation: Operation, u: Interval): number {
+  const level = operation.level ? operation.level(u) : 0;
+  return u.lo < level && u.hi > level ? level : NaN;
 }
