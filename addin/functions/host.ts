@@ -28,6 +28,7 @@ export function answer(
     refuseTooManyCells(result);
     return result.map((row) => row.map(cellToHost));
   } catch (failure) {
+    // eslint-disable-next-line @typescript-eslint/only-throw-error -- the host's own kind of error
     throw errorToHost(failure);
   }
 }
