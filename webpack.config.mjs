@@ -41,7 +41,7 @@ const forBrowser = { target: ['web', 'es2022'] };
 /** Node programs; the suffix keeps them CommonJS whatever package.json says. */
 const forNode = (folder) => ({
   target: 'node20',
-  output: { path: at(`.build/${folder}`), filename: '[name].cjs' },
+  output: { path: at(`.build/${folder}`), filename: '[name].cjs', clean: true },
 });
 
 /** The pane's page, with office.js from an address that its policy then allows. */
