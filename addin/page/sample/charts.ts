@@ -1,0 +1,95 @@
+/**
+ * The kinds of chart in the sample workbook, as the grid library defines them.
+ * Lines are told apart by dashes as well as colours (../charts.ts adds the dashes by name).
+ */
+import { BLUE, GREEN, RED } from './looks';
+import { binRange, profileRange, type Quantity } from './quantities';
+
+type Definition = Readonly<Record<string, unknown>>;
+type Series = readonly [label: string, range: string, color: string];
+
+/** Density, upper and lower bound of a quantity's profile. */
+export function boundsChart({ title, unit, evidence }: Quantity): Definition {
+  const [x, density, upper, lower] = evidence.profile;
+  return {
+    ...lines(`${title}: the bounds`, unit, 'density', profileRange(x), [
+      ['density', profileRange(density), GREEN],
+      ['upper', profileRange(upper), RED],
+      ['lower', profileRange(lower), BLUE],
+    ]),
+    legendPosition: 'bottom',
+  };
+}
+
+/** The density of a quantity's profile alone. */
+export function densityChart({ title, unit, evidence }: Quantity): Definition {
+  const [x, density] = evidence.profile;
+  return lines(`${title}, as stated`, unit, 'density', profileRange(x), [
+    ['density', profileRange(density), GREEN],
+  ]);
+}
+
+/** A quantity's table of points, headings in its first row, as a line with its points. */
+export function pointsChart({ title, unit }: Quantity, x: string, heights: string): Definition {
+  return {
+    ...lines(`${title}, as stated`, unit, 'height', x, [['height', heights, GREEN]]),
+    hideDataMarkers: false,
+  };
+}
+
+/** The counted draws of a quantity, labelled by where each bin starts. */
+export function countsChart(quantity: Quantity): Definition {
+  const { title, unit, evidence, color } = quantity;
+  const [above, , count] = evidence.counts;
+  const series: Series[] = [['draws', binRange(count, quantity), color]];
+  return {
+    type: 'bar',
+    stacked: false,
+    ...common(`${title}: the draws`, `${unit}, bins from`, 'draws'),
+    ...dataOf(binRange(above, quantity), series, false),
+  };
+}
+
+function lines(
+  title: string,
+  x: string,
+  y: string,
+  xRange: string,
+  series: readonly Series[],
+): Definition {
+  return {
+    type: 'line',
+    labelsAsText: false,
+    stacked: false,
+    cumulative: false,
+    hideDataMarkers: true,
+    ...common(title, x, y),
+    ...dataOf(xRange, series, true),
+  };
+}
+
+function common(title: string, x: string, y: string): Definition {
+  return {
+    title: { text: title, bold: true, fontSize: 14, color: GREEN },
+    background: '#ffffff',
+    legendPosition: 'none',
+    axesDesign: {
+      x: { title: { text: x, fontSize: 11 } },
+      y: { title: { text: y, fontSize: 11 } },
+    },
+  };
+}
+
+function dataOf(labelRange: string, series: readonly Series[], headed: boolean): Definition {
+  return {
+    dataSource: {
+      type: 'range',
+      dataSets: series.map(([label, dataRange]) => ({ dataSetId: label, dataRange })),
+      dataSetsHaveTitle: headed,
+      labelRange,
+    },
+    dataSetStyles: Object.fromEntries(
+      series.map(([label, , color]) => [label, { label, backgroundColor: color }]),
+    ),
+  };
+}
