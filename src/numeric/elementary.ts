@@ -24,7 +24,11 @@ export const atan: (x: number) => number = atanOf;
 export const tanh: (x: number) => number = tanhOf;
 export const pow: (x: number, y: number) => number = powOf;
 
-/** Proven-by-documentation or twice-measured error bound of all of the above, in units in the last place. */
-export const ERROR_ULPS = 2;
+/** Error bound of all of the above, in units in the last place; of `pow` up to the power below. */
+export const ERROR_ULPS = 4;
+/** Beyond this power `pow` takes its logarithm from a product that is rounded once. */
+export const LARGE_POWER = 2147483648;
+/** Error bound of `pow` there: 2^-53 of an exponent of at most 1075 binary digits is 745 ulps, doubled and more. */
+export const LARGE_POWER_ERROR_ULPS = 2048;
 /** Beyond this size of argument the waves are not trusted: their enclosure is [−1, 1]. */
 export const WAVE_LIMIT = 1e15;

@@ -226,18 +226,19 @@ export function power(out: Interval, a: Interval, n: number): void {
 
 /** Room for ERROR_ULPS and for the rounding of the step itself; absolute among subnormals. */
 const STEP = (elementary.ERROR_ULPS + 1) * 2.220446049250313e-16;
+const LARGE_POWER_STEP = (elementary.LARGE_POWER_ERROR_ULPS + 1) * 2.220446049250313e-16;
 const STEP_AT_0 = 1e-323;
 
 /** A lower bound of the value that an elementary function rounded to y; these are 0 only where they are exact. */
-function below(y: number): number {
+function below(y: number, step = STEP): number {
   if (y === Infinity) return Number.MAX_VALUE;
-  return y - (Math.abs(y) * STEP + STEP_AT_0);
+  return y - (Math.abs(y) * step + STEP_AT_0);
 }
 
 /** An upper bound of the value that an elementary function rounded to y. */
-function above(y: number): number {
+function above(y: number, step = STEP): number {
   if (y === -Infinity) return -Number.MAX_VALUE;
-  return y + (Math.abs(y) * STEP + STEP_AT_0);
+  return y + (Math.abs(y) * step + STEP_AT_0);
 }
 
 export function exponential(out: Interval, a: Interval): void {
@@ -271,8 +272,9 @@ export function realPower(out: Interval, a: Interval, p: Interval): void {
     for (const q of [p.lo, p.hi]) {
       const exact = x === 1 || x === 0 || x === Infinity;
       const y = x === 1 ? 1 : x === 0 ? (q > 0 ? 0 : Infinity) : elementary.pow(x, q);
-      least = Math.min(least, exact ? y : Math.max(0, below(y)));
-      most = Math.max(most, exact ? y : above(y));
+      const step = Math.abs(q) > elementary.LARGE_POWER ? LARGE_POWER_STEP : STEP;
+      least = Math.min(least, exact ? y : Math.max(0, below(y, step)));
+      most = Math.max(most, exact ? y : above(y, step));
     }
   }
   set(out, least === Infinity ? Number.MAX_VALUE : least, most);
