@@ -31,13 +31,13 @@ const LINE_ROOM = 4e-16;
 /** The middle of a piece only a few doubles wide tells nothing. */
 const MAX_OFF = 1e-3;
 
-/** A trapezoid's area, rounded up. */
+/** A trapezoid's area, rounded up; the width is halved, since half a height may be no double. */
 function areaUp(left: number, right: number, width: number): number {
-  return mulUp(addUp(left / 2, right / 2), width);
+  return mulUp(addUp(left, right), width / 2);
 }
 
 function areaDown(left: number, right: number, width: number): number {
-  return mulDown(addDown(left / 2, right / 2), width);
+  return mulDown(addDown(left, right), width / 2);
 }
 
 /** Enclosures of the density at the ends and at the double `x` between them; entire where it is undefined. */
