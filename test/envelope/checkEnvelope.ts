@@ -1,0 +1,173 @@
+/**
+ * A checker of proved envelopes, independent of the interval code: the pieces tile the
+ * limits, and at many points the upper line is at or above and the lower line at or below
+ * the density. Doubles screen the points; 60 decimal digits decide, on exact lines. A share
+ * of the points goes to the decimals whatever the doubles say.
+ */
+import type { Decimal } from 'decimal.js';
+import type { Envelope } from '../../src/envelope/envelope';
+import type { Piece } from '../../src/envelope/piece';
+import { next, prev } from '../../src/numeric/float';
+import type { Reference } from './reference';
+import { Precise, preciseOf } from './reference';
+
+/** Pieces may leave out slivers of the limits up to this share in all: 2^-42 each, around jumps. */
+const LEFT_OUT = 1e-10;
+/** MAX(0, f) is drawn where f is below 0 by less than this share of its peak. */
+const SIGN_TOLERANCE = 1e-12;
+/** Doubles that differ less than this may do so by their own rounding. */
+const CLOSE = 1e-13;
+
+export interface Options {
+  readonly nPoints: number;
+  /** How many of these are worked in decimals in any case, and half as many as where doubles cannot tell. */
+  readonly nPrecise: number;
+  readonly random: () => number;
+}
+
+export interface Report {
+  readonly points: number;
+  /** Points decided in decimals. */
+  readonly decided: number;
+  /** Points at which the density itself is undefined or beyond what decimals reach. */
+  readonly undefinedPoints: number;
+  readonly violations: readonly string[];
+}
+
+/** Checks an envelope of the density that `reference` states. */
+export function checkEnvelope(envelope: Envelope, reference: Reference, options: Options): Report {
+  return new Checker(envelope, reference, options).check();
+}
+
+class Checker {
+  private readonly violations: string[] = [];
+  private readonly scale: Decimal;
+  private readonly down: number;
+  private readonly least: Decimal;
+  private points = 0;
+  private decided = 0;
+  private undefinedPoints = 0;
+  private unsure = 0;
+
+  constructor(
+    private readonly envelope: Envelope,
+    private readonly reference: Reference,
+    private readonly options: Options,
+  ) {
+    this.scale = new Precise(2).pow(-envelope.exponent);
+    this.down = Math.pow(2, -envelope.exponent);
+    const peak = Math.max(...envelope.pieces.map((p) => Math.max(p.upperLeft, p.upperRight)));
+    this.least = preciseOf(-SIGN_TOLERANCE * peak);
+  }
+
+  check(): Report {
+    const { pieces } = this.envelope;
+    this.checkTiling();
+    pieces.forEach((piece) => this.checkPiece(piece));
+    const { nPoints, nPrecise, random } = this.options;
+    for (const piece of pieces) {
+      this.at(piece, piece.from, false);
+      this.at(piece, piece.to, false);
+    }
+    const preciseEvery = Math.max(1, Math.floor(nPoints / nPrecise));
+    for (let i = 0; i < nPoints; i++) {
+      const piece = pieces[Math.floor(random() * pieces.length)]!;
+      this.at(piece, this.pointIn(piece), i % preciseEvery === 0);
+    }
+    const { points, decided, undefinedPoints, violations } = this;
+    return { points, decided, undefinedPoints, violations };
+  }
+
+  private fault(text: string): void {
+    if (this.violations.length < 10) this.violations.push(text);
+  }
+
+  private checkTiling(): void {
+    const { from, to, pieces } = this.envelope;
+    let reached = from;
+    let leftOut = 0;
+    for (const piece of pieces) {
+      if (piece.from < reached) this.fault(`piece at ${piece.from} begins before ${reached}`);
+      if (!(piece.to > piece.from)) this.fault(`piece ${piece.from} … ${piece.to} is empty`);
+      leftOut += piece.from - reached;
+      reached = piece.to;
+    }
+    if (reached > to) this.fault(`the last piece ends at ${reached}, after ${to}`);
+    leftOut += to - reached;
+    if (!(leftOut <= LEFT_OUT * (to - from))) this.fault(`${leftOut} of the limits is left out`);
+  }
+
+  private checkPiece(piece: Piece): void {
+    const { upperLeft, upperRight, lowerLeft, lowerRight } = piece;
+    const where = `piece ${piece.from} … ${piece.to}`;
+    const isFine = (low: number, high: number): boolean =>
+      low >= 0 && low <= high && high < Infinity;
+    if (!isFine(lowerLeft, upperLeft) || !isFine(lowerRight, upperRight))
+      this.fault(`${where}: heights ${[upperLeft, upperRight, lowerLeft, lowerRight].join(', ')}`);
+    const width = preciseOf(piece.to).minus(preciseOf(piece.from));
+    const area = (left: number, right: number): Decimal =>
+      preciseOf(left).plus(preciseOf(right)).times(width).div(2);
+    if (area(upperLeft, upperRight).gt(preciseOf(piece.upperArea)))
+      this.fault(`${where}: upper area ${piece.upperArea} is too small`);
+    if (area(lowerLeft, lowerRight).lt(preciseOf(piece.lowerArea)))
+      this.fault(`${where}: lower area ${piece.lowerArea} is too large`);
+    if (!(piece.areaLo >= piece.lowerArea && piece.areaHi <= piece.upperArea && piece.areaLo <= piece.areaHi))
+      this.fault(`${where}: areas ${[piece.lowerArea, piece.areaLo, piece.areaHi, piece.upperArea].join(', ')}`);
+  }
+
+  /** Anywhere in the piece; now and then close to an end, in doubles or on a geometric scale. */
+  private pointIn({ from, to }: Piece): number {
+    const { random } = this.options;
+    const kind = random();
+    if (kind < 0.05) return Math.min(to, next(from));
+    if (kind < 0.1) return Math.max(from, prev(to));
+    const share = kind < 0.3 ? Math.pow(2, -50 * random()) : random();
+    const x = random() < 0.5 ? from + (to - from) * share : to - (to - from) * share;
+    return Math.min(to, Math.max(from, x));
+  }
+
+  private at(piece: Piece, x: number, mustBePrecise: boolean): void {
+    this.points++;
+    const { from, to } = piece;
+    const t = (x - from) / (to - from);
+    const upper = piece.upperLeft + (piece.upperRight - piece.upperLeft) * t;
+    const lower = piece.lowerLeft + (piece.lowerRight - piece.lowerLeft) * t;
+    const height = this.reference.plain(x) * this.down;
+    const isInside = height <= upper && height >= lower;
+    if (isInside && !mustBePrecise) return;
+    // Lines touch the density at their ends, where doubles cannot tell, and doubles can
+    // overflow on the way: a quota of either is worked in decimals.
+    const isClose = height <= upper * (1 + CLOSE) && height >= lower * (1 - CLOSE);
+    const isUnsure = isClose || !Number.isFinite(height);
+    if (isInside || !isUnsure || this.unsure++ < 2 * this.options.nPrecise) this.decide(piece, x);
+    else this.points--;
+  }
+
+  private decide(piece: Piece, x: number): void {
+    this.decided++;
+    let fault = this.faultAt(piece, x, this.reference.precise(x).times(this.scale));
+    // The difference may be what 60 digits have cancelled.
+    if (fault) fault = this.faultAt(piece, x, this.reference.veryPrecise(x).times(this.scale));
+    if (fault) this.fault(fault);
+  }
+
+  private faultAt(piece: Piece, x: number, height: Decimal): string | null {
+    if (!height.isFinite()) {
+      this.undefinedPoints++;
+      return null;
+    }
+    const [from, to] = [preciseOf(piece.from), preciseOf(piece.to)];
+    const at = preciseOf(x);
+    const [before, after] = [at.minus(from), to.minus(at)];
+    const line = (left: number, right: number): Decimal =>
+      preciseOf(left).times(after).plus(preciseOf(right).times(before)).div(to.minus(from));
+    const upper = line(piece.upperLeft, piece.upperRight);
+    const lower = line(piece.lowerLeft, piece.lowerRight);
+    const where = `x = ${x} in ${piece.from} … ${piece.to}`;
+    if (height.gt(upper)) return `${where}: ${height.toString()} above ${upper.toString()}`;
+    if (height.lt(lower) && (height.gt(0) || lower.gt(0)))
+      return `${where}: ${height.toString()} below ${lower.toString()}`;
+    if (height.lt(this.least)) return `${where}: ${height.toString()} is negative`;
+    return null;
+  }
+}
