@@ -56,7 +56,7 @@ function panePage(chunks, office) {
   });
 }
 
-const icons = { from: 'addin/assets/*.png', to: 'assets/[name][ext]' };
+const icons = { from: 'addin/assets/icon-*.png', to: 'assets/[name][ext]' };
 
 async function addin() {
   const functionsJson = await checkedFunctionsJson();

@@ -76,7 +76,6 @@ const message = (page: Page) => page.getByRole('status').innerText();
 async function type(page: Page, address: string, text: string): Promise<void> {
   await page.getByLabel('Cell address').fill(address);
   await page.keyboard.press('Enter');
-  await settled(page);
   await page.keyboard.type(text);
   await page.keyboard.press('Enter');
   await settled(page);
@@ -279,6 +278,13 @@ describe('the frame', () => {
 });
 
 describe('the built page', () => {
+  test('the link Functions leads to the start page of the functions [law]', async () => {
+    const page = await opened();
+    await page.getByRole('link', { name: 'Functions' }).click();
+    await page.waitForURL(`${server.url}pane/`);
+    expect(await page.getByRole('heading').first().innerText()).toContain('Undercurve');
+  });
+
   test('the built page keeps the grid library in a bundle of its own, with its licence [law]', async () => {
     const licence = await fetch(`${server.url}licenses/o-spreadsheet.txt`);
     expect(await licence.text()).toContain('GNU LESSER GENERAL PUBLIC LICENSE');

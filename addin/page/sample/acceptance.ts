@@ -79,7 +79,7 @@ function profile(sheet: SheetPlan, { title, shape, evidence }: Quantity): void {
     .put(`${x}${head}`, `=UNDERCURVE.PROFILE(${shape},,${PROFILE_POINTS})`)
     .look(`${x}${head}:${last}${head}`, 'head')
     .format(`${x}${first}:${x}${profileLast}`, '0.0')
-    .format(`${density}${first}:${last}${profileLast}`, '0.00##');
+    .format(`${density}${first}:${last}${profileLast}`, '0.000');
 }
 
 /**

@@ -14,7 +14,7 @@ const PALETTE: Readonly<Record<string, string>> = {
   '#f3f7fe': '#f2f7f3',
   '#e9f0ff': '#e4efe7',
   // the frame of a spill
-  '#17a2b8': '#a63d2f',
+  '#17a2b8': '#5b8f75',
 };
 
 /** Makes every colour that is set on this canvas pass through the palette. */

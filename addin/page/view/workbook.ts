@@ -38,11 +38,16 @@ export class WorkbookView extends Spreadsheet {
   private readonly content = useRef('content');
   private readonly gridFrame = useRef('gridFrame');
   private readonly notes = useState({ recalculated: '', complaint: '' });
-  /** Failing formulas; undefined after an edit, until they are asked for. */
-  private problems: readonly Position[] | undefined;
+  private editor: { readonly editionMode: string } | undefined;
+  /**
+   * Failing formulas; none kept after an edit, until they are asked for. In an object
+   * because the template runs getters on a derived copy of this component.
+   */
+  private readonly cache: { problems?: readonly Position[] | undefined } = {};
 
   override setup(): void {
     super.setup();
+    this.editor = stores.useStore(stores.CellComposerStore);
     const nothing = () => undefined;
     useSubEnv({ openSidePanel: nothing, replaceSidePanel: nothing, toggleSidePanel: nothing });
     stores.useStore(stores.NotificationStore).updateNotificationCallbacks({
@@ -56,7 +61,7 @@ export class WorkbookView extends Spreadsheet {
     });
     onMounted(() => {
       this.model.on('update', this.notes, () => this.noteRecalculation());
-      onEdit(this.model, this.notes, () => (this.problems = undefined));
+      onEdit(this.model, this.notes, () => (this.cache.problems = undefined));
       this.noteRecalculation();
       const canvas = this.gridFrame.el?.querySelector('canvas');
       if (canvas) paintWithPalette(canvas);
@@ -99,8 +104,8 @@ export class WorkbookView extends Spreadsheet {
 
   /** The first failing formula that is not the selected cell, to go to. */
   get elsewhere(): { readonly label: string; readonly position: Position } | undefined {
-    this.problems ??= problemsIn(this.model);
-    const others = this.problems.filter((each) => !samePlace(each, this.active));
+    this.cache.problems ??= problemsIn(this.model);
+    const others = this.cache.problems.filter((each) => !samePlace(each, this.active));
     const first = others[0];
     if (first === undefined || this.message.problem) return undefined;
     const { text } = messageOf(this.model, first);
@@ -119,16 +124,8 @@ export class WorkbookView extends Spreadsheet {
     return this.model.getters.canUndo();
   }
 
-  get canRedo(): boolean {
-    return this.model.getters.canRedo();
-  }
-
   undo(): void {
     this.model.dispatch('REQUEST_UNDO');
-  }
-
-  redo(): void {
-    this.model.dispatch('REQUEST_REDO');
   }
 
   showSheet(sheetIdTo: string): void {
@@ -174,6 +171,17 @@ export class WorkbookView extends Spreadsheet {
     if (calls === 0) return;
     const formulas = calls === 1 ? '1 formula' : `${calls} formulas`;
     this.notes.recalculated = `${formulas} recalculated, ${Math.max(1, Math.round(milliseconds))} ms`;
+  }
+
+  /**
+   * Typing over a cell: the library empties its editor only when it next draws, so a
+   * second key before that would be followed by the old content. This empties it at once.
+   */
+  onBeforeInput(event: InputEvent): void {
+    const isTyped = event.inputType === 'insertText' && !event.isComposing;
+    if (isTyped && this.editor?.editionMode === 'inactive') {
+      (event.target as HTMLElement).replaceChildren();
+    }
   }
 
   /** The library's editors carry no names for assistive technology. */
