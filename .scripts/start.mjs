@@ -14,14 +14,23 @@ const { values } = parseArgs({ options: { open: { type: 'boolean' } } });
 
 console.log('Building the local workbook …');
 await build(['page', 'pane']);
-const url = await serve(
-  { '/': '.build/page', '/pane/': '.build/pane' },
-  Number(process.env.PORT ?? 0),
-);
+const port = Number(process.env.PORT ?? 0);
+let url;
+try {
+  url = await serve({ '/': '.build/page', '/pane/': '.build/pane' }, port);
+} catch (error) {
+  console.error(
+    `PORT: ${process.env.PORT} cannot be used (${error.message}); give a free one, or none.`,
+  );
+  process.exit(1);
+}
 console.log(`Undercurve's local workbook: ${url}   (Ctrl+C ends it)`);
 if (values.open) {
   const opener = OPENERS[process.platform] ?? 'xdg-open';
+  const sayNotOpened = () => console.log(`No browser could be opened; go to ${url} yourself.`);
   spawn(opener, [url], { stdio: 'ignore', detached: true })
-    .on('error', () => console.log(`No browser could be opened; go to ${url} yourself.`))
+    .on('error', sayNotOpened)
+    // explorer ends with 1 even when it has opened the address.
+    .on('exit', (status) => status !== 0 && opener !== 'explorer' && sayNotOpened())
     .unref();
 }
