@@ -40,6 +40,9 @@ function areaDown(left: number, right: number, width: number): number {
   return mulDown(addDown(left, right), width / 2);
 }
 
+/** What three underflowing products can lose. */
+const UNDERFLOW = 1.5e-323;
+
 /** Enclosures of the density at the ends and at the double `x` between them; entire where it is undefined. */
 export interface PieceEnds {
   readonly atFrom: Interval;
@@ -141,9 +144,12 @@ function roof(fall: number, climb: number, left: number, right: number, width: n
   if (climb <= 0) return left;
   if (fall >= 0) return right;
   const run = climb - fall;
-  const terms = [(right * climb) / run, (left * -fall) / run, climb * (-fall / run) * width];
+  if (run === Infinity) return Infinity;
+  // Shares of the run first: products of small slopes and heights could underflow to 0.
+  const [rising, falling] = [climb / run, -fall / run];
+  const terms = [right * rising, left * falling, climb * width * falling];
   const size = terms.reduce((sum, term) => sum + Math.abs(term), 0);
-  const height = terms.reduce((sum, term) => sum + term, 0) + size * 2e-15;
+  const height = terms.reduce((sum, term) => sum + term, 0) + size * 2e-15 + UNDERFLOW;
   return height === height ? height : Infinity;
 }
 
