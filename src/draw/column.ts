@@ -9,7 +9,10 @@
  * Not handled: several variables.
  */
 import type { Envelope } from '../envelope/envelope';
+import type { Hat } from '../envelope/hat';
+import { placeOn } from '../envelope/hat';
 import { bug } from '../errors';
+import { next, prev } from '../numeric/float';
 import * as I from '../numeric/interval';
 import { RowStream } from '../random/stream';
 import type { Key } from '../random/key';
@@ -44,6 +47,10 @@ const CHUNK = 4096;
 const MAX_ATTEMPTS = 1_000_000;
 /** Room for the rounding of a line's value when asking whether the density lies above it. */
 const LINE_ROUNDING = 4e-15;
+/** The same for a hat, whose place and height are rounded over several steps. */
+const HAT_ROUNDING = 1e-11;
+/** The far end of a hat is never proposed; the chance that lies beyond is far below that of a rounding. */
+const LEAST_SHARE = 5.421010862427522e-20;
 
 // Mirrors the layout of guide.ts; written out here because the inner loop is twice as fast with literals.
 const STRIDE = 6;
@@ -115,7 +122,7 @@ export class Drawer {
     return nOpen;
   }
 
-  /** Finishes a row whose first number u fell into a gap; returns the proposals it took. */
+  /** Finishes a row whose first number u fell into a gap or a hat; returns the proposals it took. */
   private finish(
     stream: RowStream,
     row: number,
@@ -123,49 +130,72 @@ export class Drawer {
     values: Float64Array,
     at: number,
   ): number {
+    const proposal = this.proposal;
     stream.further(row, 0, this.pair);
-    if (this.isUnder(values[at]!, this.gapAt(u), this.pair[1]!)) return 1;
-    for (let attempt = 1; attempt < MAX_ATTEMPTS; attempt++) {
-      stream.further(row, attempt, this.pair);
-      const { x, gap } = this.propose(this.pair[0]!);
-      if (gap < 0 || this.isUnder(x, gap, this.pair[1]!)) {
-        values[at] = x;
+    this.propose(u);
+    for (let attempt = 0; attempt < MAX_ATTEMPTS; attempt++) {
+      if (this.isAccepted(this.pair[1]!)) {
+        values[at] = proposal.x;
         return attempt + 1;
       }
+      stream.further(row, attempt + 1, this.pair);
+      this.propose(this.pair[0]!);
     }
     throw bug(`row ${row} found no draw in ${MAX_ATTEMPTS} attempts`);
   }
 
+  /** The proposal at hand: its place, and the gap or hat that decides on it (−1: none has to). */
+  private readonly proposal = { x: NaN, height: NaN, gap: -1 };
   private readonly one = new Float64Array(1);
   private readonly oneValue = new Float64Array(1);
   private readonly oneOpen = new Int32Array(1);
 
-  private propose(u: number): { x: number; gap: number } {
+  private propose(u: number): void {
     this.one[0] = u;
     const isOpen = this.settleFirst(this.one, 1, this.oneValue, 0, this.oneOpen) > 0;
-    return { x: this.oneValue[0]!, gap: isOpen ? this.gapAt(u) : -1 };
-  }
-
-  private gapAt(u: number): number {
+    this.proposal.x = this.oneValue[0]!;
+    this.proposal.gap = -1;
+    if (!isOpen) return;
     const { segments, gapOf, cells } = this.guide;
     let i = cells[(u * cells.length) | 0]!;
     while (u >= segments[(i + 1) * STRIDE]!) i++;
-    return gapOf[i]!;
+    this.proposal.gap = gapOf[i]!;
+    const hat = this.envelope.hats[this.proposal.gap - this.envelope.pieces.length];
+    if (hat) this.proposeOn(hat, (u - segments[i * STRIDE]!) * segments[i * STRIDE + 1]!);
+  }
+
+  /** A place on a hat, further right for a larger share r of it. */
+  private proposeOn(hat: Hat, r: number): void {
+    // s runs from the far end of the hat (0, never reached) to where it begins (1).
+    const s = hat.isBeyond === hat.direction > 0 ? 1 - r : r;
+    placeOn(hat, s > LEAST_SHARE ? s : LEAST_SHARE, this.proposal);
+    if (this.proposal.x !== hat.origin || hat.isBeyond) return;
+    // Nearer to the pole than doubles are to each other: the nearest one stands for it.
+    this.proposal.x = hat.direction > 0 ? next(hat.origin) : prev(hat.origin);
+  }
+
+  private isAccepted(v: number): boolean {
+    const { x, gap, height } = this.proposal;
+    if (gap < 0) return true;
+    return gap < this.envelope.pieces.length
+      ? this.isUnderGap(x, gap, v)
+      : this.isUnder(x, v * height, height * (1 + HAT_ROUNDING));
   }
 
   /** Whether the height at share v of the gap lies under the density at x. */
-  private isUnder(x: number, piece: number, v: number): boolean {
+  private isUnderGap(x: number, piece: number, v: number): boolean {
     const { lines } = this.guide;
     const at = piece * LINES_STRIDE;
     const t = (x - lines[at]!) * lines[at + 1]!;
     const lower = lines[at + 2]! + lines[at + 3]! * t;
     const gap = lines[at + 4]! + lines[at + 5]! * t;
-    const height = lower + v * gap;
+    return this.isUnder(x, lower + v * gap, (lower + gap) * (1 + LINE_ROUNDING));
+  }
+
+  private isUnder(x: number, height: number, upper: number): boolean {
     this.envelope.densityAt!(x, this.density);
     const { lo, hi } = this.density;
-    if (lo > (lower + gap) * (1 + LINE_ROUNDING)) {
-      throw bug(`breach: the density at x = ${x} lies above the envelope`);
-    }
+    if (lo > upper) throw bug(`breach: the density at x = ${x} lies above the envelope`);
     if (lo >= height) return true;
     if (hi < height) return false;
     this.nearTies++;

@@ -26,7 +26,7 @@ export const SLANT_SQUARED = 5;
 export interface Guide {
   /** STRIDE numbers a segment, then one closing START of 1. */
   readonly segments: Float64Array;
-  /** For each segment the piece whose gap it is, −1 for the area under a lower line. */
+  /** For each segment the piece whose gap it is, −1 for the area under a lower line, the number of pieces + j for hat j. */
   readonly gapOf: Int32Array;
   /** Cell ⌊u · cells⌋ names the segment to begin the search at. */
   readonly cells: Int32Array;
@@ -35,6 +35,15 @@ export interface Guide {
 }
 
 export const LINES_STRIDE = 6;
+
+/** One segment before it is laid out: a trapezoid, or a hat (without a place of its own). */
+interface Segment {
+  readonly from: number;
+  readonly width: number;
+  readonly slant: number;
+  readonly area: number;
+  readonly gapOf: number;
+}
 
 interface Trapezoid {
   readonly piece: number;
@@ -60,24 +69,42 @@ export function guideOf(envelope: Envelope): Guide {
     });
   });
   // Areas relative to the whole box neither overflow nor underflow.
-  const box = envelope.to - envelope.from;
+  const first = pieces[0]!.from;
+  const box = pieces.at(-1)!.to - first;
   const areaOf = ({ piece, left, right }: Trapezoid): number =>
     ((pieces[piece]!.to - pieces[piece]!.from) / box) * (left / tallest / 2 + right / tallest / 2);
-  const used = trapezoids.filter((t) => areaOf(t) > 0);
-  const total = used.reduce((sum, t) => sum + areaOf(t), 0);
+  const segmentsOf = (lies: 'before' | 'after'): Segment[] =>
+    envelope.hats.flatMap(({ area, c, origin, direction }, j) => {
+      const isBefore = origin + direction * c <= first;
+      const hat = {
+        from: 0,
+        width: 0,
+        slant: 1,
+        area: area / box / tallest,
+        gapOf: pieces.length + j,
+      };
+      return isBefore === (lies === 'before') ? [hat] : [];
+    });
+  const inside = trapezoids.map((t): Segment => {
+    const { from, to } = pieces[t.piece]!;
+    const slant = (2 * (t.left / tallest)) / (t.left / tallest + t.right / tallest);
+    return { from, width: to - from, slant, area: areaOf(t), gapOf: t.isGap ? t.piece : -1 };
+  });
+  const used = [...segmentsOf('before'), ...inside, ...segmentsOf('after')].filter(
+    ({ area }) => area > 0,
+  );
+  const total = used.reduce((sum, { area }) => sum + area, 0);
   const segments = new Float64Array(used.length * STRIDE + 1);
   let start = 0;
-  used.forEach((t, i) => {
-    const { from, to } = pieces[t.piece]!;
-    const share = areaOf(t) / total;
-    const slant = (2 * (t.left / tallest)) / (t.left / tallest + t.right / tallest);
-    segments.set([start, 1 / share, from, to - from, slant, slant * slant], i * STRIDE);
+  used.forEach(({ from, width, slant, area }, i) => {
+    const share = area / total;
+    segments.set([start, 1 / share, from, width, slant, slant * slant], i * STRIDE);
     start += share;
   });
   segments[used.length * STRIDE] = 1;
   return {
     segments,
-    gapOf: Int32Array.from(used, (t) => (t.isGap ? t.piece : -1)),
+    gapOf: Int32Array.from(used, ({ gapOf }) => gapOf),
     cells: cellsOf(segments, used.length),
     lines: linesOf(envelope),
   };

@@ -4,12 +4,16 @@
  */
 import { addDown, addUp } from '../numeric/float';
 import type { Interval } from '../numeric/interval';
+import type { Hat } from './hat';
 import type { Piece } from './piece';
 
 export interface Envelope {
   readonly from: number;
   readonly to: number;
+  /** From where the pieces begin to where they end; hats cover the rest. */
   readonly pieces: readonly Piece[];
+  /** Beyond the pieces, at most one on each side. */
+  readonly hats: readonly Hat[];
   readonly exponent: number;
   /** Encloses the scaled density at a double; null where upper and lower line are the density itself. */
   readonly densityAt: ((x: number, out: Interval) => void) | null;
@@ -29,9 +33,10 @@ export function promisedAcceptance(envelope: Pick<Envelope, 'upperArea' | 'lower
   return envelope.lowerArea / envelope.upperArea;
 }
 
-/** Sums of the pieces' areas, rounded outward. */
+/** Sums of the pieces' and hats' areas, rounded outward. Nothing is known of the area under a hat but that it is no more. */
 export function totalAreas(
   pieces: readonly Piece[],
+  hats: readonly Hat[] = [],
 ): Pick<Envelope, 'upperArea' | 'lowerArea' | 'areaLo' | 'areaHi'> {
   const sum = { upperArea: 0, lowerArea: 0, areaLo: 0, areaHi: 0 };
   for (const piece of pieces) {
@@ -39,6 +44,10 @@ export function totalAreas(
     sum.lowerArea = addDown(sum.lowerArea, piece.lowerArea);
     sum.areaLo = addDown(sum.areaLo, piece.areaLo);
     sum.areaHi = addUp(sum.areaHi, piece.areaHi);
+  }
+  for (const { area } of hats) {
+    sum.upperArea = addUp(sum.upperArea, area);
+    sum.areaHi = addUp(sum.areaHi, area);
   }
   return sum;
 }

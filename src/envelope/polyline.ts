@@ -23,6 +23,7 @@ export function polylineEnvelope({ x, heights }: Polyline): Envelope {
     from: x[0]!,
     to: x.at(-1)!,
     pieces,
+    hats: [],
     exponent,
     densityAt: null,
     heightAt: (at) => heightOn(x, scaled, at),

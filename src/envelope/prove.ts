@@ -9,11 +9,12 @@
  * Source: src/METHOD.md. Not handled: unbounded limits, integrable poles.
  */
 import FlatQueue from 'flatqueue';
-import { InputError } from '../errors';
+import { bug, InputError } from '../errors';
 import type { Enclosure, PointValues, Turn } from '../formula/enclose';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
+import { SideEncloser } from '../formula/side';
 import type { Tape } from '../formula/tape';
 import * as elementary from '../numeric/elementary';
 import { middle, powerOfTwo } from '../numeric/float';
@@ -23,8 +24,12 @@ import { shortNumber } from '../numeric/text';
 import { findCrossing } from './crossing';
 import type { Envelope } from './envelope';
 import { promisedAcceptance, totalAreas } from './envelope';
+import type { Hat } from './hat';
+import { hatOver } from './hat';
 import type { Piece } from './piece';
 import { provePiece } from './piece';
+import type { Reach, Reaches } from './reach';
+import { findReaches } from './reach';
 import { findExponent } from './scale';
 
 export const WANTED_ACCEPTANCE = 0.99;
@@ -38,6 +43,8 @@ const NARROW = powerOfTwo(-60);
 const NEGLIGIBLE = powerOfTwo(-42);
 /** At this acceptance the gaps follow the cubes of the widths well enough to place the bounds afresh. */
 const SPREAD_AT = 0.96;
+/** A hat with more than this share of the area is there because the density's own side is heavy. */
+const HEAVY = 0.004;
 const MAX_SIGN_STEPS = 20_000;
 
 const WHERE = 'Density';
@@ -51,11 +58,14 @@ interface Part {
 }
 
 /**
- * Proves the density of `tape` on [from, to], from < to.
- * @throws {InputError} when it is negative, zero everywhere, undefined or unbounded somewhere, or accepted too rarely.
+ * Proves the density of `tape` on [from, to], from < to; ends may be infinite.
+ * @throws {InputError} when it is negative, zero everywhere, undefined or unbounded somewhere,
+ * its area infinite or not provably finite, or accepted too rarely.
  */
 export function proveEnvelope(tape: Tape, from: number, to: number): Envelope {
-  return new Prover(tape, from, to).prove();
+  const plain = new Encloser(tape);
+  const reaches = findReaches(tape, plain, from, to);
+  return { ...new Prover(tape, plain, reaches).prove(), from, to };
 }
 
 class Prover {
@@ -78,25 +88,43 @@ class Prover {
   /** The largest upper area since the sums were last taken afresh. */
   private largestArea = 0;
 
+  private readonly from: number;
+  private readonly to: number;
+  private readonly hats: readonly Hat[];
+  private readonly hatArea: number;
+
   constructor(
     private readonly tape: Tape,
-    private readonly from: number,
-    private readonly to: number,
+    plain: Encloser,
+    reaches: Reaches,
   ) {
-    this.width = to - from;
-    const plain = new Encloser(tape);
+    const { from, to } = reaches;
+    [this.from, this.to, this.width] = [from, to, to - from];
     const exponent = findExponent(plain, from, to);
     this.encloser = exponent === 0 ? plain : new Encloser(tape, exponent);
     this.atLeft = this.encloser.pointValues();
     this.atMiddle = this.encloser.pointValues();
     this.atRight = this.encloser.pointValues();
+    this.hats = reaches.sides.map((reach) => this.hatFor(reach));
+    this.hatArea = this.hats.reduce((sum, { area }) => sum + area, 0);
+  }
+
+  /** The hat of a side, now that the scale is known. */
+  private hatFor({ side, c }: Reach): Hat {
+    const steps = new SideEncloser(this.tape, this.encloser, side);
+    const factors = steps.factors(c);
+    this.encloser.densityAt(steps.pointAt(c), this.atCentre);
+    const verdict =
+      factors && hatOver(side, c, factors, this.atCentre.hi, twoTo(-this.encloser.exponent));
+    if (!verdict || typeof verdict === 'string') throw bug('a hat that was found is lost');
+    return verdict.hat;
   }
 
   prove(): Envelope {
     this.refine();
     const parts = this.kept();
     const pieces = parts.map((part) => part.piece);
-    const areas = totalAreas(pieces);
+    const areas = totalAreas(pieces, this.hats);
     if (areas.upperArea === 0) throw this.zeroEverywhere();
     this.settleSigns(parts);
     const promised = promisedAcceptance(areas);
@@ -111,6 +139,7 @@ class Prover {
       from: this.from,
       to: this.to,
       pieces,
+      hats: this.hats.filter(({ area }) => area > 0),
       exponent,
       densityAt: (x, out) => this.encloser.densityAt(x, out),
       heightAt: this.heightAt(),
@@ -155,7 +184,11 @@ class Prover {
   }
 
   private isGoodEnough(): boolean {
-    const isEnough = (): boolean => this.lowerArea >= WANTED_ACCEPTANCE * this.upperArea;
+    const { hatArea } = this;
+    // A heavy hat that cannot be helped must not drive the pieces to their number's end.
+    const isEnough = (): boolean =>
+      this.lowerArea >= WANTED_ACCEPTANCE * (this.upperArea + hatArea) ||
+      (hatArea > HEAVY * this.upperArea && this.lowerArea >= (1 - HEAVY) * this.upperArea);
     if (!isEnough()) return false;
     this.sumAfresh();
     return isEnough();
@@ -418,6 +451,11 @@ function canMove(part: Part): boolean {
     part.piece.upperArea > part.piece.lowerArea &&
     part.piece.upperArea < Infinity
   );
+}
+
+/** 2^k, also where it is no double: 0 or Infinity then. */
+function twoTo(k: number): number {
+  return k < -1074 ? 0 : k > 1023 ? Infinity : powerOfTwo(k);
 }
 
 /** A part with no height. */

@@ -7,7 +7,11 @@
  * Source of the nodes: Abramowitz and Stegun (1964), table 25.4, n = 10.
  */
 import type { Envelope } from '../envelope/envelope';
+import type { Hat } from '../envelope/hat';
+import { placeOn } from '../envelope/hat';
 
+/** Parts of (0, 1] over which a hat is averaged. */
+const HAT_PARTS = 8;
 const NODES = [
   0.1488743389816312, 0.4333953941292472, 0.6794095682990244, 0.8650633666889845,
   0.9739065285171717,
@@ -34,5 +38,22 @@ export function areaOf(envelope: Envelope): number {
       Math.max(areaLo, estimate === estimate ? estimate : areaLo / 2 + areaHi / 2),
     );
   }
+  for (const hat of envelope.hats) area += hatArea(hat, heightAt);
   return Math.min(envelope.areaHi, Math.max(envelope.areaLo, area));
+}
+
+/** The density's area under a hat: the hat's times the mean of density over hat, by the same nodes in s. */
+function hatArea(hat: Hat, heightAt: (x: number) => number): number {
+  const at = { x: 0, height: 0 };
+  let mean = 0;
+  for (let k = 0; k < HAT_PARTS; k++) {
+    NODES.forEach((node, i) => {
+      for (const sign of [-1, 1]) {
+        placeOn(hat, (k + (1 + sign * node) / 2) / HAT_PARTS, at);
+        const share = heightAt(at.x) / at.height;
+        if (share > 0) mean += (WEIGHTS[i]! / 2 / HAT_PARTS) * Math.min(1, share);
+      }
+    });
+  }
+  return hat.area * mean;
 }

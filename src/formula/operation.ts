@@ -36,7 +36,18 @@ export interface Operation {
   readonly outside?: string;
   /** True for results that are TRUE or FALSE (1 or 0). */
   readonly isTruth?: boolean;
+  readonly growth?: Growing;
 }
+
+/**
+ * How growth passes through an operation, where more is known than its slope tells:
+ * relative growth adds up in products, is multiplied by a power, weighed in a sum.
+ */
+export type Growing =
+  | { readonly kind: 'product' | 'quotient' | 'same' | 'exponential' | 'logarithm' | 'choice' }
+  | { readonly kind: 'sum' | 'extreme'; readonly sign: 1 | -1 }
+  /** Without a power of its own the second operand is the power. */
+  | { readonly kind: 'power'; readonly power?: Interval };
 
 export type Operands = readonly [Jet, Jet, Jet];
 
@@ -58,6 +69,7 @@ interface Smooth {
   readonly turnsOn?: 0;
   readonly level?: Operation['level'];
   readonly outside?: string;
+  readonly growth?: Growing;
 }
 
 /** An operation of one argument from its derivatives, by the chain rule. */

@@ -27,6 +27,7 @@ export const VARIABLE: Operation = {
 
 export const NEGATE: Operation = {
   name: 'negate',
+  growth: { kind: 'same' },
   point: (a) => 0 - a,
   enclose: I.negate,
   slopes(out, a) {
@@ -63,6 +64,7 @@ function addedLogs(a: number, b: number, direction: -1 | 1): number {
 
 export const ADD: Operation = {
   name: 'add',
+  growth: { kind: 'sum', sign: 1 },
   point: (a, b) => a + b,
   enclose: I.add,
   slopes(out, a, b) {
@@ -77,6 +79,7 @@ export const ADD: Operation = {
 
 export const SUBTRACT: Operation = {
   name: 'subtract',
+  growth: { kind: 'sum', sign: -1 },
   point: (a, b) => a - b,
   enclose: I.subtract,
   slopes(out, a, b) {
@@ -89,6 +92,7 @@ const product = J.jet();
 
 export const MULTIPLY: Operation = {
   name: 'multiply',
+  growth: { kind: 'product' },
   point: (a, b) => a * b,
   enclose: I.multiply,
   slopes(out, a, b) {
@@ -101,6 +105,7 @@ export const MULTIPLY: Operation = {
 
 export const DIVIDE: Operation = {
   name: 'divide',
+  growth: { kind: 'quotient' },
   point: (a, b) => a / b,
   enclose: I.divide,
   slopes(out, a, b) {

@@ -22,6 +22,7 @@ const mirrored = J.jet();
 
 export const ABS: Operation = {
   name: 'ABS',
+  growth: { kind: 'same' },
   point: Math.abs,
   enclose: I.absolute,
   slopes(out, a) {
@@ -61,6 +62,7 @@ function extreme(
   const takesSecond = (c: Interval): boolean => (sign > 0 ? c.lo >= 0 : c.hi <= 0);
   return {
     name,
+    growth: { kind: 'extreme', sign },
     point,
     enclose(out, a, b, c) {
       if (takesFirst(c)) I.copy(out, a);
@@ -87,6 +89,7 @@ export const MAX = extreme('MAX', -1, Math.max, I.maximum);
 /** IF(c, a, b) with operands in the order a, b, c. */
 export const CHOOSE_BY: Operation = {
   name: 'IF',
+  growth: { kind: 'choice' },
   point: (a, b, c) => (c !== c ? NaN : c !== 0 ? a : b),
   enclose(out, a, b, c) {
     if (c.lo === 1) I.copy(out, a);

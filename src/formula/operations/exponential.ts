@@ -8,6 +8,7 @@ import { positive } from './domain';
 
 export const EXP: Operation = smooth({
   name: 'EXP',
+  growth: { kind: 'exponential' },
   point: elementary.exp,
   enclose: I.exponential,
   first: (out, _, v) => I.copy(out, v),
@@ -17,6 +18,7 @@ export const EXP: Operation = smooth({
 
 export const LN: Operation = smooth({
   name: 'LN',
+  growth: { kind: 'logarithm' },
   point: (x) => (x < 0 ? NaN : elementary.ln(x)),
   enclose: I.logarithm,
   first: (out, u) => I.reciprocal(out, u),

@@ -25,6 +25,7 @@ function wholePower(n: number): Operation {
   };
   return smooth({
     name: `power ${n}`,
+    growth: { kind: 'power', power: I.interval(n) },
     point: (x) => elementary.pow(x, n),
     enclose: (out, u) => raise(out, u, n),
     first(out, u) {
@@ -54,6 +55,7 @@ function wholePower(n: number): Operation {
 /** x^p for a constant p that is not whole; x ≥ 0. */
 export const REAL_POWER: Operation = {
   name: 'real power',
+  growth: { kind: 'power' },
   point: (x, p) => (x < 0 ? NaN : elementary.pow(x, p)),
   enclose: (out, x, p) => I.realPower(out, x, p),
   slopes(out, x, p) {
@@ -88,6 +90,7 @@ function powerOrOne(out: Interval, x: Interval, p: Interval): void {
 
 export const SQRT: Operation = smooth({
   name: 'SQRT',
+  growth: { kind: 'power', power: I.interval(0.5) },
   point: Math.sqrt,
   enclose: I.squareRoot,
   first(out, _, v) {

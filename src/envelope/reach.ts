@@ -1,0 +1,183 @@
+/**
+ * How far the pieces reach and what covers the rest: for every unbounded side, and
+ * for a limit at which the density has a pole, the nearest place from which a proved
+ * hat holds no more than a small share of the area.
+ * Source: src/METHOD.md, "Unbounded sides" and "Poles".
+ */
+import { InputError } from '../errors';
+import type { Encloser } from '../formula/enclose';
+import { Defined } from '../formula/operation';
+import type { Side } from '../formula/side';
+import { SideEncloser } from '../formula/side';
+import type { Tape } from '../formula/tape';
+import * as elementary from '../numeric/elementary';
+import { powerOfTwo } from '../numeric/float';
+import { shortNumber } from '../numeric/text';
+import { hatOver } from './hat';
+import type { Survey } from './survey';
+import { survey } from './survey';
+
+/** A hat should hold no more than this share of the area seen. */
+const WANTED_SHARE = 4e-4;
+/** Distances tried: from the width of the density by factors of 1.5 and 4/3, up to this many doublings. */
+const MAX_DOUBLINGS = 120;
+const WHERE = 'Density';
+
+/** A side that needs a hat, and the distance from its origin at which the hat begins. */
+export interface Reach {
+  readonly side: Side;
+  readonly c: number;
+}
+
+export interface Reaches {
+  /** Where the pieces begin and end. */
+  readonly from: number;
+  readonly to: number;
+  readonly sides: readonly Reach[];
+}
+
+/**
+ * Finds the reach on limits that may be infinite. Finite limits without a pole come
+ * back as they are.
+ * @throws {InputError} for a side whose area is infinite or cannot be proved finite.
+ */
+export function findReaches(tape: Tape, encloser: Encloser, from: number, to: number): Reaches {
+  const poles = [
+    { at: from, direction: 1 as const },
+    { at: to, direction: -1 as const },
+  ].filter(({ at, direction }) => Number.isFinite(at) && isPole(encloser, at, direction, from, to));
+  const isBounded = Number.isFinite(from) && Number.isFinite(to);
+  if (isBounded && poles.length === 0) return { from, to, sides: [] };
+  const seen = survey(encloser, from, to, poles[0]?.at ?? null);
+  if (seen === null) throw nothingSeen();
+  const finder = new Finder(tape, encloser, seen, from, to);
+  const sides: Reach[] = [];
+  const lower = poles.find(({ direction }) => direction === 1);
+  const upper = poles.find(({ direction }) => direction === -1);
+  if (from === -Infinity) sides.push(finder.beyond(-1));
+  if (lower) sides.push(finder.pole(from, 1));
+  if (to === Infinity) sides.push(finder.beyond(1));
+  if (upper) sides.push(finder.pole(to, -1));
+  const starts = sides.map(({ side, c }) => ({
+    x: side.origin + side.direction * c,
+    isLower: side.isBeyond === side.direction < 0,
+  }));
+  return {
+    from: starts.find(({ isLower }) => isLower)?.x ?? from,
+    to: starts.find(({ isLower }) => !isLower)?.x ?? to,
+    sides,
+  };
+}
+
+/** A limit at which no bound is found however near: a pole, or a 0/0 that the steps cannot see through. */
+function isPole(
+  encloser: Encloser,
+  at: number,
+  direction: 1 | -1,
+  from: number,
+  to: number,
+): boolean {
+  const scale =
+    Number.isFinite(from) && Number.isFinite(to) ? to - from : Math.max(1, Math.abs(at));
+  const near = at + direction * scale * powerOfTwo(-40);
+  const [a, b] = direction > 0 ? [at, near] : [near, at];
+  const { density, defined, logarithm } = encloser.over(a, b, null, null);
+  return defined === Defined.Everywhere && density.v.hi === Infinity && logarithm.hi === Infinity;
+}
+
+class Finder {
+  constructor(
+    private readonly tape: Tape,
+    private readonly encloser: Encloser,
+    private readonly seen: Survey,
+    private readonly from: number,
+    private readonly to: number,
+  ) {}
+
+  beyond(direction: 1 | -1): Reach {
+    const side: Side = { origin: 0, direction, isBeyond: true };
+    const peak = this.seen.peak * direction;
+    const end = direction > 0 ? this.from * direction : this.to * direction;
+    // x = direction · t with t > 0, inside the limits.
+    const least = Math.max(0, Number.isFinite(end) ? end : 0);
+    const candidates: number[] = [];
+    for (let k = 0; k < 2 * MAX_DOUBLINGS; k++) {
+      const distance = this.seen.width * powerOfTwo(Math.floor(k / 2)) * (k % 2 === 0 ? 1 : 1.5);
+      const c = peak + distance;
+      if (c > least) candidates.push(c);
+    }
+    return this.choose(side, candidates, direction > 0 ? 'upper' : 'lower');
+  }
+
+  pole(origin: number, direction: 1 | -1): Reach {
+    const side: Side = { origin, direction, isBeyond: false };
+    const room = Math.min(1, this.to - this.from) / 4;
+    const candidates = Array.from({ length: MAX_DOUBLINGS }, (_, k) => room * powerOfTwo(-k));
+    return this.choose(side, candidates, direction > 0 ? 'lower' : 'upper');
+  }
+
+  /** The first candidate whose hat is small enough, else the one with the smallest hat. */
+  private choose(side: Side, candidates: readonly number[], name: 'lower' | 'upper'): Reach {
+    const steps = new SideEncloser(this.tape, this.encloser, side);
+    let best: { c: number; area: number } | null = null;
+    let isInfinite = false;
+    for (const c of candidates) {
+      const x = steps.pointAt(c);
+      if (x === side.origin || !Number.isFinite(x)) continue;
+      const verdict = this.verdict(steps, side, c, x);
+      if (verdict === 'infinite') isInfinite = true;
+      if (typeof verdict === 'string') continue;
+      if (best === null || verdict.area < best.area) best = { c, area: verdict.area };
+      if (verdict.area <= WANTED_SHARE) break;
+    }
+    if (best !== null) return { side, c: best.c };
+    throw side.isBeyond
+      ? unprovedSide(name, isInfinite)
+      : unprovedPole(side.origin, name, isInfinite);
+  }
+
+  /** The hat's area as a share of the area seen. */
+  private verdict(
+    steps: SideEncloser,
+    side: Side,
+    c: number,
+    x: number,
+  ): { area: number } | 'infinite' | 'unknown' {
+    const factors = steps.factors(c);
+    if (factors === null) return 'unknown';
+    const { logarithm } = this.encloser.over(x, x, null, null);
+    const relative = elementary.exp(Math.min(700, logarithm.hi - this.seen.area));
+    const scale = elementary.exp(Math.max(-700, Math.min(700, -this.seen.area)));
+    const verdict = hatOver(side, c, factors, relative, scale);
+    return typeof verdict === 'string' ? verdict : { area: verdict.hat.area };
+  }
+}
+
+function nothingSeen(): InputError {
+  return new InputError(
+    WHERE,
+    'no height above 0 is found between the limits',
+    'give limits around the values that matter',
+  );
+}
+
+function unprovedSide(name: 'lower' | 'upper', isInfinite: boolean): InputError {
+  const towards = name === 'upper' ? 'upwards' : 'downwards';
+  const found = isInfinite
+    ? `its area is infinite ${towards}: it does not fall fast enough`
+    : `that its area is finite ${towards} cannot be proved`;
+  return new InputError(WHERE, found, `give a number as the ${name} limit instead of unbounded`);
+}
+
+function unprovedPole(at: number, name: 'lower' | 'upper', isInfinite: boolean): InputError {
+  const place = `x = ${shortNumber(at)}`;
+  const found = isInfinite
+    ? `its area is infinite at ${place}`
+    : `it cannot be bounded near ${place}`;
+  const inside = name === 'lower' ? 'above' : 'below';
+  return new InputError(
+    WHERE,
+    found,
+    `${name === 'lower' ? 'start' : 'end'} the limits ${inside} ${shortNumber(at)}`,
+  );
+}
