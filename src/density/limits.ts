@@ -1,8 +1,8 @@
 /**
  * The limits of one variable: two cells from | to in either direction, or one row
- * name | from | to [| step] with an optional heading. An end is a number or the name
- * of a given.
- * Not handled yet: `unbounded` ends, steps, several variables (each is refused).
+ * name | from | to [| step] with an optional heading. An end is a number, the name of
+ * a given, or `unbounded` (held as −∞ or ∞).
+ * Not handled yet: steps, several variables (each is refused).
  */
 import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
@@ -78,8 +78,8 @@ export function checkStep(step: Cell, where: string): void {
  */
 export function readEnds({ from, to, where }: LimitCells, givens: Givens): Limits {
   const limits = {
-    from: readEnd(from, `${where}, from`, givens),
-    to: readEnd(to, `${where}, to`, givens),
+    from: readEnd(from, `${where}, from`, givens, -Infinity),
+    to: readEnd(to, `${where}, to`, givens, Infinity),
   };
   if (!(limits.from < limits.to)) {
     throw new InputError(
@@ -91,24 +91,23 @@ export function readEnds({ from, to, where }: LimitCells, givens: Givens): Limit
   return limits;
 }
 
-function readEnd(cell: Cell, where: string, givens: Givens): number {
-  if (word(cell) === UNBOUNDED) {
-    throw new InputError(
-      where,
-      `"${UNBOUNDED}" cannot be drawn yet`,
-      'give a number beyond which the density does not matter',
-    );
-  }
+function readEnd(cell: Cell, where: string, givens: Givens, unbounded: number): number {
+  if (word(cell) === UNBOUNDED) return unbounded;
   if (isText(cell)) {
     const value = givens.find(cell);
     if (value !== undefined) return inReach(value, where);
     throw new InputError(
       where,
       `${quoted(cell)} is neither a number nor the name of a given`,
-      'give a number',
+      `give a number, or the word ${UNBOUNDED}`,
     );
   }
   return inReach(numberIn(cell, where), where);
+}
+
+/** An end as cells show it. */
+export function endCell(end: number): Cell {
+  return Number.isFinite(end) ? end : UNBOUNDED;
 }
 
 function inReach(end: number, where: string): number {

@@ -1,7 +1,7 @@
 /**
  * A shape: what the arguments `density`, `limits` and `givens…` come to. Either a
  * formula with its limits and constants, or a table's straight lines.
- * Not handled yet: shape lists, unbounded limits, several variables.
+ * Not handled yet: shape lists, several variables.
  */
 import { InputError } from '../errors';
 import type { Source } from '../formula/compile';
@@ -16,6 +16,9 @@ import { checkStep, DEFAULT_VARIABLE, readEnds, readLimitCells } from './limits'
 import type { LimitCells } from './limits';
 import type { Polyline, PointTable } from './table';
 import { isPointTable, readTable, truncate } from './table';
+
+/** A formula without limits is drawn over the whole line. */
+const UNBOUNDED_LIMITS: Limits = { from: -Infinity, to: Infinity };
 
 export interface FormulaShape {
   readonly kind: 'formula';
@@ -87,18 +90,11 @@ export function readShapes(
   if (!block && isPointTable(range))
     return tableShapes(readTable(range, places.density), cells, named, places);
   const sources = block ? [blockFormula(block, places.density)] : readLines(range, places.density);
-  if (cells === null) {
-    throw new InputError(
-      places.limits,
-      'they are missing',
-      'give two cells, from and to; a formula cannot be drawn without limits yet',
-    );
-  }
   const shape: FormulaShape = {
     kind: 'formula',
     sources,
     variable,
-    limits: readEnds(cells, named),
+    limits: cells ? readEnds(cells, named) : UNBOUNDED_LIMITS,
     constants: named.constants,
   };
   return { shapes: [shape], block, notes: [] };

@@ -47,7 +47,7 @@ export function survey(
   for (const direction of [-1, 1]) {
     for (let k = FIRST_OCTAVE; k <= LAST_OCTAVE; k += 2) {
       const distance = powerOfTwo(k);
-      const x = peak + direction * distance;
+      const x: number = peak + direction * distance;
       if (x === peak) continue;
       if (!(x > lo && x < hi)) break;
       octaves.push({ distance, area: logAt(x) + k * LN_2 });

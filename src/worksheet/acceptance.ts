@@ -1,6 +1,7 @@
 /** ACCEPTANCE: how exactly the draws of DRAW with the same arguments came about. */
 import type { Cell, Range } from '../density/cells';
 import { CURRENT_METHOD } from '../density/givens';
+import { endCell } from '../density/limits';
 import type { Shape } from '../density/shape';
 import type { Column } from '../draw/column';
 import { promisedAcceptance } from '../envelope/envelope';
@@ -60,8 +61,8 @@ function diagnose(
 function asRead(shape: Shape): readonly Line[] {
   const { from, to } = shape.limits;
   const ends = (variable: string): readonly Line[] => [
-    [`${variable} from`, from],
-    [`${variable} to`, to],
+    [`${variable} from`, endCell(from)],
+    [`${variable} to`, endCell(to)],
   ];
   if (shape.kind === 'table') {
     const name = shape.heading === '' ? '' : ` "${shape.heading}"`;
@@ -86,14 +87,16 @@ function withoutSign(text: string): string {
 
 function proofLines({ envelope }: Proved): readonly Line[] {
   const isTable = envelope.densityAt === null;
+  const hatArea = envelope.hats.reduce((sum, { area }) => sum + area, 0);
   return [
     [
       'proof',
       isTable
         ? 'nothing to prove: the envelope is the table itself'
-        : 'proved: the density lies between the lower and the upper line everywhere within the limits',
+        : 'proved: the density lies between the lower and the upper bound everywhere within the limits',
     ],
     ['pieces', envelope.pieces.length],
+    ['share of proposals beyond the pieces', hatArea / envelope.upperArea],
     ['area at least', envelope.areaLo],
     ['area at most', envelope.areaHi],
     ['scale exponent', envelope.exponent],

@@ -1,8 +1,9 @@
 /** ENVELOPE: the proved pieces, one a row. */
-import type { Range } from '../density/cells';
+import type { Cell, Range } from '../density/cells';
 import type { Shape } from '../density/shape';
 import { readShapes } from '../density/shape';
 import type { Envelope } from '../envelope/envelope';
+import type { Hat } from '../envelope/hat';
 import type { Piece } from '../envelope/piece';
 import { InputError } from '../errors';
 import { prove } from './proved';
@@ -22,6 +23,7 @@ const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)',
 /**
  * The pieces of the envelope: heights of the two lines at both ends, the share of
  * proposals that fall into the piece and the acceptance its proof promises there.
+ * A side without a limit, or a pole at a limit, has a row of its own: one end `unbounded`, no lower line.
  * Shapes: a heading row, then pieces × 8. Units: x as in the density; heights × 2^-exponent (ACCEPTANCE tells it).
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
  */
@@ -31,10 +33,34 @@ export function envelope(
   givens: readonly Range[],
 ): Range {
   const proved = prove(onlyShape(density, limits, givens, PLACES)).envelope;
-  return [HEADINGS, ...proved.pieces.map((piece) => pieceRow(piece, proved))];
+  const { pieces, hats } = proved;
+  const first = pieces[0]!.from;
+  const isBefore = ({ origin, direction, c }: Hat): boolean => origin + direction * c <= first;
+  const hatRows = (wanted: boolean): Row[] =>
+    hats.filter((hat) => isBefore(hat) === wanted).map((hat) => hatRow(hat, wanted, proved));
+  return [
+    HEADINGS,
+    ...hatRows(true),
+    ...pieces.map((piece) => pieceRow(piece, proved)),
+    ...hatRows(false),
+  ];
 }
 
-function pieceRow(piece: Piece, { upperArea, densityAt }: Envelope): readonly number[] {
+type Row = readonly Cell[];
+
+/** What lies beyond the pieces: a proved curve that falls from `height` towards ±∞ or rises into a pole. */
+function hatRow(hat: Hat, isBefore: boolean, { upperArea }: Envelope): Row {
+  const { origin, direction, c, height, area, isBeyond } = hat;
+  const inner = origin + direction * c;
+  const outer = isBeyond ? 'unbounded' : origin;
+  const far = isBeyond ? 0 : 'unbounded';
+  const share = area / upperArea;
+  return isBefore
+    ? [outer, inner, far, height, 0, 0, share, 0]
+    : [inner, outer, height, far, 0, 0, share, 0];
+}
+
+function pieceRow(piece: Piece, { upperArea, densityAt }: Envelope): Row {
   const { from, to, upperLeft, upperRight, lowerLeft, lowerRight } = piece;
   const acceptance =
     densityAt === null || piece.upperArea === 0 ? 1 : piece.lowerArea / piece.upperArea;

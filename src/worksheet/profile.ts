@@ -13,7 +13,7 @@ const DEFAULT_COUNT = 201;
 const MAX_COUNT = 100_000;
 
 /**
- * Points from limit to limit: the density scaled to area 1 with its upper and lower line.
+ * Points from limit to limit (on an unbounded side: to where the pieces end): the density scaled to area 1 with its upper and lower line.
  * Shapes: a heading row, then count × 4. Units: x as in the density; the others share per unit of x.
  * Guarantee: none for the density's last digits (it is for looking at); the lines are the proved ones.
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
@@ -26,7 +26,8 @@ export function profile(
 ): Range {
   const { envelope, area } = prove(onlyShape(density, limits, givens, PLACES));
   const n = readCount(given(count));
-  const { from, to } = envelope;
+  const { pieces } = envelope;
+  const [from, to] = [pieces[0]!.from, pieces.at(-1)!.to];
   const rows = Array.from({ length: n }, (_, i) => {
     const x = i === n - 1 ? to : from + (to - from) * (i / (n - 1));
     const { upper, lower } = linesAt(envelope, x);
