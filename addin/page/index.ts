@@ -14,6 +14,7 @@ import { sampleWorkbook } from './sample/workbook';
 import { forget, keepEdits, kept, parsed, saveFile } from './saved';
 import './style/layout.css';
 import './style/page.css';
+import './style/workbook.css';
 import { WorkbookView } from './view/workbook';
 import ownTemplates from './view/workbook.xml';
 

@@ -7,7 +7,7 @@
  */
 import { addFunction, helpers, registries } from '@odoo/o-spreadsheet';
 import { CellErrorPassed, InputError } from '../../src/index';
-import type { CatalogueEntry } from '../functions/catalogue';
+import { type CatalogueEntry, namespace } from '../functions/catalogue';
 import { findErrorCell, type GridArgument, type GridCell, toColumns, toRange } from './translate';
 
 /** The grid declares no repeating argument after optional ones, so givens are numbered. */
@@ -27,7 +27,7 @@ export type OnCall = (name: string, place: CallPlace | undefined, milliseconds: 
 export function registerFunctions(catalogue: readonly CatalogueEntry[], onCall: OnCall): void {
   registries.errorTypes.add(VALUE_ERROR);
   for (const entry of catalogue) {
-    const name = `UNDERCURVE.${entry.name}`;
+    const name = `${namespace}.${entry.name}`;
     addFunction(name, {
       description: entry.description,
       category: 'Undercurve',
