@@ -67,7 +67,7 @@ function asRead(shape: Shape): readonly Line[] {
   if (shape.kind === 'table') {
     const name = shape.heading === '' ? '' : ` "${shape.heading}"`;
     return [
-      ['density', `table of points${name}, ${shape.polyline.x.length} ends of straight lines`],
+      ['density', `table of points${name}, ${shape.polyline.x.length / 2} straight lines`],
       ...ends('x'),
     ];
   }
