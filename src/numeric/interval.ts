@@ -325,9 +325,11 @@ export function mayHoldTangentPole(a: Interval): boolean {
 
 export function tangent(out: Interval, a: Interval): void {
   if (mayHoldTangentPole(a)) setEntire(out);
-  else set(out, below(elementary.tan(a.lo)), above(elementary.tan(a.hi)));
-  if (a.lo === 0 && out.lo > -Infinity) out.lo = 0;
-  if (a.hi === 0 && out.hi < Infinity) out.hi = 0;
+  else {
+    const lo = a.lo === 0 ? 0 : below(elementary.tan(a.lo));
+    const hi = a.hi === 0 ? 0 : above(elementary.tan(a.hi));
+    set(out, lo, hi);
+  }
 }
 
 export function arctangent(out: Interval, a: Interval): void {
