@@ -6,7 +6,7 @@ import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
 import { isBlankOrZero, isText, quoted, word } from './cells';
 
-const WORDS = ['density', 'from', 'to', 'step', 'rows', 'seed', 'label', 'method'] as const;
+export const WORDS = ['density', 'from', 'to', 'step', 'rows', 'seed', 'label', 'method'] as const;
 export type BlockWord = (typeof WORDS)[number];
 
 export interface Block {
@@ -26,7 +26,7 @@ export function isBlock(range: Range): boolean {
 }
 
 /** True for the heading row of a shape list, which names label and density side by side. */
-function isListHeading(row: readonly Cell[]): boolean {
+export function isListHeading(row: readonly Cell[]): boolean {
   const words = row.map(word);
   return words.includes('label') && words.includes('density');
 }

@@ -1,36 +1,55 @@
 /**
- * The givens: constants by name, told apart from other ranges by their content
- * (every first cell is a text). Names live in a Map, so `constructor` is a name like
- * any other.
- * Not handled yet: function tables and lists.
+ * The givens: what the names in a formula stand for. Each range is told by its
+ * content: constants (name | value), a function table (a heading row, then numbers in
+ * the first column) or a list (one column, a heading and numbers). Names live in a Map,
+ * so `constructor` is a name like any other.
  */
 import { InputError } from '../errors';
 import { nameKey } from '../formula/compile';
+import type { Given, List, PointFunction } from '../formula/given';
 import { VOCABULARY } from '../formula/vocabulary';
 import type { Cell, Range } from './cells';
 import { isBlankOrZero, isText, numberIn, passErrors, quoted, word } from './cells';
+import { isFunctionTable, readFunctions } from './functiontable';
+import { readList } from './list';
 
 /** The reserved name by which an older method of drawing is asked for. */
 const METHOD = 'method';
 /** The method number of this version: 0 while the project is young. */
 export const CURRENT_METHOD = 0;
 
-/** Constants by name, as written; compared without case and `$`. */
+/** A name with what stands beside or below it. */
+export interface NamedValue {
+  readonly name: string;
+  readonly value: Cell | List | PointFunction;
+  /** The place of the range or line it comes from, for messages. */
+  readonly where: string;
+}
+
+/** Givens by name, as written; compared without case and `$`. */
 export class Givens {
-  readonly constants = new Map<string, number>();
+  readonly map = new Map<string, Given>();
   private readonly keys = new Map<string, string>();
 
   constructor(private readonly variables: readonly string[]) {}
 
-  /** @throws {InputError} when the name is taken or the value is not a number. */
-  add(cell: string, value: Cell, where: string): void {
+  /** Adds a constant, a list or a function. @throws {InputError} when the name is taken or the value is not a number. */
+  add({ name: cell, value, where }: NamedValue): void {
     const name = cell.trim();
     const at = `${where}, "${name}"`;
-    const key = nameKey(name);
+    const isNamed = typeof value === 'object' && value !== null && 'kind' in value;
     if (word(name) === METHOD) {
+      if (isNamed)
+        throw new InputError(at, 'the name stands for the method of drawing', 'rename the given');
       checkMethod(value, at);
       return;
     }
+    this.claim(name, at);
+    this.map.set(name, isNamed ? value : numberIn(value, at));
+  }
+
+  private claim(name: string, at: string): void {
+    const key = nameKey(name);
     if (this.variables.some((variable) => nameKey(variable) === key)) {
       throw new InputError(
         at,
@@ -47,13 +66,12 @@ export class Givens {
       throw new InputError(at, found, 'keep one of the two');
     }
     this.keys.set(key, name);
-    this.constants.set(name, numberIn(value, at));
   }
 
-  /** The value of a given by its name in any case. */
-  find(name: string): number | undefined {
+  /** A given by its name in any case. */
+  find(name: string): Given | undefined {
     const written = this.keys.get(nameKey(name.trim()));
-    return written === undefined ? undefined : this.constants.get(written);
+    return written === undefined ? undefined : this.map.get(written);
   }
 }
 
@@ -69,34 +87,48 @@ export function checkMethod(value: Cell, where: string): void {
   }
 }
 
-/**
- * Adds every range of givens. `firstArgument` is the place of the first among the
- * function's arguments, for messages.
- * @throws {InputError} for a range that is not two columns name | value, and as `add` does.
- */
-export function readGivens(ranges: readonly Range[], givens: Givens, firstArgument: number): void {
-  ranges.forEach((range, i) => {
-    passErrors(range);
-    readConstants(range, givens, `givens (argument ${firstArgument + i})`);
-  });
+/** What ranges of givens hold, and what was left out of them. */
+export interface GivenRanges {
+  readonly values: readonly NamedValue[];
+  readonly notes: readonly string[];
 }
 
-function readConstants(range: Range, givens: Givens, where: string): void {
+/**
+ * Reads every range of givens. `firstArgument` is the place of the first among the
+ * function's arguments, for messages.
+ * @throws {InputError} for a range of none of the three kinds, and as its kind's reading does.
+ */
+export function readGivens(ranges: readonly Range[], firstArgument: number): GivenRanges {
+  const values: NamedValue[] = [];
+  const notes: string[] = [];
+  ranges.forEach((range, i) => {
+    passErrors(range);
+    const where = `givens (argument ${firstArgument + i})`;
+    if (range.every((row) => row.every(isBlankOrZero))) return;
+    if (range[0]!.length === 1) {
+      const { name, list } = readList(range, where);
+      values.push({ name, value: list, where });
+    } else if (isFunctionTable(range)) {
+      const table = readFunctions(range, where);
+      values.push(...table.functions.map(({ name, given }) => ({ name, value: given, where })));
+      notes.push(...table.notes);
+    } else values.push(...readConstants(range, where));
+  });
+  return { values, notes };
+}
+
+const KINDS =
+  'give two columns name and value, a table with headings (x, then a named column of heights), or one column with a heading';
+
+function readConstants(range: Range, where: string): readonly NamedValue[] {
   const named = range.filter((row) => !row.every(isBlankOrZero));
-  named.forEach((row, i) => {
-    if (row.length !== 2) {
-      throw new InputError(where, `${row.length} columns`, 'give two columns, name and value');
-    }
+  return named.flatMap((row, i) => {
+    if (row.length !== 2) throw new InputError(where, `${row.length} columns`, KINDS);
     const [name, value] = [row[0]!, row[1]!];
-    if (isBlankOrZero(name)) return;
-    if (!isText(name)) {
-      throw new InputError(
-        `${where}, row ${i + 1}`,
-        `${quoted(name)} is not a name`,
-        'give two columns, name and value',
-      );
-    }
+    if (isBlankOrZero(name)) return [];
+    if (!isText(name))
+      throw new InputError(`${where}, row ${i + 1}`, `${quoted(name)} is not a name`, KINDS);
     const isHeading = i === 0 && isText(value);
-    if (!isHeading) givens.add(name, value, where);
+    return isHeading ? [] : [{ name, value, where }];
   });
 }

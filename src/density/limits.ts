@@ -95,7 +95,14 @@ function readEnd(cell: Cell, where: string, givens: Givens, unbounded: number): 
   if (word(cell) === UNBOUNDED) return unbounded;
   if (isText(cell)) {
     const value = givens.find(cell);
-    if (value !== undefined) return inReach(value, where);
+    if (typeof value === 'number') return inReach(value, where);
+    if (value !== undefined) {
+      throw new InputError(
+        where,
+        `${quoted(cell)} is the name of ${value.kind === 'list' ? 'a list' : 'a function'}`,
+        'give a number or the name of a constant',
+      );
+    }
     throw new InputError(
       where,
       `${quoted(cell)} is neither a number nor the name of a given`,

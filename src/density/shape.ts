@@ -1,19 +1,24 @@
 /**
  * A shape: what the arguments `density`, `limits` and `givens…` come to. Either a
- * formula with its limits and constants, or a table's straight lines.
- * Not handled yet: shape lists, several variables.
+ * formula with its limits and givens, or a table's straight lines; one per column of
+ * heights or line of a list.
+ * Not handled yet: several variables.
  */
 import { InputError } from '../errors';
 import type { Source } from '../formula/compile';
-import { parse } from '../formula/parse';
+import type { GivenMap } from '../formula/given';
 import type { Block } from './block';
 import { isBlock, readBlock } from './block';
-import type { Cell, Range } from './cells';
-import { given, isBlankOrZero, isText, passErrors, quoted } from './cells';
+import type { Range } from './cells';
+import { given, passErrors } from './cells';
+import { readFormula, readLines } from './formulas';
+import type { GivenRanges, NamedValue } from './givens';
 import { checkMethod, Givens, readGivens } from './givens';
 import type { Limits } from './limits';
 import { checkStep, DEFAULT_VARIABLE, readEnds, readLimitCells } from './limits';
 import type { LimitCells } from './limits';
+import type { ListLine } from './shapelist';
+import { isShapeList, readShapeList } from './shapelist';
 import type { Polyline, PointTable } from './table';
 import { isPointTable, readTable, truncate } from './table';
 
@@ -26,7 +31,9 @@ export interface FormulaShape {
   readonly sources: readonly Source[];
   readonly variable: string;
   readonly limits: Limits;
-  readonly constants: ReadonlyMap<string, number>;
+  readonly givens: GivenMap;
+  /** The place of the line of a list it stands in, for messages. */
+  readonly line?: string;
 }
 
 export interface TableShape {
@@ -38,11 +45,13 @@ export interface TableShape {
 
 export type Shape = FormulaShape | TableShape;
 
-/** What the arguments say: one shape, or one per column of heights. */
+/** What the arguments say: one shape, or one per column of heights or line of a list. */
 export interface Shapes {
   readonly shapes: readonly Shape[];
   /** The block they came from, for its rows, seed and label. */
   readonly block: Block | null;
+  /** The lines of a list they came from, one a shape. */
+  readonly lines: readonly ListLine[] | null;
   readonly notes: readonly string[];
 }
 
@@ -75,29 +84,83 @@ export function readShapes(
   }
   passErrors(range);
   const limitsRange = given(limits);
-  const block = isBlock(range) ? readBlock(range, places.density) : null;
-  const cells = limitsRange
-    ? readLimitCells(limitsRange, places.limits)
-    : block
-      ? blockLimits(block, places.density)
-      : null;
-  const variable = cells?.variable ?? DEFAULT_VARIABLE;
-  const named = new Givens([variable]);
-  for (const { name, value } of block?.givens ?? []) named.add(name, value, places.density);
-  const method = block?.words.get('method');
-  if (method !== undefined) checkMethod(method, `${places.density}, method`);
-  readGivens(givens, named, places.givens);
-  if (!block && isPointTable(range))
-    return tableShapes(readTable(range, places.density), cells, named, places);
-  const sources = block ? [blockFormula(block, places.density)] : readLines(range, places.density);
-  const shape: FormulaShape = {
+  const own = limitsRange ? readLimitCells(limitsRange, places.limits) : null;
+  const shared = readGivens(givens, places.givens);
+  if (isShapeList(range)) {
+    const lines = readShapeList(range, places.density);
+    const shapes = lines.map(({ block, where }) =>
+      inLine(where, () => ({ ...blockShape(block, where, own, shared, true), line: where })),
+    );
+    return { shapes, block: null, lines, notes: shared.notes };
+  }
+  if (isBlock(range)) {
+    const block = readBlock(range, places.density);
+    const shape = blockShape(block, places.density, own, shared);
+    return { shapes: [shape], block, lines: null, notes: shared.notes };
+  }
+  const named = namedGivens(own, [], shared);
+  if (isPointTable(range)) {
+    const table = readTable(range, places.density);
+    const shapes = tableShapes(table, own, named, places);
+    return { shapes, block: null, lines: null, notes: [...table.notes, ...shared.notes] };
+  }
+  const shape = formulaShape(readLines(range, places.density), own, named);
+  return { shapes: [shape], block: null, lines: null, notes: shared.notes };
+}
+
+/** Names the line of a list in a complaint that does not name it yet. */
+export function inLine<T>(line: string | undefined, work: () => T): T {
+  try {
+    return work();
+  } catch (error) {
+    if (line !== undefined && error instanceof InputError && !error.where.startsWith(line))
+      throw error.within(line);
+    throw error;
+  }
+}
+
+function namedGivens(
+  cells: LimitCells | null,
+  own: readonly NamedValue[],
+  shared: GivenRanges,
+): Givens {
+  const named = new Givens([cells?.variable ?? DEFAULT_VARIABLE]);
+  for (const value of [...own, ...shared.values]) named.add(value);
+  return named;
+}
+
+/** The shape of a block, or of a line of a list, whose place is `where`. */
+function blockShape(
+  block: Block,
+  where: string,
+  limits: LimitCells | null,
+  shared: GivenRanges,
+  isLine = false,
+): FormulaShape {
+  const cells = limits ?? blockLimits(block, where, isLine);
+  const named = namedGivens(
+    cells,
+    block.givens.map(({ name, value }) => ({ name, value, where })),
+    shared,
+  );
+  const method = block.words.get('method');
+  if (method !== undefined) checkMethod(method, `${where}, method`);
+  const formula = block.words.get('density') ?? null;
+  return formulaShape([readFormula(formula, 'Formula', `${where}, density`)], cells, named);
+}
+
+function formulaShape(
+  sources: readonly Source[],
+  cells: LimitCells | null,
+  named: Givens,
+): FormulaShape {
+  return {
     kind: 'formula',
     sources,
-    variable,
+    variable: cells?.variable ?? DEFAULT_VARIABLE,
     limits: cells ? readEnds(cells, named) : UNBOUNDED_LIMITS,
-    constants: named.constants,
+    givens: named.map,
   };
-  return { shapes: [shape], block, notes: [] };
 }
 
 function tableShapes(
@@ -105,19 +168,18 @@ function tableShapes(
   cells: LimitCells | null,
   named: Givens,
   places: Places,
-): Shapes {
-  const { x, columns, notes } = table;
+): readonly TableShape[] {
+  const { x, columns } = table;
   const own = { from: x[0]!, to: x.at(-1)! };
   const wanted = cells ? readEnds(cells, named) : own;
   const limits = { from: Math.max(wanted.from, own.from), to: Math.min(wanted.to, own.to) };
-  const shapes = columns.map(({ heading, heights }): TableShape => {
+  return columns.map(({ heading, heights }) => {
     const polyline = truncate(x, heights, wanted, places.limits);
     return { kind: 'table', heading, polyline, limits };
   });
-  return { shapes, block: null, notes };
 }
 
-function blockLimits({ words }: Block, where: string): LimitCells | null {
+function blockLimits({ words }: Block, where: string, isLine: boolean): LimitCells | null {
   const step = words.get('step');
   if (step !== undefined) checkStep(step, where);
   const [from, to] = [words.get('from'), words.get('to')];
@@ -129,48 +191,9 @@ function blockLimits({ words }: Block, where: string): LimitCells | null {
     if (cell === undefined)
       throw new InputError(
         where,
-        `the block has no row "${name}"`,
-        `add a row ${name} and its value`,
+        isLine ? `the list has no column "${name}"` : `the block has no row "${name}"`,
+        `add a ${isLine ? 'column' : 'row'} ${name} and its value`,
       );
   }
   return { variable: DEFAULT_VARIABLE, from: from!, to: to!, where };
-}
-
-function blockFormula({ words }: Block, where: string): Source {
-  return source(words.get('density')!, 'Formula', `${where}, density`);
-}
-
-/** A single formula, or a column of them whose product is meant. */
-function readLines(range: Range, where: string): readonly Source[] {
-  if (range[0]!.length !== 1) {
-    throw new InputError(
-      where,
-      `${range.length} rows and ${range[0]!.length} columns that begin with ${quoted(range[0]![0]!)}`,
-      'give a formula, a column of formulas, a table of points (x and height), or a block with a row density',
-    );
-  }
-  const lines = range
-    .map((row, i) => ({ cell: row[0]!, line: i + 1 }))
-    .filter(({ cell }) => !isBlankOrZero(cell));
-  if (lines.length === 0)
-    throw new InputError(where, 'it is blank', 'give a formula such as EXP(-x)');
-  const isOne = range.length === 1;
-  return lines.map(({ cell, line }) =>
-    source(
-      cell,
-      isOne ? 'Formula' : `Formula, line ${line}`,
-      isOne ? where : `${where}, row ${line}`,
-    ),
-  );
-}
-
-function source(cell: Cell, where: string, place: string): Source {
-  if (!isText(cell)) {
-    throw new InputError(
-      place,
-      `${quoted(cell)} is not a formula`,
-      'give a formula as text, such as EXP(-x)',
-    );
-  }
-  return { text: cell, where, tree: parse(cell, where) };
 }

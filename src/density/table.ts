@@ -28,12 +28,27 @@ export function isPointTable(range: Range): boolean {
 }
 
 /**
- * Reads a table of points.
- * @throws {InputError} naming the row, for text among the numbers, x that falls, negative
- * heights, fewer than two points, or a column of heights that are all 0.
+ * Reads a table of points whose heights are those of a density.
+ * @throws {InputError} as `readPoints`, and for negative heights or a column of heights that are all 0.
  */
 export function readTable(range: Range, where: string): PointTable {
   const hasHeading = range[0]!.some(isText) && !range[0]!.some((cell) => typeof cell === 'number');
+  const table = readPoints(range, where, hasHeading, height);
+  for (const [j, { heights }] of table.columns.entries())
+    checkSomeArea(table.x, heights, `${where}, column ${j + 2}`);
+  return table;
+}
+
+/**
+ * Reads x and columns of heights, each height by `readHeight`, below a heading row if there is one.
+ * @throws {InputError} naming the row, for text among the numbers, x that falls or fewer than two points.
+ */
+export function readPoints(
+  range: Range,
+  where: string,
+  hasHeading: boolean,
+  readHeight: (cell: Cell, where: string) => number,
+): PointTable {
   const firstRow = hasHeading ? 1 : 0;
   const headings = hasHeading
     ? range[0]!.map((cell) => (isText(cell) ? cell.trim() : ''))
@@ -58,10 +73,8 @@ export function readTable(range: Range, where: string): PointTable {
   }
   const columns = headings.slice(1).map((heading, j) => ({
     heading,
-    heights: rows.map((row, i) => height(row[j + 1]!, `${place(i)}, column ${j + 2}`)),
+    heights: rows.map((row, i) => readHeight(row[j + 1]!, `${place(i)}, column ${j + 2}`)),
   }));
-  for (const [j, { heights }] of columns.entries())
-    checkSomeArea(x, heights, `${where}, column ${j + 2}`);
   const notes =
     dropped > 0
       ? [

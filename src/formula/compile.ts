@@ -5,48 +5,23 @@
  * Not handled: recursion (a LAMBDA cannot see its own name), text.
  */
 import { InputError } from '../errors';
-import type { Interval } from '../numeric/interval';
 import * as I from '../numeric/interval';
 import { decimalComma, isDecimalComma, place } from './check';
-import type { Operation } from './operation';
-import { Defined } from './operation';
-import type { Step, Tape } from './tape';
+import type { Given, GivenMap } from './given';
+import type { Value } from './names';
+import { callsItself, nameKey, Scope } from './names';
+import { Steps } from './steps';
+import type { Tape } from './tape';
 import type { Tree } from './tree';
 import type { Maker, Row } from './vocabulary';
-import { NUMBER, VARIABLE, VOCABULARY } from './vocabulary';
+import { VOCABULARY } from './vocabulary';
 
+export { nameKey };
+
+/** Steps that depend on a variable, equal ones counted once: each is worked at every look at the density. */
 export const MAX_OPERATIONS = 10_000;
-
-/** What a name can stand for: a step, an array of steps, or a function of the formula's own. */
-type Value =
-  | { readonly kind: 'step'; readonly step: number }
-  | { readonly kind: 'array'; readonly rows: readonly (readonly number[])[] }
-  | {
-      readonly kind: 'function';
-      readonly params: readonly string[];
-      readonly body: Tree;
-      readonly scope: Scope;
-    };
-
-/** Names are compared without case, cell addresses without `$`. */
-export function nameKey(name: string): string {
-  return name.toUpperCase().replace(/\$/g, '');
-}
-
-/** Names visible at a place, innermost first. */
-class Scope {
-  private readonly values = new Map<string, Value>();
-
-  constructor(private readonly outer?: Scope) {}
-
-  find(key: string): Value | undefined {
-    return this.values.get(key) ?? this.outer?.find(key);
-  }
-
-  set(key: string, value: Value): void {
-    this.values.set(key, value);
-  }
-}
+/** Operations written out on the way there, those on numbers included: each is worked once. */
+const MAX_WRITTEN_OUT = 200_000;
 
 /** The text and the meaning of the names around it. */
 export interface Source {
@@ -63,15 +38,13 @@ export interface Source {
 export function compile(
   sources: readonly Source[],
   variables: readonly string[],
-  constants: ReadonlyMap<string, number>,
+  givens: GivenMap,
 ): Tape {
-  return new Compiler(variables, constants).product(sources);
+  return new Compiler(variables, givens).product(sources);
 }
 
 class Compiler {
-  private readonly steps: Step[] = [];
-  private readonly known = new Map<string, number>();
-  private readonly truths = new Set<number>();
+  private readonly steps = new Steps();
   private readonly outermost = new Scope();
   private readonly variablePlaces: number[];
   private work = 0;
@@ -79,16 +52,21 @@ class Compiler {
 
   constructor(
     private readonly variables: readonly string[],
-    private readonly constants: ReadonlyMap<string, number>,
+    private readonly givens: GivenMap,
   ) {
     this.variablePlaces = variables.map((name, i) => {
-      const step = this.push(VARIABLE, [], `variable ${i}`, false);
+      const step = this.steps.variable(i);
       this.outermost.set(nameKey(name), { kind: 'step', step });
       return step;
     });
-    for (const [name, value] of constants) {
-      this.outermost.set(nameKey(name), { kind: 'step', step: this.number(value) });
-    }
+    for (const [name, given] of givens) this.outermost.set(nameKey(name), this.given(name, given));
+  }
+
+  private given(name: string, given: Given): Value {
+    if (typeof given === 'number') return { kind: 'step', step: this.steps.number(given) };
+    if (given.kind === 'list')
+      return { kind: 'array', rows: given.values.map((value) => [this.steps.number(value)]) };
+    return { kind: 'row', row: { name, least: 1, most: 1, operation: given.operation } };
   }
 
   product(sources: readonly Source[]): Tape {
@@ -97,8 +75,20 @@ class Compiler {
       return this.step(this.body(source.tree), this.outermost);
     });
     const multiply = VOCABULARY.get('*')!.operation!;
-    const root = factors.reduce((a, b) => this.apply(multiply, [a, b]));
-    return prune(this.steps, root, this.variablePlaces);
+    const root = factors.reduce((a, b) => this.steps.apply(multiply, [a, b]));
+    const tape = this.steps.tape(root, this.variablePlaces);
+    this.checkLength(tape, sources);
+    return tape;
+  }
+
+  private checkLength({ steps }: Tape, sources: readonly Source[]): void {
+    const n = steps.filter((step) => step.nOperands > 0 && !step.isConstant).length;
+    if (n <= MAX_OPERATIONS) return;
+    throw new InputError(
+      sources.length === 1 ? sources[0]!.where : 'Formula',
+      `${n} operations on ${this.variables.join(', ')}, each element of a list counted`,
+      `use at most ${MAX_OPERATIONS}: shorten the formula or the lists, or work out beforehand what does not depend on ${this.variables.join(', ')}`,
+    );
   }
 
   /** A formula may be written as LAMBDA(x, …): its parameters are then the variables. */
@@ -132,17 +122,17 @@ class Compiler {
         'put it inside SUM, PRODUCT or another function that takes many numbers',
       );
     }
-    throw this.error(
-      tree.at,
-      'a LAMBDA where a number belongs',
-      'give it its arguments in brackets',
-    );
+    throw this.functionAsNumber(tree.at);
+  }
+
+  private functionAsNumber(at: number): InputError {
+    return this.error(at, 'a LAMBDA where a number belongs', 'give it its arguments in brackets');
   }
 
   private value(tree: Tree, scope: Scope): Value {
     switch (tree.kind) {
       case 'number':
-        return { kind: 'step', step: this.number(tree.value) };
+        return { kind: 'step', step: this.steps.number(tree.value) };
       case 'truth':
         return { kind: 'step', step: this.call(tree.value ? 'TRUE' : 'FALSE', [], tree.at) };
       case 'text':
@@ -170,26 +160,25 @@ class Compiler {
 
   private named(name: string, isCell: boolean, at: number, scope: Scope): Value {
     const value = scope.find(nameKey(name));
+    if (value?.kind === 'row') throw this.withoutBrackets(name, at);
     if (value) return value;
     if (isCell) {
       const expected = name.includes(':')
-        ? 'write its values as an array such as {1,2,3}'
+        ? `add a column with the heading ${name} to the givens, or write its values as an array such as {1,2,3}`
         : `add a row ${name} | value to the givens, or write the value itself`;
       throw this.error(at, `"${name}" is a cell address with no given`, expected);
     }
-    if (VOCABULARY.has(name.toUpperCase())) {
-      throw this.error(
-        at,
-        `"${name}" is a function without its brackets`,
-        `write ${name.toUpperCase()}(…)`,
-      );
-    }
-    const known = [...this.variables, ...this.constants.keys()].join(', ');
+    if (VOCABULARY.has(name.toUpperCase())) throw this.withoutBrackets(name.toUpperCase(), at);
+    const known = [...this.variables, ...this.givens.keys()].join(', ');
     throw this.error(
       at,
       `"${name}" is not a known name`,
       `add it to the givens, or use one of: ${known}`,
     );
+  }
+
+  private withoutBrackets(name: string, at: number): InputError {
+    return this.error(at, `"${name}" is a function without its brackets`, `write ${name}(…)`);
   }
 
   private let(tree: Extract<Tree, { kind: 'let' }>, scope: Scope): Value {
@@ -232,6 +221,7 @@ class Compiler {
     const own =
       typeof callee === 'string' ? scope.find(nameKey(callee)) : this.value(callee, scope);
     if (own?.kind === 'function') return this.applyLambda(own, tree, scope);
+    if (own?.kind === 'row') return this.applyNamed(own.row, tree, scope);
     if (typeof callee !== 'string' || own) {
       throw this.error(
         at,
@@ -247,9 +237,14 @@ class Compiler {
         `use one of: ${functionNames().join(', ')}`,
       );
     }
+    return this.applyNamed(row, tree, scope);
+  }
+
+  private applyNamed(row: Row, tree: Extract<Tree, { kind: 'call' }>, scope: Scope): Value {
+    const { at } = tree;
     this.checkCount(row, tree);
     const args = tree.args.map((arg): Value =>
-      arg ? this.value(arg, scope) : { kind: 'step', step: this.number(0) },
+      arg ? this.value(arg, scope) : { kind: 'step', step: this.steps.number(0) },
     );
     // Functions of many numbers take an array as its numbers; the others work on it element by element.
     if (row.most !== Infinity) return this.elementwise(row, args, at);
@@ -266,7 +261,7 @@ class Compiler {
   private elements(value: Value, at: number): readonly number[] {
     if (value.kind === 'step') return [value.step];
     if (value.kind === 'array') return value.rows.flat();
-    throw this.error(at, 'a LAMBDA where a number belongs', 'give it its arguments in brackets');
+    throw this.functionAsNumber(at);
   }
 
   private checkCount(row: Row, tree: Extract<Tree, { kind: 'call' }>): void {
@@ -304,7 +299,7 @@ class Compiler {
       const arg = tree.args[i];
       inner.set(
         nameKey(name),
-        arg ? this.value(arg, scope) : { kind: 'step', step: this.number(0) },
+        arg ? this.value(arg, scope) : { kind: 'step', step: this.steps.number(0) },
       );
     });
     return this.value(own.body, inner);
@@ -355,7 +350,7 @@ class Compiler {
 
   private applyRow(row: Row, args: readonly number[], at: number): number {
     this.count(at);
-    if (row.operation) return this.apply(row.operation, args);
+    if (row.operation) return this.steps.apply(row.operation, args);
     return row.rewrite!(this.maker(at), args);
   }
 
@@ -365,135 +360,37 @@ class Compiler {
 
   private count(at: number): void {
     this.work++;
-    if (this.work > MAX_OPERATIONS || this.steps.length > MAX_OPERATIONS) {
+    if (this.work > MAX_WRITTEN_OUT) {
       throw this.error(
         at,
-        `more than ${MAX_OPERATIONS} operations once LET and LAMBDA are written out`,
-        'shorten the formula',
+        `more than ${MAX_WRITTEN_OUT} operations once LET, LAMBDA and lists are written out`,
+        'shorten the formula or the lists',
       );
     }
   }
 
   private maker(at: number): Maker {
     return {
-      number: (value) => this.number(value),
+      number: (value) => this.steps.number(value),
       pi: () => {
         const pi = I.interval();
         I.setPi(pi);
-        return this.constant(Math.PI, pi);
+        return this.steps.constant(Math.PI, pi);
       },
-      apply: (operation, ...args) => this.apply(operation, args),
+      apply: (operation, ...args) => this.steps.apply(operation, args),
       call: (name, ...args) => this.call(name, args, at),
       exactValue: (node) => {
-        const { enclosure, value } = this.steps[node]!;
+        const { enclosure, value } = this.steps.at(node);
         return enclosure && enclosure.lo === enclosure.hi ? value : undefined;
       },
-      isConstant: (node) => this.steps[node]!.isConstant,
-      isTruth: (node) => this.truths.has(node),
+      isConstant: (node) => this.steps.at(node).isConstant,
+      isTruth: (node) => this.steps.isTruth(node),
       refuse: (found, expected) => this.error(at, found, expected),
     };
   }
-
-  private number(value: number): number {
-    return this.constant(value, I.interval(value));
-  }
-
-  private constant(value: number, enclosure: Interval): number {
-    const key = `${value} ${enclosure.lo} ${enclosure.hi}`;
-    return this.known.get(key) ?? this.push(NUMBER, [], key, true, value, enclosure);
-  }
-
-  private apply(operation: Operation, args: readonly number[]): number {
-    const [a = 0, b = a, c = a] = args;
-    if (operation === VOCABULARY.get('-')!.operation && a === b) return this.number(0);
-    const key = `${operation.name}(${args.join()})`;
-    const known = this.known.get(key);
-    if (known !== undefined) return known;
-    const isConstant = args.every((arg) => this.steps[arg]!.isConstant);
-    const step =
-      (isConstant ? this.fold(operation, a, b, c) : undefined) ??
-      this.push(operation, args, key, isConstant);
-    if (operation.isTruth) this.truths.add(step);
-    return step;
-  }
-
-  /** The number that a step on numbers comes to; nothing where it is undefined or infinite. */
-  private fold(operation: Operation, a: number, b: number, c: number): number | undefined {
-    const [u, v, w] = [this.steps[a]!, this.steps[b]!, this.steps[c]!];
-    if (!u.enclosure || !v.enclosure || !w.enclosure || operation.isTruth) return undefined;
-    if (operation.defined && operation.defined(u.enclosure, v.enclosure) !== Defined.Everywhere)
-      return undefined;
-    const out = I.interval();
-    operation.enclose(out, u.enclosure, v.enclosure, w.enclosure);
-    if (!Number.isFinite(out.lo) || !Number.isFinite(out.hi)) return undefined;
-    const value = out.lo === out.hi ? out.lo : operation.point(u.value, v.value, w.value);
-    return this.constant(value, out);
-  }
-
-  private push(
-    operation: Operation,
-    args: readonly number[],
-    key: string,
-    isConstant: boolean,
-    value = NaN,
-    enclosure: Interval | null = null,
-  ): number {
-    const place = this.steps.length;
-    const [a = place, b = a, c = a] = args;
-    this.steps.push({ operation, a, b, c, nOperands: args.length, isConstant, value, enclosure });
-    this.known.set(key, place);
-    return place;
-  }
-}
-
-function callsItself(name: string, tree: Tree): boolean {
-  const key = nameKey(name);
-  const within = (part: Tree | null): boolean => {
-    if (part === null) return false;
-    switch (part.kind) {
-      case 'name':
-        return nameKey(part.name) === key;
-      case 'call':
-        return (
-          (typeof part.callee === 'string' ? nameKey(part.callee) === key : within(part.callee)) ||
-          part.args.some(within)
-        );
-      case 'operator':
-        return part.args.some(within);
-      case 'array':
-        return part.rows.some((row) => row.some(within));
-      case 'let':
-        return part.bindings.some((b) => within(b.value)) || within(part.body);
-      case 'lambda':
-        return within(part.body);
-      default:
-        return false;
-    }
-  };
-  return within(tree);
 }
 
 /** Names of the functions of the vocabulary, operators left out. */
 export function functionNames(): readonly string[] {
   return [...VOCABULARY.keys()].filter((name) => /^[A-Z]/.test(name));
-}
-
-/** Keeps the steps that the root needs. */
-function prune(steps: readonly Step[], root: number, variables: readonly number[]): Tape {
-  const isNeeded = new Uint8Array(steps.length);
-  isNeeded[root] = 1;
-  for (let i = root; i >= 0; i--) {
-    const step = steps[i]!;
-    if (isNeeded[i] && step.nOperands > 0)
-      isNeeded[step.a] = isNeeded[step.b] = isNeeded[step.c] = 1;
-  }
-  const moved = new Int32Array(steps.length).fill(-1);
-  const kept: Step[] = [];
-  steps.forEach((step, i) => {
-    if (!isNeeded[i]) return;
-    moved[i] = kept.length;
-    const place = (operand: number): number => (step.nOperands > 0 ? moved[operand]! : kept.length);
-    kept.push({ ...step, a: place(step.a), b: place(step.b), c: place(step.c) });
-  });
-  return { steps: kept, root: moved[root]!, variables: variables.map((v) => moved[v]!) };
 }

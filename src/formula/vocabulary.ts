@@ -35,14 +35,17 @@ function unary(name: string, operation: Operation): Row {
   return { name, least: 1, most: 1, operation };
 }
 
-/** A function of any number of arguments as a chain of one of two. */
+/**
+ * A function of any number of arguments from one of two, as a balanced tree: the
+ * rounding of a sum of n terms then grows with log n instead of n.
+ */
 function folded(name: string, operation: Operation): Row {
-  return {
-    name,
-    least: 1,
-    most: ANY,
-    rewrite: (make, args) => args.reduce((a, b) => make.apply(operation, a, b)),
+  const fold = (make: Maker, args: readonly number[], from: number, to: number): number => {
+    if (to - from === 1) return args[from]!;
+    const half = from + Math.ceil((to - from) / 2);
+    return make.apply(operation, fold(make, args, from, half), fold(make, args, half, to));
   };
+  return { name, least: 1, most: ANY, rewrite: (make, args) => fold(make, args, 0, args.length) };
 }
 
 const ROWS: readonly Row[] = [

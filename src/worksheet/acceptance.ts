@@ -5,6 +5,7 @@ import { endCell } from '../density/limits';
 import type { Shape } from '../density/shape';
 import type { Column } from '../draw/column';
 import { promisedAcceptance } from '../envelope/envelope';
+import type { Given } from '../formula/given';
 import { waitingPValue, wilson } from '../evidence/proportion';
 import type { Proved } from './proved';
 import { drawColumn, prove } from './proved';
@@ -19,7 +20,7 @@ type Line = readonly [item: string, value: Cell];
 
 /**
  * The diagnostics of a draw, its inputs as read first.
- * Shapes: lines of item | value, with one column of values per label.
+ * Shapes: lines of item | value, with one column of values per label or line of a shape list.
  * Units: areas and heights × 2^-exponent, the line `scale exponent`; acceptances and shares as fractions of 1.
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
  */
@@ -38,14 +39,14 @@ export function acceptance(
 
 function diagnose(
   request: ColumnRequest,
-  { seed, firstRow, nRows, notes }: DrawRequest,
+  { firstRow, nRows, notes }: DrawRequest,
 ): readonly Line[] {
   const proved = prove(request.shape);
   const column = drawColumn(proved, request.key, firstRow, nRows);
   const allNotes = [...notes, ...proved.envelope.notes];
   return [
     ...asRead(request.shape),
-    ['seed', seed],
+    ['seed', request.seed],
     ['label', request.label],
     ['first row', firstRow],
     ['rows', nRows],
@@ -71,13 +72,25 @@ function asRead(shape: Shape): readonly Line[] {
       ...ends('x'),
     ];
   }
-  const { sources, variable, constants } = shape;
+  const { sources, variable, givens } = shape;
   const lines = sources.map(({ text }, i): Line => [
     i === 0 ? 'density' : `density, times`,
     withoutSign(text),
   ]);
-  const named = [...constants].map(([name, value]): Line => [`given ${name}`, value]);
+  const named = [...givens].map(([name, given]): Line => [`given ${name}`, givenAsRead(given)]);
   return [...lines, ...ends(variable), ...named];
+}
+
+/** A constant itself; of a list or a function what tells whether all of it was read. */
+function givenAsRead(given: Given): Cell {
+  if (typeof given === 'number') return given;
+  if (given.kind === 'function') return `function through ${given.nPoints} points`;
+  const { values } = given;
+  const nZeros = values.filter((value) => value === 0).length;
+  const least = values.reduce((a, b) => Math.min(a, b));
+  const most = values.reduce((a, b) => Math.max(a, b));
+  const zeros = nZeros === 0 ? '' : `, ${nZeros} of them 0 or blank`;
+  return `list of ${values.length} values from ${least} to ${most}${zeros}`;
 }
 
 /** A text that begins with = would be taken for a formula of the sheet. */

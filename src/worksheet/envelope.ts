@@ -76,19 +76,19 @@ function pieceRow(piece: Piece, { upperArea, densityAt }: Envelope): Row {
   ];
 }
 
-/** The shape of a function that shows one. @throws {InputError} for a table with several columns of heights. */
+/** The shape of a function that shows one. @throws {InputError} for several columns of heights or lines of a list. */
 export function onlyShape(
   density: Range | null,
   limits: Range | null,
   givens: readonly Range[],
   places: typeof PLACES,
 ): Shape {
-  const { shapes } = readShapes(density, limits, givens, places);
+  const { shapes, lines } = readShapes(density, limits, givens, places);
   if (shapes.length > 1) {
     throw new InputError(
       places.density,
-      `${shapes.length} columns of heights`,
-      'give x and one column of heights',
+      lines ? `a list of ${lines.length} inputs` : `${shapes.length} columns of heights`,
+      lines ? 'give one input: the headings and its line' : 'give x and one column of heights',
     );
   }
   return shapes[0]!;

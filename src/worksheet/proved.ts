@@ -6,6 +6,7 @@
  */
 import { LRUCache } from 'lru-cache';
 import type { Shape } from '../density/shape';
+import { inLine } from '../density/shape';
 import type { Column } from '../draw/column';
 import { Drawer } from '../draw/column';
 import type { Envelope } from '../envelope/envelope';
@@ -54,7 +55,9 @@ function remember<T extends Proved | Column>(
 export function prove(shape: Shape): Proved {
   const key = canonical(shape);
   return remember(key, () => {
-    const { envelope, nSteps } = envelopeOf(shape);
+    const { envelope, nSteps } = inLine(shape.kind === 'formula' ? shape.line : undefined, () =>
+      envelopeOf(shape),
+    );
     const value = { key, envelope, drawer: new Drawer(envelope), area: areaOf(envelope) };
     return { value, bytes: envelope.pieces.length * BYTES_PER_PIECE + nSteps * BYTES_PER_STEP };
   });
@@ -75,19 +78,22 @@ export function drawColumn(
 
 function envelopeOf(shape: Shape): { envelope: Envelope; nSteps: number } {
   if (shape.kind === 'table') return { envelope: polylineEnvelope(shape.polyline), nSteps: 0 };
-  const tape = compile(shape.sources, [shape.variable], shape.constants);
+  const tape = compile(shape.sources, [shape.variable], shape.givens);
   const { from, to } = shape.limits;
   return { envelope: proveEnvelope(tape, from, to), nSteps: tape.steps.length };
 }
 
 function canonical(shape: Shape): string {
   if (shape.kind === 'table') return JSON.stringify([shape.polyline.x, shape.polyline.heights]);
-  const { sources, variable, limits, constants } = shape;
+  const { sources, variable, limits, givens } = shape;
   return JSON.stringify([
     sources.map(({ text, where }) => [text, where]),
     variable,
     limits.from,
     limits.to,
-    [...constants],
+    [...givens].map(([name, given]) => [
+      name,
+      typeof given === 'number' ? given : given.fingerprint,
+    ]),
   ]);
 }

@@ -6,6 +6,7 @@ import type { BlockWord } from '../density/block';
 import type { Cell, Range } from '../density/cells';
 import { given, isBlank, lineOfCells, passErrors, quoted, singleCell } from '../density/cells';
 import type { Shape, Shapes } from '../density/shape';
+import type { ListLine } from '../density/shapelist';
 import { readShapes } from '../density/shape';
 import { InputError } from '../errors';
 import type { Key, KeyPart } from '../random/key';
@@ -16,13 +17,13 @@ export const MAX_ROWS = 1_048_575;
 /** One column that is asked for. */
 export interface ColumnRequest {
   readonly shape: Shape;
+  readonly seed: string;
   readonly label: string;
   readonly key: Key;
 }
 
 export interface DrawRequest {
   readonly columns: readonly ColumnRequest[];
-  readonly seed: string;
   readonly firstRow: number;
   readonly nRows: number;
   readonly notes: readonly string[];
@@ -47,21 +48,17 @@ export function readDrawRequest(
   givens: readonly Range[],
 ): DrawRequest {
   const shapes = readShapes(density, limits, givens, DRAW_PLACES);
-  const { firstRow, nRows } = readRows(argumentOr(rows, shapes, 'rows'), DRAW_PLACES.rows);
-  const seedCell = keyPart(
-    singleCell(argumentOr(seed, shapes, 'seed') ?? [[null]], DRAW_PLACES.seed),
-    DRAW_PLACES.seed,
+  const { firstRow, nRows } = readRows(
+    argumentOr(rows, shapes, 'rows') ?? rowsOfLines(shapes.lines),
+    DRAW_PLACES.rows,
   );
+  const seedCells = argumentOr(seed, shapes, 'seed');
   const labels = readLabels(argumentOr(label, shapes, 'label'));
-  const columns = assignLabels(shapes.shapes, labels).map(({ shape, label: part }) => ({
-    shape,
-    label: String(part).trim(),
-    key: placed(DRAW_PLACES.label, 'label', () =>
-      placed(DRAW_PLACES.seed, 'seed', () => keyOf(seedCell, part)),
-    ),
-  }));
-  refuseEqualLabels(columns);
-  return { columns, seed: String(seedCell).trim(), firstRow, nRows, notes: shapes.notes };
+  const columns = shapes.lines
+    ? lineColumns(shapes, shapes.lines, seedCells, labels)
+    : plainColumns(shapes.shapes, readSeed(seedCells ?? [[null]], DRAW_PLACES.seed), labels);
+  refuseEqualLabels(columns, shapes.lines);
+  return { columns, firstRow, nRows, notes: shapes.notes };
 }
 
 /** The argument, else the block's word. */
@@ -73,6 +70,78 @@ function argumentOr(argument: Range | null, { block }: Shapes, name: BlockWord):
   }
   const cell = block?.words.get(name);
   return cell === undefined ? null : [[cell]];
+}
+
+function plainColumns(
+  shapes: readonly Shape[],
+  seed: KeyPart,
+  labels: readonly KeyPart[],
+): readonly ColumnRequest[] {
+  return assignLabels(shapes, labels).map(({ shape, label }) =>
+    columnOf(shape, seed, label, DRAW_PLACES),
+  );
+}
+
+function readSeed(range: Range, where: string): KeyPart {
+  return keyPart(singleCell(range, where), where);
+}
+
+function columnOf(
+  shape: Shape,
+  seed: KeyPart,
+  label: KeyPart,
+  where: { readonly seed: string; readonly label: string },
+): ColumnRequest {
+  return {
+    shape,
+    seed: String(seed).trim(),
+    label: String(label).trim(),
+    key: placed(where.label, 'label', () => placed(where.seed, 'seed', () => keyOf(seed, label))),
+  };
+}
+
+/** One column per line of a list: its own label, after the argument's if there is one, and its own seed unless one is given. */
+function lineColumns(
+  { shapes }: Shapes,
+  lines: readonly ListLine[],
+  seedCells: Range | null,
+  labels: readonly KeyPart[],
+): readonly ColumnRequest[] {
+  if (labels.length > 1) {
+    throw new InputError(
+      DRAW_PLACES.label,
+      `${labels.length} labels for a list of ${lines.length} inputs`,
+      'give one label or none: the lines of the list have their own',
+    );
+  }
+  return lines.map(({ block, where }, i) => {
+    const part = keyPart(block.words.get('label') ?? null, `${where}, label`);
+    if (isBlank(part))
+      throw new InputError(where, 'it has no label', 'give every line a label of its own');
+    const label = labels.length === 0 ? part : `${String(labels[0])} ${String(part)}`;
+    const own = block.words.get('seed');
+    const isOwn = seedCells === null && own !== undefined;
+    const seedPlace = isOwn ? `${where}, seed` : DRAW_PLACES.seed;
+    const seed = readSeed(isOwn ? [[own]] : (seedCells ?? [[null]]), seedPlace);
+    return columnOf(shapes[i]!, seed, label, { seed: seedPlace, label: `${where}, label` });
+  });
+}
+
+/** The rows that the lines of a list name; the columns of one spill are all as long. */
+function rowsOfLines(lines: readonly ListLine[] | null): Range | null {
+  const named = (lines ?? []).filter(({ block }) => block.words.has('rows'));
+  const [first, ...others] = named;
+  if (first === undefined) return null;
+  const rows = first.block.words.get('rows')!;
+  const other = others.find(({ block }) => block.words.get('rows') !== rows);
+  if (other !== undefined) {
+    throw new InputError(
+      `${other.where}, rows`,
+      `${quoted(other.block.words.get('rows')!)} where an earlier line says ${quoted(rows)}`,
+      'give all lines the same number of rows, or give rows as an argument',
+    );
+  }
+  return [[rows]];
 }
 
 function readRows(range: Range | null, where: string): { firstRow: number; nRows: number } {
@@ -146,13 +215,16 @@ function assignLabels(
   });
 }
 
-function refuseEqualLabels(columns: readonly ColumnRequest[]): void {
+function refuseEqualLabels(
+  columns: readonly ColumnRequest[],
+  lines: readonly ListLine[] | null,
+): void {
   const seen = new Set<string>();
-  for (const { label } of columns) {
+  for (const [i, { label }] of columns.entries()) {
     const text = keyText(label, 'label');
     if (seen.has(text)) {
       throw new InputError(
-        DRAW_PLACES.label,
+        lines ? `${lines[i]!.where}, label` : DRAW_PLACES.label,
         `"${label}" stands twice`,
         'give each column its own label; equal labels draw equal numbers',
       );

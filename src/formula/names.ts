@@ -1,0 +1,74 @@
+/**
+ * Names in a formula: how they are compared, what they can stand for, and where they
+ * are visible.
+ */
+import type { Row } from './row';
+import type { Tree } from './tree';
+
+/** What a name can stand for: a step, an array of steps, or a function of the formula's own or of the givens. */
+export type Value =
+  | { readonly kind: 'step'; readonly step: number }
+  | { readonly kind: 'array'; readonly rows: readonly (readonly number[])[] }
+  | {
+      readonly kind: 'function';
+      readonly params: readonly string[];
+      readonly body: Tree;
+      readonly scope: Scope;
+    }
+  | { readonly kind: 'row'; readonly row: Row };
+
+/**
+ * The form in which names are compared: without case; cell addresses without `$` and
+ * without quotes around the sheet, so that `'Sheet1'!$B$2` is Sheet1!B2.
+ */
+export function nameKey(name: string): string {
+  const key = name.toUpperCase();
+  const end = key.lastIndexOf('!');
+  if (end < 0) return key.replace(/\$/g, '');
+  const [, quoted] = /^'(.*)'$/.exec(key.slice(0, end)) ?? [];
+  const sheet = quoted?.replace(/''/g, "'") ?? key.slice(0, end);
+  return `${sheet}!${key.slice(end + 1).replace(/\$/g, '')}`;
+}
+
+/** Names visible at a place, innermost first. */
+export class Scope {
+  private readonly values = new Map<string, Value>();
+
+  constructor(private readonly outer?: Scope) {}
+
+  find(key: string): Value | undefined {
+    return this.values.get(key) ?? this.outer?.find(key);
+  }
+
+  set(key: string, value: Value): void {
+    this.values.set(key, value);
+  }
+}
+
+/** True if the body of a LAMBDA bound to `name` uses that name. */
+export function callsItself(name: string, tree: Tree): boolean {
+  const key = nameKey(name);
+  const within = (part: Tree | null): boolean => {
+    if (part === null) return false;
+    switch (part.kind) {
+      case 'name':
+        return nameKey(part.name) === key;
+      case 'call':
+        return (
+          (typeof part.callee === 'string' ? nameKey(part.callee) === key : within(part.callee)) ||
+          part.args.some(within)
+        );
+      case 'operator':
+        return part.args.some(within);
+      case 'array':
+        return part.rows.some((row) => row.some(within));
+      case 'let':
+        return part.bindings.some((b) => within(b.value)) || within(part.body);
+      case 'lambda':
+        return within(part.body);
+      default:
+        return false;
+    }
+  };
+  return within(tree);
+}

@@ -1,0 +1,111 @@
+/**
+ * The steps of a tape while it is being written: equal steps are shared, steps on
+ * numbers are worked out at once, and in the end only those that count are kept.
+ */
+import type { Interval } from '../numeric/interval';
+import * as I from '../numeric/interval';
+import type { Operation } from './operation';
+import { Defined } from './operation';
+import { NUMBER, SUBTRACT, VARIABLE } from './operations/arithmetic';
+import type { Step, Tape } from './tape';
+
+export class Steps {
+  private readonly all: Step[] = [];
+  private readonly known = new Map<string, number>();
+  private readonly truths = new Set<number>();
+
+  get length(): number {
+    return this.all.length;
+  }
+
+  at(place: number): Step {
+    return this.all[place]!;
+  }
+
+  isTruth(place: number): boolean {
+    return this.truths.has(place);
+  }
+
+  variable(i: number): number {
+    return this.push(VARIABLE, [], `variable ${i}`, false);
+  }
+
+  number(value: number): number {
+    return this.constant(value, I.interval(value));
+  }
+
+  /** A number by its double and an enclosure of what it stands for. */
+  constant(value: number, enclosure: Interval): number {
+    const key = `${value} ${enclosure.lo} ${enclosure.hi}`;
+    return this.known.get(key) ?? this.push(NUMBER, [], key, true, value, enclosure);
+  }
+
+  apply(operation: Operation, args: readonly number[]): number {
+    const [a = 0, b = a, c = a] = args;
+    if (operation === SUBTRACT && a === b) return this.number(0);
+    const key = `${operation.name}(${args.join()})`;
+    const known = this.known.get(key);
+    if (known !== undefined) return known;
+    const isConstant = args.every((arg) => this.all[arg]!.isConstant);
+    const step =
+      (isConstant ? this.fold(operation, a, b, c) : undefined) ??
+      this.push(operation, args, key, isConstant);
+    if (operation.isTruth) this.truths.add(step);
+    return step;
+  }
+
+  /** The number that a step on numbers comes to; nothing where it is undefined or infinite. */
+  private fold(operation: Operation, a: number, b: number, c: number): number | undefined {
+    const [u, v, w] = [this.all[a]!, this.all[b]!, this.all[c]!];
+    if (!u.enclosure || !v.enclosure || !w.enclosure || operation.isTruth) return undefined;
+    if (operation.defined && operation.defined(u.enclosure, v.enclosure) !== Defined.Everywhere)
+      return undefined;
+    const out = I.interval();
+    operation.enclose(out, u.enclosure, v.enclosure, w.enclosure);
+    if (!Number.isFinite(out.lo) || !Number.isFinite(out.hi)) return undefined;
+    const value = out.lo === out.hi ? out.lo : operation.point(u.value, v.value, w.value);
+    return this.constant(value, out);
+  }
+
+  private push(
+    operation: Operation,
+    args: readonly number[],
+    key: string,
+    isConstant: boolean,
+    value = NaN,
+    enclosure: Interval | null = null,
+  ): number {
+    const place = this.all.length;
+    const [a = place, b = a, c = a] = args;
+    this.all.push({ operation, a, b, c, nOperands: args.length, isConstant, value, enclosure });
+    this.known.set(key, place);
+    return place;
+  }
+
+  /** Which steps the root needs. */
+  needed(root: number): Uint8Array {
+    const isNeeded = new Uint8Array(this.all.length);
+    isNeeded[root] = 1;
+    for (let i = root; i >= 0; i--) {
+      const step = this.all[i]!;
+      if (isNeeded[i] && step.nOperands > 0)
+        isNeeded[step.a] = isNeeded[step.b] = isNeeded[step.c] = 1;
+    }
+    return isNeeded;
+  }
+
+  /** The tape of the steps that the root needs. */
+  tape(root: number, variables: readonly number[]): Tape {
+    const isNeeded = this.needed(root);
+    const moved = new Int32Array(this.all.length).fill(-1);
+    const kept: Step[] = [];
+    this.all.forEach((step, i) => {
+      if (!isNeeded[i]) return;
+      moved[i] = kept.length;
+      const place = (operand: number): number =>
+        step.nOperands > 0 ? moved[operand]! : kept.length;
+      kept.push({ ...step, a: place(step.a), b: place(step.b), c: place(step.c) });
+    });
+    return { steps: kept, root: moved[root]!, variables: variables.map((v) => moved[v]!) };
+  }
+}
