@@ -18,7 +18,7 @@ const inside: fc.Arbitrary<Inside> = fc
     fc
       .tuple(finite, finite, finite)
       .map((three) => three.sort((a, b) => a - b))
-      .map(([lo, x, hi]): Inside => [I.interval(lo!, hi!), x!]),
+      .map(([lo, x, hi]): Inside => [I.interval(lo, hi), x]),
     // Narrow ones, single points, and ends at 0 or infinity, where the rules branch.
     fc
       .tuple(finite, fc.integer({ min: 0, max: 3 }))
