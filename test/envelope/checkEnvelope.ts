@@ -6,6 +6,8 @@
  */
 import type { Decimal } from 'decimal.js';
 import type { Envelope } from '../../src/envelope/envelope';
+import type { Hat } from '../../src/envelope/hat';
+import { placeOn } from '../../src/envelope/hat';
 import type { Piece } from '../../src/envelope/piece';
 import { next, prev } from '../../src/numeric/float';
 import type { Reference } from './reference';
@@ -15,8 +17,13 @@ import { Precise, preciseOf } from './reference';
 const LEFT_OUT = 1e-10;
 /** MAX(0, f) is drawn where f is below 0 by less than this share of its peak. */
 const SIGN_TOLERANCE = 1e-12;
+/** After these the rest is not looked for. */
+const MOST_VIOLATIONS = 10;
 /** Doubles that differ less than this may do so by their own rounding. */
 const CLOSE = 1e-13;
+
+/** Places and heights on hats are worked in several rounded steps. */
+const HAT_ROUNDING = 1e-11;
 
 export interface Options {
   readonly nPoints: number;
@@ -70,20 +77,22 @@ class Checker {
       this.at(piece, piece.to, false);
     }
     const preciseEvery = Math.max(1, Math.floor(nPoints / nPrecise));
-    for (let i = 0; i < nPoints; i++) {
+    for (let i = 0; i < nPoints && this.violations.length < MOST_VIOLATIONS; i++) {
       const piece = pieces[Math.floor(random() * pieces.length)]!;
       this.at(piece, this.pointIn(piece), i % preciseEvery === 0);
     }
+    for (const hat of this.envelope.hats) this.checkHat(hat);
     const { points, decided, undefinedPoints, violations } = this;
     return { points, decided, undefinedPoints, violations };
   }
 
   private fault(text: string): void {
-    if (this.violations.length < 10) this.violations.push(text);
+    if (this.violations.length < MOST_VIOLATIONS) this.violations.push(text);
   }
 
   private checkTiling(): void {
-    const { from, to, pieces } = this.envelope;
+    const { pieces, hats } = this.envelope;
+    const [from, to] = withoutHats(this.envelope);
     let reached = from;
     let leftOut = 0;
     for (const piece of pieces) {
@@ -92,6 +101,8 @@ class Checker {
       leftOut += piece.from - reached;
       reached = piece.to;
     }
+    if (hats.length === 0 && !(Number.isFinite(from) && Number.isFinite(to)))
+      this.fault('an unbounded side has no hat');
     if (reached > to) this.fault(`the last piece ends at ${reached}, after ${to}`);
     leftOut += to - reached;
     if (!(leftOut <= LEFT_OUT * (to - from))) this.fault(`${leftOut} of the limits is left out`);
@@ -111,8 +122,32 @@ class Checker {
       this.fault(`${where}: upper area ${piece.upperArea} is too small`);
     if (area(lowerLeft, lowerRight).lt(preciseOf(piece.lowerArea)))
       this.fault(`${where}: lower area ${piece.lowerArea} is too large`);
-    if (!(piece.areaLo >= piece.lowerArea && piece.areaHi <= piece.upperArea && piece.areaLo <= piece.areaHi))
-      this.fault(`${where}: areas ${[piece.lowerArea, piece.areaLo, piece.areaHi, piece.upperArea].join(', ')}`);
+    if (!(
+      piece.areaLo >= piece.lowerArea &&
+      piece.areaHi <= piece.upperArea &&
+      piece.areaLo <= piece.areaHi
+    ))
+      this.fault(
+        `${where}: areas ${[piece.lowerArea, piece.areaLo, piece.areaHi, piece.upperArea].join(', ')}`,
+      );
+  }
+
+  /** Evenly by the hat's own area, and far out. */
+  private checkHat(hat: Hat): void {
+    const { nPoints, random } = this.options;
+    const at = { x: 0, height: 0 };
+    for (let i = 0; i < nPoints / 10; i++) {
+      placeOn(hat, i % 2 === 0 ? random() : Math.pow(2, -60 * random()), at);
+      if (at.x === hat.origin || !Number.isFinite(at.x)) continue;
+      this.points++;
+      const height = this.reference.plain(at.x) * this.down;
+      if (height <= at.height || (!Number.isFinite(height) && i % 10 > 0)) continue;
+      this.decided++;
+      const precise = this.reference.veryPrecise(at.x).times(this.scale);
+      // What doubles make of the place and of the height there is rounded.
+      if (precise.isFinite() && precise.gt(preciseOf(at.height).times(1 + HAT_ROUNDING)))
+        this.fault(`x = ${at.x} under a hat: ${precise.toPrecision(17)} above ${at.height}`);
+    }
   }
 
   /** Anywhere in the piece; now and then close to an end, in doubles or on a geometric scale. */
@@ -164,10 +199,22 @@ class Checker {
     const upper = line(piece.upperLeft, piece.upperRight);
     const lower = line(piece.lowerLeft, piece.lowerRight);
     const where = `x = ${x} in ${piece.from} … ${piece.to}`;
-    if (height.gt(upper)) return `${where}: ${height.toString()} above ${upper.toString()}`;
+    if (height.gt(upper))
+      return `${where}: ${height.toPrecision(17)} above ${upper.toPrecision(17)}`;
     if (height.lt(lower) && (height.gt(0) || lower.gt(0)))
-      return `${where}: ${height.toString()} below ${lower.toString()}`;
-    if (height.lt(this.least)) return `${where}: ${height.toString()} is negative`;
+      return `${where}: ${height.toPrecision(17)} below ${lower.toPrecision(17)}`;
+    if (height.lt(this.least)) return `${where}: ${height.toPrecision(17)} is negative`;
     return null;
   }
+}
+
+/** Where the pieces have to begin and to end: hats cover the rest. */
+function withoutHats({ from, to, hats }: Envelope): readonly [number, number] {
+  let [first, last] = [from, to];
+  for (const { origin, direction, c, isBeyond } of hats) {
+    const start = origin + direction * c;
+    if (isBeyond === direction < 0) first = start;
+    else last = start;
+  }
+  return [first, last];
 }

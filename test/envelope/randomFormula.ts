@@ -12,10 +12,24 @@ export interface RandomShape {
 type Random = () => number;
 type Make = () => string;
 
-/** The next random shape; `random` gives numbers in [0, 1). */
+/** The next random shape on finite limits; `random` gives numbers in [0, 1). */
 export function randomShape(random: Random): RandomShape {
   const [from, to] = randomLimits(random);
   return { text: new Maker(random, from, to).density(), from, to };
+}
+
+/** The next random shape with an unbounded side, or with powers that have a pole at a limit. */
+export function randomOpenShape(random: Random): RandomShape {
+  const { text, from, to } = randomShape(random);
+  const falls = ['EXP(-ABS(x))', '1/(1+x^2)', 'EXP(-(x^2))', '1', '(1+ABS(x))^-2.5', 'x^-0.3'];
+  const shape = random() < 0.7 ? `(${text})*${falls[Math.floor(random() * falls.length)]!}` : text;
+  const side = random();
+  if (side < 0.3) return { text: shape, from: -Infinity, to: Infinity };
+  if (side < 0.6) return { text: shape, from, to: Infinity };
+  if (side < 0.75) return { text: shape, from: -Infinity, to };
+  const pole = `(${from < 0 ? `x+${literal(-from)}` : `x-${literal(from)}`})`;
+  const power = ['0.5', '0.9', '0.1', '0.25'][Math.floor(random() * 4)]!;
+  return { text: `${pole}^(-${power})*(${text})`, from, to };
 }
 
 const SCALES = [1, 1, 1, 10, 10, 100, 1e3, 1e-2, 1e-6, 1e6, 1e12, 1e-12, 1e60, 1e-60];
@@ -23,7 +37,11 @@ const SCALES = [1, 1, 1, 10, 10, 100, 1e3, 1e-2, 1e-6, 1e6, 1e12, 1e-12, 1e60, 1
 function randomLimits(random: Random): [number, number] {
   const pick = <T>(from: readonly T[]): T => from[Math.floor(random() * from.length)]!;
   const kind = random();
-  if (kind < 0.25) return pick([[0, 1] as const, [0, 6], [-3, 3], [0, 10], [-1, 1], [1, 4]]).slice() as [number, number];
+  if (kind < 0.25)
+    return pick([[0, 1] as const, [0, 6], [-3, 3], [0, 10], [-1, 1], [1, 4]]).slice() as [
+      number,
+      number,
+    ];
   const scale = pick(SCALES);
   if (kind < 0.5) return [0, scale * (0.1 + random())];
   const a = scale * (2 * random() - 1);
@@ -86,7 +104,8 @@ class Maker {
   /** A length like that of the limits, or much shorter. */
   private length(): string {
     const { from, to, random } = this;
-    const length = (to - from) * this.pick([1, 0.3, 0.1, 0.03, 1e-3, 1e-6, 1e-9]) * (0.3 + random());
+    const length =
+      (to - from) * this.pick([1, 0.3, 0.1, 0.03, 1e-3, 1e-6, 1e-9]) * (0.3 + random());
     return literal(length > 0 ? length : 1);
   }
 
@@ -140,7 +159,10 @@ class Maker {
           [1, () => `LN(${positive()})`],
           [0.4, () => `LOG10(${positive()})`],
           [0.4, () => `LOG(${positive()},${this.pick(['2', '3', '0.5', '10'])})`],
-          [1, () => `(${real()})^${this.pick(['2', '3', '4', '5', '7', '1', '0', '(-1)', '(-2)'])}`],
+          [
+            1,
+            () => `(${real()})^${this.pick(['2', '3', '4', '5', '7', '1', '0', '(-1)', '(-2)'])}`,
+          ],
           [0.3, () => `POWER(${positive()},${real()})`],
           [1, () => `MIN(${real()},${real()})`],
           [1, () => `MAX(${real()},${real()})`],
@@ -187,7 +209,11 @@ class Maker {
           [1, () => `(1+TANH(${real()}))`],
           [1, () => `(2+ATAN(${real()}))`],
           [1, () => `LN(1+${positive()})`],
-          [2, () => `${positive()}^${this.pick(['0.5', '1.5', '2.5', '0.3', '3', '0.01', '(-0.5)', '17'])}`],
+          [
+            2,
+            () =>
+              `${positive()}^${this.pick(['0.5', '1.5', '2.5', '0.3', '3', '0.01', '(-0.5)', '17'])}`,
+          ],
           [1, () => `MIN(${positive()},${positive()})`],
           [1, () => `MAX(${positive()},${positive()})`],
           [1, () => `MAX(0,${real()})`],

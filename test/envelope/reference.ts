@@ -66,7 +66,10 @@ function decimals(Kind: typeof Decimal): Arithmetic<Decimal> {
   /** e^a with the powers of ten taken out first, which is what makes it quick far from 0. */
   const exponential = (a: Decimal): Decimal => {
     const k = a.div(ln10).round();
-    return a.minus(k.times(ln10)).exp().times(new Kind(`1e${k.toFixed()}`));
+    return a
+      .minus(k.times(ln10))
+      .exp()
+      .times(new Kind(`1e${k.toFixed()}`));
   };
   return {
     of: (x) => exactly(x, Kind),
@@ -173,9 +176,7 @@ class Reader<T> {
   private call(tree: Extract<Tree, { kind: 'call' }>, names: Names<T>): Meaning<T> {
     const args = tree.args.map((arg) => this.read(arg!, names));
     const own =
-      typeof tree.callee === 'string'
-        ? names.get(key(tree.callee))
-        : this.read(tree.callee, names);
+      typeof tree.callee === 'string' ? names.get(key(tree.callee)) : this.read(tree.callee, names);
     if (own?.kind === 'lambda') return own.call(args);
     const name = key(tree.callee as string);
     const many = this.ofMany(name);
@@ -241,8 +242,14 @@ class Reader<T> {
   private apply(name: string, args: readonly Code<T>[]): Code<T> {
     const { math } = this;
     const [a, b, c] = args;
-    const one = (f: (u: T) => T): Code<T> => (x) => f(a!(x));
-    const two = (f: (u: T, v: T) => T): Code<T> => (x) => f(a!(x), b!(x));
+    const one =
+      (f: (u: T) => T): Code<T> =>
+      (x) =>
+        f(a!(x));
+    const two =
+      (f: (u: T, v: T) => T): Code<T> =>
+      (x) =>
+        f(a!(x), b!(x));
     const compare = (holds: (sign: number) => boolean): Code<T> =>
       two((u, v) => {
         const sign = math.sign(math.subtract(u, v));
