@@ -146,6 +146,7 @@ class Finder {
     const factors = steps.factors(c);
     if (factors === null) return 'unknown';
     const { logarithm } = this.encloser.over(x, x, null, null);
+    if (logarithm.hi === Infinity) return 'unknown';
     const relative = elementary.exp(Math.min(700, logarithm.hi - this.seen.area));
     const scale = elementary.exp(Math.max(-700, Math.min(700, -this.seen.area)));
     const verdict = hatOver(side, c, factors, relative, scale);
