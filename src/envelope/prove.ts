@@ -9,7 +9,7 @@
  * Source: src/METHOD.md. Not handled: unbounded limits, integrable poles.
  */
 import FlatQueue from 'flatqueue';
-import { bug, InputError } from '../errors';
+import { InputError } from '../errors';
 import type { Enclosure, PointValues, Turn } from '../formula/enclose';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
@@ -29,7 +29,7 @@ import { hatOver } from './hat';
 import type { Piece } from './piece';
 import { provePiece } from './piece';
 import type { Reach, Reaches } from './reach';
-import { findReaches } from './reach';
+import { findReaches, unproved } from './reach';
 import { findExponent } from './scale';
 
 export const WANTED_ACCEPTANCE = 0.99;
@@ -116,7 +116,8 @@ class Prover {
     this.encloser.densityAt(steps.pointAt(c), this.atCentre);
     const verdict =
       factors && hatOver(side, c, factors, this.atCentre.hi, twoTo(-this.encloser.exponent));
-    if (!verdict || typeof verdict === 'string') throw bug('a hat that was found is lost');
+    // Scales beyond the doubles' own leave some hats without a height.
+    if (!verdict || typeof verdict === 'string') throw unproved(side, false);
     return verdict.hat;
   }
 

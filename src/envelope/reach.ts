@@ -106,18 +106,18 @@ class Finder {
       const c = peak + distance;
       if (c > least) candidates.push(c);
     }
-    return this.choose(side, candidates, direction > 0 ? 'upper' : 'lower');
+    return this.choose(side, candidates);
   }
 
   pole(origin: number, direction: 1 | -1): Reach {
     const side: Side = { origin, direction, isBeyond: false };
     const room = Math.min(1, this.to - this.from) / 4;
     const candidates = Array.from({ length: MAX_DOUBLINGS }, (_, k) => room * powerOfTwo(-k));
-    return this.choose(side, candidates, direction > 0 ? 'lower' : 'upper');
+    return this.choose(side, candidates);
   }
 
   /** The first candidate whose hat is small enough, else the one with the smallest hat. */
-  private choose(side: Side, candidates: readonly number[], name: 'lower' | 'upper'): Reach {
+  private choose(side: Side, candidates: readonly number[]): Reach {
     const steps = new SideEncloser(this.tape, this.encloser, side);
     let best: { c: number; area: number } | null = null;
     let isInfinite = false;
@@ -131,9 +131,7 @@ class Finder {
       if (verdict.area <= WANTED_SHARE) break;
     }
     if (best !== null) return { side, c: best.c };
-    throw side.isBeyond
-      ? unprovedSide(name, isInfinite)
-      : unprovedPole(side.origin, name, isInfinite);
+    throw unproved(side, isInfinite);
   }
 
   /** The hat's area as a share of the area seen. */
@@ -160,6 +158,12 @@ function nothingSeen(): InputError {
     'no height above 0 is found between the limits',
     'give limits around the values that matter',
   );
+}
+
+/** The refusal of a side that no hat covers. */
+export function unproved({ origin, direction, isBeyond }: Side, isInfinite: boolean): InputError {
+  const limit = isBeyond === direction > 0 ? 'upper' : 'lower';
+  return isBeyond ? unprovedSide(limit, isInfinite) : unprovedPole(origin, limit, isInfinite);
 }
 
 function unprovedSide(name: 'lower' | 'upper', isInfinite: boolean): InputError {

@@ -32,11 +32,15 @@ export function findExponent(encloser: Encloser, from: number, to: number): numb
 function enclosePeak(encloser: Encloser, from: number, to: number): number | null {
   const queue = new FlatQueue<Stretch>();
   let reached = -Infinity;
+  const reach = (x: number): void => {
+    reached = Math.max(reached, encloser.over(x, x, null, null).logarithm.lo);
+  };
   const consider = (a: number, b: number): void => {
-    const m = middle(a, b);
-    reached = Math.max(reached, encloser.over(m, m, null, null).logarithm.lo);
+    reach(middle(a, b));
     queue.push({ a, b }, -encloser.over(a, b, null, null).logarithm.hi);
   };
+  reach(from);
+  reach(to);
   consider(from, to);
   for (let i = 0; i < MAX_STEPS; i++) {
     const top = -queue.peekValue()!;

@@ -39,7 +39,12 @@ export function survey(
     const { lo: least, hi: most } = encloser.over(x, x, null, null).logarithm;
     return least > -Infinity && most < Infinity ? least / 2 + most / 2 : -Infinity;
   };
-  const [lo, hi] = [Math.max(from, -FAR), Math.min(to, FAR)];
+  // An unbounded side is looked at well beyond the other limit, however far out that is.
+  const reach = [from, to].reduce(
+    (r, x) => (Number.isFinite(x) ? Math.max(r, 2 * x, -2 * x) : r),
+    FAR,
+  );
+  const [lo, hi] = [Math.max(from, -reach), Math.min(to, reach)];
   const peak = pole ?? findPeak(encloser, logAt, lo, hi);
   if (peak === null) return null;
   /** Every second octave of distance on both sides: how far, and ln of the area each stands for. */
