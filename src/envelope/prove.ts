@@ -1,15 +1,15 @@
 /**
- * Proves an envelope over a formula's density on finite limits.
+ * Proves an envelope over a formula's density.
  *
  * Pieces without a bound are halved first, then the piece with the largest gap
  * between its lines, until the area under the lower lines is 0.99 of the area under
  * the upper ones. A step of the formula that changes sign inside a piece (a kink, a
  * jump) is cut out between neighbouring doubles. The refinement depends on the
  * shape alone, never on the number of rows or a clock.
- * Source: src/METHOD.md. Not handled: unbounded limits, integrable poles.
+ * Source: src/METHOD.md. Unbounded sides and poles are covered by hats (reach.ts, hat.ts).
  */
 import FlatQueue from 'flatqueue';
-import { InputError } from '../errors';
+import type { InputError } from '../errors';
 import type { Enclosure, PointValues, Turn } from '../formula/enclose';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
@@ -29,7 +29,17 @@ import { hatOver } from './hat';
 import type { Piece } from './piece';
 import { provePiece } from './piece';
 import type { Reach, Reaches } from './reach';
-import { findReaches, unproved } from './reach';
+import { findReaches } from './reach';
+import {
+  acceptedTooRarely,
+  negativeAt,
+  nothingSeen,
+  unboundedNear,
+  undefinedOn,
+  unproved,
+  unsettledSign,
+  zeroEverywhere,
+} from './refusal';
 import { findExponent } from './scale';
 
 export const WANTED_ACCEPTANCE = 0.99;
@@ -45,9 +55,9 @@ const NEGLIGIBLE = powerOfTwo(-42);
 const SPREAD_AT = 0.96;
 /** A hat with more than this share of the area is there because the density's own side is heavy. */
 const HEAVY = 0.004;
+/** How far a density is looked at on an unbounded side where nothing of it is seen. */
+const WIDE = powerOfTwo(20);
 const MAX_SIGN_STEPS = 20_000;
-
-const WHERE = 'Density';
 
 interface Part {
   readonly piece: Piece;
@@ -65,6 +75,12 @@ interface Part {
 export function proveEnvelope(tape: Tape, from: number, to: number): Envelope {
   const plain = new Encloser(tape);
   const reaches = findReaches(tape, plain, from, to);
+  if (reaches === null) {
+    // The proof over a wide stretch says best what is wrong: undefined, negative, 0 everywhere.
+    const wide = { from: Math.max(from, -WIDE), to: Math.min(to, WIDE), sides: [] };
+    if (wide.from < wide.to) new Prover(tape, plain, wide).prove();
+    throw nothingSeen();
+  }
   return { ...new Prover(tape, plain, reaches).prove(), from, to };
 }
 
@@ -88,8 +104,8 @@ class Prover {
   /** The largest upper area since the sums were last taken afresh. */
   private largestArea = 0;
 
-  private readonly from: number;
-  private readonly to: number;
+  readonly from: number;
+  readonly to: number;
   private readonly hats: readonly Hat[];
   private readonly hatArea: number;
 
@@ -126,10 +142,10 @@ class Prover {
     const parts = this.kept();
     const pieces = parts.map((part) => part.piece);
     const areas = totalAreas(pieces, this.hats);
-    if (areas.upperArea === 0) throw this.zeroEverywhere();
+    if (areas.upperArea === 0) throw zeroEverywhere(this);
     this.settleSigns(parts);
     const promised = promisedAcceptance(areas);
-    if (promised < LEAST_ACCEPTANCE) throw this.acceptedTooRarely(promised, parts);
+    if (promised < LEAST_ACCEPTANCE) throw acceptedTooRarely(promised, MAX_PIECES, worstOf(parts));
     if (promised < WANTED_ACCEPTANCE) {
       this.notes.push(
         `the proof promises an acceptance of ${shortNumber(promised)} after ${MAX_PIECES} pieces; the draws are exact all the same`,
@@ -221,22 +237,14 @@ class Prover {
   }
 
   private refuseUrgent(part: Part): never {
-    if (part.defined === Defined.Nowhere) throw this.undefinedOn(part);
-    const near = shortNumber(
-      Math.abs(part.piece.from) < Math.abs(part.piece.to) ? part.piece.from : part.piece.to,
-    );
-    throw new InputError(
-      WHERE,
-      `it cannot be bounded near x = ${near}`,
-      'keep the limits away from there, or write the formula so that it stays finite',
-    );
-  }
-
-  private undefinedOn(part: Part): InputError {
-    return new InputError(
-      WHERE,
-      `it is undefined from x = ${shortNumber(part.piece.from)} to x = ${shortNumber(part.piece.to)}, where ${part.reason}`,
-      'keep the limits where it is defined, or give it a height there with IF',
+    if (part.defined === Defined.Nowhere) throw undefinedOn(part.piece, part.reason);
+    const { from, to } = part.piece;
+    throw unboundedNear(
+      to - from < NARROW * this.width && from <= 0 && to >= 0
+        ? 0
+        : Math.abs(from) < Math.abs(to)
+          ? from
+          : to,
     );
   }
 
@@ -320,13 +328,12 @@ class Prover {
     this.seePoint(right);
     const enclosure = this.encloser.over(left.x, right.x, left, right);
     const { defined, density, turn } = enclosure;
-    if (defined === Defined.Everywhere && density.v.hi < 0)
-      throw this.negativeAt(left.x, density.v);
+    if (defined === Defined.Everywhere && density.v.hi < 0) throw this.negative(left.x, density.v);
     const isBeyondRounding = right.x - left.x > NEGLIGIBLE * this.width;
     const reason = defined === Defined.Everywhere ? '' : this.encloser.undefinedReason();
     if (defined === Defined.Nowhere) {
       const part = { piece: nothing(left.x, right.x), defined, turn, reason };
-      if (isBeyondRounding) throw this.undefinedOn(part);
+      if (isBeyondRounding) throw undefinedOn(part.piece, part.reason);
       this.notes.push(
         `the density is undefined on a stretch of ${shortNumber(right.x - left.x)} at x = ${shortNumber(left.x)}, where ${reason}; nothing is drawn there`,
       );
@@ -342,7 +349,7 @@ class Prover {
 
   private seePoint({ density, x, defined }: PointValues): void {
     if (defined[this.tape.root] !== Defined.Everywhere) return;
-    if (density.hi < 0) throw this.negativeAt(x, density);
+    if (density.hi < 0) throw this.negative(x, density);
     if (density.lo > this.peak) this.peak = density.lo;
   }
 
@@ -388,7 +395,7 @@ class Prover {
         continue;
       }
       const m = middle(from, to);
-      if (steps >= MAX_SIGN_STEPS || m === from) throw this.unsettledSign(part);
+      if (steps >= MAX_SIGN_STEPS || m === from) throw unsettledSign(part.piece.from);
       open.push({ from: m, to }, { from, to: m });
     }
     if (isRounded) {
@@ -398,40 +405,9 @@ class Prover {
     }
   }
 
-  private negativeAt(x: number, height: I.Interval): InputError {
-    const value = this.encloser.exponent === 0 ? ` (${shortNumber(height.hi)})` : '';
-    return new InputError(
-      WHERE,
-      `it is negative at x = ${shortNumber(x)}${value}`,
-      'heights must be 0 or more; use MAX(0, …) if that is meant',
-    );
-  }
-
-  private unsettledSign(part: Part): InputError {
-    return new InputError(
-      WHERE,
-      `whether it is negative near x = ${shortNumber(part.piece.from)} cannot be settled`,
-      'write it so that it cannot be negative, for example as a square instead of its expanded powers, or with MAX(0, …)',
-    );
-  }
-
-  private zeroEverywhere(): InputError {
-    return new InputError(
-      WHERE,
-      `it is 0 everywhere from x = ${shortNumber(this.from)} to x = ${shortNumber(this.to)}`,
-      'some height within the limits must be above 0',
-    );
-  }
-
-  private acceptedTooRarely(promised: number, parts: readonly Part[]): InputError {
-    const worst = parts.reduce((p, q) =>
-      q.piece.upperArea - q.piece.lowerArea > p.piece.upperArea - p.piece.lowerArea ? q : p,
-    );
-    return new InputError(
-      WHERE,
-      `only ${shortNumber(promised)} of proposals are sure to be accepted after ${MAX_PIECES} pieces (worst near x = ${shortNumber(worst.piece.from)})`,
-      'narrow the limits to where the density matters, or simplify the formula there',
-    );
+  /** Heights of a scaled density are not the user's, so they are not shown. */
+  private negative(x: number, height: I.Interval): InputError {
+    return negativeAt(x, this.encloser.exponent === 0 ? height.hi : undefined);
   }
 
   private heightAt(): (x: number) => number {
@@ -442,6 +418,12 @@ class Prover {
       return out.lo / 2 + out.hi / 2;
     };
   }
+}
+
+/** Where the gap between the lines is largest. */
+function worstOf(parts: readonly Part[]): number {
+  const gap = ({ piece }: Part): number => piece.upperArea - piece.lowerArea;
+  return parts.reduce((p, q) => (gap(q) > gap(p) ? q : p)).piece.from;
 }
 
 /** True for a part whose ends may move: nothing turns inside and its gap is not nil. */

@@ -4,7 +4,6 @@
  * hat holds no more than a small share of the area.
  * Source: src/METHOD.md, "Unbounded sides" and "Poles".
  */
-import { InputError } from '../errors';
 import type { Encloser } from '../formula/enclose';
 import { Defined } from '../formula/operation';
 import type { Side } from '../formula/side';
@@ -12,8 +11,8 @@ import { SideEncloser } from '../formula/side';
 import type { Tape } from '../formula/tape';
 import * as elementary from '../numeric/elementary';
 import { powerOfTwo } from '../numeric/float';
-import { shortNumber } from '../numeric/text';
 import { hatOver } from './hat';
+import { negativeAt, undefinedSide, unproved } from './refusal';
 import type { Survey } from './survey';
 import { survey } from './survey';
 
@@ -21,7 +20,6 @@ import { survey } from './survey';
 const WANTED_SHARE = 4e-4;
 /** Distances tried: from the width of the density by factors of 1.5 and 4/3, up to this many doublings. */
 const MAX_DOUBLINGS = 120;
-const WHERE = 'Density';
 
 /** A side that needs a hat, and the distance from its origin at which the hat begins. */
 export interface Reach {
@@ -38,10 +36,15 @@ export interface Reaches {
 
 /**
  * Finds the reach on limits that may be infinite. Finite limits without a pole come
- * back as they are.
+ * back as they are; null where no height above 0 is seen.
  * @throws {InputError} for a side whose area is infinite or cannot be proved finite.
  */
-export function findReaches(tape: Tape, encloser: Encloser, from: number, to: number): Reaches {
+export function findReaches(
+  tape: Tape,
+  encloser: Encloser,
+  from: number,
+  to: number,
+): Reaches | null {
   const poles = [
     { at: from, direction: 1 as const },
     { at: to, direction: -1 as const },
@@ -49,7 +52,7 @@ export function findReaches(tape: Tape, encloser: Encloser, from: number, to: nu
   const isBounded = Number.isFinite(from) && Number.isFinite(to);
   if (isBounded && poles.length === 0) return { from, to, sides: [] };
   const seen = survey(encloser, from, to, poles[0]?.at ?? null);
-  if (seen === null) throw nothingSeen();
+  if (seen === null) return null;
   const finder = new Finder(tape, encloser, seen, from, to);
   const sides: Reach[] = [];
   const lower = poles.find(({ direction }) => direction === 1);
@@ -131,7 +134,18 @@ class Finder {
       if (verdict.area <= WANTED_SHARE) break;
     }
     if (best !== null) return { side, c: best.c };
+    for (const c of candidates) this.refusePoint(steps.pointAt(c), side);
     throw unproved(side, isInfinite);
+  }
+
+  /** A side that no hat covers may be negative or undefined: then that is what to say. */
+  private refusePoint(x: number, side: Side): void {
+    if (!Number.isFinite(x)) return;
+    const { density, defined } = this.encloser.over(x, x, null, null);
+    if (defined === Defined.Everywhere && density.v.hi < 0) throw negativeAt(x, density.v.hi);
+    if (defined === Defined.Nowhere) {
+      throw undefinedSide(x, this.encloser.undefinedReason(), side);
+    }
   }
 
   /** The hat's area as a share of the area seen. */
@@ -150,39 +164,4 @@ class Finder {
     const verdict = hatOver(side, c, factors, relative, scale);
     return typeof verdict === 'string' ? verdict : { area: verdict.hat.area };
   }
-}
-
-function nothingSeen(): InputError {
-  return new InputError(
-    WHERE,
-    'no height above 0 is found between the limits',
-    'give limits around the values that matter',
-  );
-}
-
-/** The refusal of a side that no hat covers. */
-export function unproved({ origin, direction, isBeyond }: Side, isInfinite: boolean): InputError {
-  const limit = isBeyond === direction > 0 ? 'upper' : 'lower';
-  return isBeyond ? unprovedSide(limit, isInfinite) : unprovedPole(origin, limit, isInfinite);
-}
-
-function unprovedSide(name: 'lower' | 'upper', isInfinite: boolean): InputError {
-  const towards = name === 'upper' ? 'upwards' : 'downwards';
-  const found = isInfinite
-    ? `its area is infinite ${towards}: it does not fall fast enough`
-    : `that its area is finite ${towards} cannot be proved`;
-  return new InputError(WHERE, found, `give a number as the ${name} limit instead of unbounded`);
-}
-
-function unprovedPole(at: number, name: 'lower' | 'upper', isInfinite: boolean): InputError {
-  const place = `x = ${shortNumber(at)}`;
-  const found = isInfinite
-    ? `its area is infinite at ${place}`
-    : `it cannot be bounded near ${place}`;
-  const inside = name === 'lower' ? 'above' : 'below';
-  return new InputError(
-    WHERE,
-    found,
-    `${name === 'lower' ? 'start' : 'end'} the limits ${inside} ${shortNumber(at)}`,
-  );
 }

@@ -64,6 +64,7 @@ export function mulUp(a: number, b: number): number {
   if (size > PRODUCT_MIN && size < PRODUCT_MAX) {
     return productError(a, b, p) <= 0 ? p : up(p);
   }
+  if (p === 0) return isUnderflowPositive(a, b) ? SMALLEST : 0;
   return isInfinite(a) || isInfinite(b) ? p : up(p);
 }
 
@@ -75,7 +76,13 @@ export function mulDown(a: number, b: number): number {
   if (size > PRODUCT_MIN && size < PRODUCT_MAX) {
     return productError(a, b, p) >= 0 ? p : down(p);
   }
+  if (p === 0) return isUnderflowPositive(a, b) ? 0 : -SMALLEST;
   return isInfinite(a) || isInfinite(b) ? p : down(p);
+}
+
+/** The sign of a product or quotient that underflows to 0 is still known. */
+function isUnderflowPositive(a: number, b: number): boolean {
+  return a > 0 === b > 0;
 }
 
 /** a · b − p to the sign; Infinity stands for "cannot tell", which makes both directions step. */
@@ -114,6 +121,7 @@ export function looseSumDown(a: number, b: number): number {
 export function looseProductUp(a: number, b: number): number {
   if (a === 0 || b === 0) return 0;
   const p = a * b;
+  if (p === 0) return isUnderflowPositive(a, b) ? SMALLEST : 0;
   return p > -Infinity ? p + (Math.abs(p) * HALF_ULP + SMALLEST) : -Number.MAX_VALUE;
 }
 
@@ -128,6 +136,7 @@ export function divUp(a: number, b: number): number {
   const q = a / b;
   if (isInfinite(b)) return isInfinite(a) && a === b ? Infinity : 0;
   if (isInfinite(a)) return q;
+  if (q === 0) return isUnderflowPositive(a, b) ? SMALLEST : 0;
   return quotientIsExact(q, a, b) ? q : up(q);
 }
 
@@ -137,6 +146,7 @@ export function divDown(a: number, b: number): number {
   const q = a / b;
   if (isInfinite(b)) return isInfinite(a) && a !== b ? -Infinity : 0;
   if (isInfinite(a)) return q;
+  if (q === 0) return isUnderflowPositive(a, b) ? 0 : -SMALLEST;
   return quotientIsExact(q, a, b) ? q : down(q);
 }
 

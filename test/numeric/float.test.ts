@@ -215,7 +215,8 @@ describe('mulUp and mulDown', () => {
     [-Infinity, 2, -Infinity, -Infinity],
     [1e200, 1e200, MAX, Infinity],
     [-1e200, 1e200, -Infinity, -MAX],
-    [1e-200, 1e-200, -LEAST, LEAST],
+    [1e-200, 1e-200, 0, LEAST],
+    [-1e-200, 1e-200, -LEAST, 0],
   ])('%d · %d is between %d and %d [law]', (a, b, lo, hi) => {
     expect(mulDown(a, b)).toBe(lo);
     expect(mulUp(a, b)).toBe(hi);
@@ -248,7 +249,8 @@ describe('divUp and divDown', () => {
     [Infinity, 2, Infinity, Infinity],
     [Infinity, -2, -Infinity, -Infinity],
     [1e300, 1e-300, MAX, Infinity],
-    [1e-300, 1e300, -LEAST, LEAST],
+    [1e-300, 1e300, 0, LEAST],
+    [1e-300, -1e300, -LEAST, 0],
     [6, 3, 2, 2],
     [Infinity, Infinity, 0, Infinity],
     [Infinity, -Infinity, -Infinity, 0],

@@ -1,0 +1,101 @@
+/** Why a density is not drawn: every refusal of the proof, in words that say what would help. */
+import { InputError } from '../errors';
+import type { Side } from '../formula/side';
+import { shortNumber } from '../numeric/text';
+
+const WHERE = 'Density';
+
+/** A stretch of x, for messages. */
+interface Stretch {
+  readonly from: number;
+  readonly to: number;
+}
+
+/** `height` is left out where it stands for a scaled density. */
+export function negativeAt(x: number, height?: number): InputError {
+  const value = height === undefined ? '' : ` (${shortNumber(height)})`;
+  return new InputError(
+    WHERE,
+    `it is negative at x = ${shortNumber(x)}${value}`,
+    'heights must be 0 or more; use MAX(0, …) if that is meant',
+  );
+}
+
+export function unsettledSign(x: number): InputError {
+  return new InputError(
+    WHERE,
+    `whether it is negative near x = ${shortNumber(x)} cannot be settled`,
+    'write it so that it cannot be negative, for example as a square instead of its expanded powers, or with MAX(0, …)',
+  );
+}
+
+export function zeroEverywhere({ from, to }: Stretch): InputError {
+  return new InputError(
+    WHERE,
+    `it is 0 everywhere from x = ${shortNumber(from)} to x = ${shortNumber(to)}`,
+    'some height within the limits must be above 0',
+  );
+}
+
+export function nothingSeen(): InputError {
+  return new InputError(
+    WHERE,
+    'no height above 0 is found between the limits',
+    'give limits around the values that matter',
+  );
+}
+
+/** `reason` says what the formula does there, e.g. `SQRT takes a negative number`. */
+export function undefinedOn({ from, to }: Stretch, reason: string): InputError {
+  return new InputError(
+    WHERE,
+    `it is undefined from x = ${shortNumber(from)} to x = ${shortNumber(to)}, where ${reason}`,
+    'keep the limits where it is defined, or give it a height there with IF',
+  );
+}
+
+export function undefinedSide(x: number, reason: string, { direction }: Side): InputError {
+  const name = direction > 0 ? 'upper' : 'lower';
+  return new InputError(
+    WHERE,
+    `it is undefined at x = ${shortNumber(x)}, where ${reason}`,
+    `give a number as the ${name} limit, so that it is defined everywhere within the limits`,
+  );
+}
+
+export function unboundedNear(x: number): InputError {
+  return new InputError(
+    WHERE,
+    `it cannot be bounded near x = ${shortNumber(x)}`,
+    'keep the limits away from there or, where the formula is only 0/0, give its height with IF, as in IF(ABS(x)<1E-9, 1, SIN(x)/x)',
+  );
+}
+
+/** A side that no hat covers. */
+export function unproved({ origin, direction, isBeyond }: Side, isInfinite: boolean): InputError {
+  const limit = isBeyond === direction > 0 ? 'upper' : 'lower';
+  if (isBeyond) {
+    const towards = direction > 0 ? 'upwards' : 'downwards';
+    const found = isInfinite
+      ? `its area is infinite ${towards}: it does not fall fast enough`
+      : `that its area is finite ${towards} cannot be proved`;
+    return new InputError(WHERE, found, `give a number as the ${limit} limit instead of unbounded`);
+  }
+  const at = shortNumber(origin);
+  const found = isInfinite
+    ? `its area is infinite at x = ${at}`
+    : `it cannot be bounded near x = ${at}`;
+  return new InputError(
+    WHERE,
+    found,
+    `${limit === 'lower' ? 'start the limits above' : 'end the limits below'} ${at}`,
+  );
+}
+
+export function acceptedTooRarely(promised: number, nPieces: number, worst: number): InputError {
+  return new InputError(
+    WHERE,
+    `only ${shortNumber(promised)} of proposals are sure to be accepted after ${nPieces} pieces (worst near x = ${shortNumber(worst)})`,
+    'narrow the limits to where the density matters, or simplify the formula there',
+  );
+}
