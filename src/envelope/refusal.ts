@@ -54,8 +54,12 @@ export function undefinedOn({ from, to }: Stretch, reason: string): InputError {
   );
 }
 
-export function undefinedSide(x: number, reason: string, { direction }: Side): InputError {
-  const name = direction > 0 ? 'upper' : 'lower';
+export function undefinedSide(
+  x: number,
+  reason: string,
+  { direction, isBeyond }: Side,
+): InputError {
+  const name = isBeyond === direction > 0 ? 'upper' : 'lower';
   return new InputError(
     WHERE,
     `it is undefined at x = ${shortNumber(x)}, where ${reason}`,
