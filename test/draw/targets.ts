@@ -97,6 +97,41 @@ export const targets: readonly Target[] = [
   },
 ];
 
+/** (1 + x²/3)^−2 up to x: Student t with 3 degrees of freedom (A&S 26.7.3), times its constant. */
+function studentBelow(x: number): number {
+  const z = x / Math.sqrt(3);
+  const tail = Math.abs(z) > 1e100 ? 1 / z : z / (1 + z * z);
+  return (Math.sqrt(3) / 2) * (Math.atan(z) + tail);
+}
+
+/** Unbounded sides and poles, with cumulative areas in closed form. */
+export const sideTargets: readonly Target[] = [
+  {
+    name: '(1+x^2/3)^-2',
+    from: -Infinity,
+    to: Infinity,
+    envelope: () => proved('(1+x^2/3)^-2', -Infinity, Infinity),
+    areaBelow: studentBelow,
+    bounds: [],
+  },
+  {
+    name: 'x^-0.5*(1-x)^2',
+    from: 0,
+    to: 1,
+    envelope: () => proved('x^-0.5*(1-x)^2', 0, 1),
+    areaBelow: (x) => Math.sqrt(x) * (2 - x * (4 / 3 - (2 / 5) * x)),
+    bounds: [],
+  },
+  {
+    name: 'EXP(-2*(LN(x)-1)^2)/x',
+    from: 0,
+    to: Infinity,
+    envelope: () => proved('EXP(-2*(LN(x)-1)^2)/x', 0, Infinity),
+    areaBelow: (x) => bell(Math.log(x), 1, Math.SQRT1_2),
+    bounds: [],
+  },
+];
+
 export interface Bins {
   /** One more than there are bins. */
   readonly edges: Float64Array;
@@ -121,10 +156,13 @@ export function binsOf(target: Target, n: number, areaBelow = target.areaBelow):
   return { edges: Float64Array.from(edges), shares };
 }
 
+/** Farther out than this an unbounded side holds no bin's end. */
+const FAR = 2 ** 60;
+
 /** Where the area below reaches a value, by halving. */
 export function placeOf({ areaBelow }: Target, area: number, from: number, to: number): number {
-  let [lo, hi] = [from, to];
-  for (let i = 0; i < 60; i++) {
+  let [lo, hi] = [Math.max(from, -FAR), Math.min(to, FAR)];
+  for (let i = 0; i < 120; i++) {
     const mid = lo / 2 + hi / 2;
     if (areaBelow(mid) < area) lo = mid;
     else hi = mid;

@@ -3,7 +3,15 @@ import { keyOf } from '../../src/random/key';
 import { RowStream } from '../../src/random/stream';
 import { FALSE_ALARM, goodnessOfFit } from '../draw/statistics';
 import type { Target } from '../draw/targets';
-import { binsOf, count, drawInParts, placeOf, targets, twoHumpsBelow } from '../draw/targets';
+import {
+  binsOf,
+  count,
+  drawInParts,
+  placeOf,
+  sideTargets,
+  targets,
+  twoHumpsBelow,
+} from '../draw/targets';
 
 const ROWS = 1e8;
 const BINS = 500;
@@ -25,27 +33,30 @@ function tableDraws(target: Target, nPoints: number, n: number): Float64Array {
 }
 
 describe('Drawer.column over 10^8 rows', () => {
-  test.each(targets)('draws of $name follow the exact bin shares [law]', (target) => {
-    const bins = binsOf(target, BINS);
-    const counts = new Float64Array(bins.shares.length);
-    let [proposals, nearTies] = [0, 0];
-    for (const column of drawInParts(target, ROWS)) {
-      count(column.values, bins.edges, counts);
-      proposals += column.proposals;
-      nearTies += column.nearTies;
-    }
-    const filled = bins.shares.flatMap((share, i) => (share > 0 ? [i] : []));
-    const empty = bins.shares.flatMap((share, i) => (share > 0 ? [] : [counts[i]!]));
-    const p = goodnessOfFit(
-      filled.map((i) => counts[i]!),
-      filled.map((i) => bins.shares[i]!),
-    );
-    console.log(
-      `${target.name}: ${filled.length} bins, p = ${p.toPrecision(3)}, ${proposals} proposals, ${nearTies} near-ties`,
-    );
-    expect(p).toBeGreaterThan(FALSE_ALARM);
-    expect(empty.filter((n) => n > 0)).toEqual([]);
-  });
+  test.each([...targets, ...sideTargets])(
+    'draws of $name follow the exact bin shares [law]',
+    (target) => {
+      const bins = binsOf(target, BINS);
+      const counts = new Float64Array(bins.shares.length);
+      let [proposals, nearTies] = [0, 0];
+      for (const column of drawInParts(target, ROWS)) {
+        count(column.values, bins.edges, counts);
+        proposals += column.proposals;
+        nearTies += column.nearTies;
+      }
+      const filled = bins.shares.flatMap((share, i) => (share > 0 ? [i] : []));
+      const empty = bins.shares.flatMap((share, i) => (share > 0 ? [] : [counts[i]!]));
+      const p = goodnessOfFit(
+        filled.map((i) => counts[i]!),
+        filled.map((i) => bins.shares[i]!),
+      );
+      console.log(
+        `${target.name}: ${filled.length} bins, p = ${p.toPrecision(3)}, ${proposals} proposals, ${nearTies} near-ties`,
+      );
+      expect(p).toBeGreaterThan(FALSE_ALARM);
+      expect(empty.filter((n) => n > 0)).toEqual([]);
+    },
+  );
 
   // χ² is then larger by about n · 0.23 · (0.003/0.5)² = 830, twenty-six of its standard deviations.
   test('a density whose second hump is shifted by 0.003 is told apart [law]', () => {
