@@ -49,8 +49,8 @@ const MAX_ATTEMPTS = 1_000_000;
 const LINE_ROUNDING = 4e-15;
 /** The same for a hat, whose place and height are rounded over several steps. */
 const HAT_ROUNDING = 1e-11;
-/** The far end of a hat is never proposed; the chance that lies beyond is far below that of a rounding. */
-const LEAST_SHARE = 5.421010862427522e-20;
+/** 2^-54: the far end of a hat is never proposed, and its steepest place (2^-54)^-16 is still a double. */
+const LEAST_SHARE = 5.551115123125783e-17;
 
 // Mirrors the layout of guide.ts; written out here because the inner loop is twice as fast with literals.
 const STRIDE = 6;
