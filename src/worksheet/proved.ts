@@ -12,13 +12,14 @@ import { Drawer } from '../draw/column';
 import type { Envelope } from '../envelope/envelope';
 import { polylineEnvelope } from '../envelope/polyline';
 import { proveEnvelope } from '../envelope/prove';
-import { areaOf } from '../exact/area';
+import { Shares } from '../exact/shares';
 import { compile } from '../formula/compile';
+import type { Tape } from '../formula/tape';
 import type { Key } from '../random/key';
 
 const MAX_BYTES = 64 * 1024 * 1024;
-/** What a piece takes in its envelope and guide table, generously. */
-const BYTES_PER_PIECE = 600;
+/** What a piece takes in its envelope, guide table and exact shares, generously. */
+const BYTES_PER_PIECE = 2000;
 const BYTES_PER_STEP = 1500;
 
 /** A shape with its proof and what is drawn and told from it. */
@@ -26,6 +27,10 @@ export interface Proved {
   readonly key: string;
   readonly envelope: Envelope;
   readonly drawer: Drawer;
+  /** The compiled formula; null for a table. */
+  readonly tape: Tape | null;
+  /** Exact shares and quantiles, worked out when first asked for. */
+  readonly shares: Shares;
   /** The area under the scaled density, within its proved bounds. */
   readonly area: number;
 }
@@ -55,12 +60,28 @@ function remember<T extends Proved | Column>(
 export function prove(shape: Shape): Proved {
   const key = canonical(shape);
   return remember(key, () => {
-    const { envelope, nSteps } = inLine(shape.kind === 'formula' ? shape.line : undefined, () =>
+    const { envelope, tape } = inLine(shape.kind === 'formula' ? shape.line : undefined, () =>
       envelopeOf(shape),
     );
-    const value = { key, envelope, drawer: new Drawer(envelope), area: areaOf(envelope) };
-    return { value, bytes: envelope.pieces.length * BYTES_PER_PIECE + nSteps * BYTES_PER_STEP };
+    const nSteps = tape?.steps.length ?? 0;
+    return {
+      value: withShares({ key, envelope, drawer: new Drawer(envelope), tape }),
+      bytes: envelope.pieces.length * BYTES_PER_PIECE + nSteps * BYTES_PER_STEP,
+    };
   });
+}
+
+function withShares(proof: Omit<Proved, 'shares' | 'area'>): Proved {
+  let shares: Shares | undefined;
+  return {
+    ...proof,
+    get shares() {
+      return (shares ??= new Shares(proof.envelope));
+    },
+    get area() {
+      return this.shares.area;
+    },
+  };
 }
 
 /** The column of a proved shape under a key. */
@@ -76,11 +97,11 @@ export function drawColumn(
   });
 }
 
-function envelopeOf(shape: Shape): { envelope: Envelope; nSteps: number } {
-  if (shape.kind === 'table') return { envelope: polylineEnvelope(shape.polyline), nSteps: 0 };
+function envelopeOf(shape: Shape): { envelope: Envelope; tape: Tape | null } {
+  if (shape.kind === 'table') return { envelope: polylineEnvelope(shape.polyline), tape: null };
   const tape = compile(shape.sources, [shape.variable], shape.givens);
   const { from, to } = shape.limits;
-  return { envelope: proveEnvelope(tape, from, to), nSteps: tape.steps.length };
+  return { envelope: proveEnvelope(tape, from, to), tape };
 }
 
 function canonical(shape: Shape): string {

@@ -1,0 +1,163 @@
+/**
+ * Shares of the area below and above a point, and the point at a share.
+ *
+ * Areas are cumulated from both ends. A share is taken from the end it is nearer to,
+ * so a share of 1e-300 in either tail keeps its digits, and the two shares of a point
+ * add up to 1. The point at a share is found by Newton's method on the same areas,
+ * held between bounds that it narrows, so it undoes the share.
+ * Not handled: proofs of the last digits (cells.ts says what they rest on).
+ */
+import type { Envelope } from '../envelope/envelope';
+import { middle } from '../numeric/float';
+import type { Cell } from './cells';
+import { cellsOf } from './cells';
+import { heightOf } from './height';
+
+export type Side = 'below' | 'above';
+
+const MOST_STEPS = 120;
+
+/** The exact answers of one density. */
+export class Shares {
+  /** The area under the scaled density. Guarantee: within its proved bounds. */
+  readonly area: number;
+  private readonly cells: readonly Cell[];
+  /** Area before each cell, and after it. */
+  private readonly before: Float64Array;
+  private readonly after: Float64Array;
+  private readonly height: (x: number) => number;
+
+  constructor(private readonly envelope: Envelope) {
+    this.cells = cellsOf(envelope);
+    this.height = heightOf(envelope);
+    const areas = this.cells.map(({ area }) => area);
+    this.before = runningSums(areas);
+    this.after = runningSums(areas.reverse()).reverse();
+    const sum = this.before.at(-1)!;
+    this.area = Math.min(envelope.areaHi, Math.max(envelope.areaLo, sum));
+  }
+
+  /** The share of the area below x: 0 up to the limits, 1 beyond them. */
+  below(x: number): number {
+    return this.share(x, 'below');
+  }
+
+  /** The share of the area above x, with all its digits however small. */
+  above(x: number): number {
+    return this.share(x, 'above');
+  }
+
+  private share(x: number, side: Side): number {
+    const { cells, before, after } = this;
+    const isBelow = side === 'below';
+    if (!(x > this.envelope.from)) return isBelow ? 0 : 1;
+    if (x >= this.envelope.to) return isBelow ? 1 : 0;
+    const total = before[cells.length]!;
+    // The first cell that does not lie wholly below x.
+    const i = firstIndex(cells.length, (k) => cells[k]!.to > x);
+    const cell = cells[i];
+    const isInside = cell !== undefined && cell.from < x;
+    const lower = before[i]! + (isInside ? cell.areaOver(cell.from, x) : 0);
+    if (lower <= total / 2) return isBelow ? lower / total : 1 - lower / total;
+    const upper = isInside ? after[i + 1]! + cell.areaOver(x, cell.to) : after[i]!;
+    return isBelow ? 1 - upper / total : upper / total;
+  }
+
+  /**
+   * The least x with the share on its side: shares 0 and 1 give the limits.
+   * Domain: 0 ≤ share ≤ 1.
+   */
+  quantile(share: number, side: Side): number {
+    const { from, to } = this.envelope;
+    if (share <= 0) return side === 'below' ? from : to;
+    if (share >= 1) return side === 'below' ? to : from;
+    const total = this.before[this.cells.length]!;
+    // 1 − share is exact from one half on.
+    return share <= 0.5
+      ? this.pointAt(share * total, side)
+      : this.pointAt((1 - share) * total, side === 'below' ? 'above' : 'below');
+  }
+
+  private pointAt(area: number, side: Side): number {
+    const { cells, before, after } = this;
+    const last = cells.length - 1;
+    if (side === 'below') {
+      const i = Math.min(
+        last,
+        firstIndex(cells.length, (k) => before[k + 1]! >= area),
+      );
+      return this.pointIn(cells[i]!, area - before[i]!, side);
+    }
+    // From the top: the last cell at whose lower end the area above is reached.
+    const i = Math.max(0, firstIndex(cells.length, (k) => after[k]! < area) - 1);
+    return this.pointIn(cells[i]!, area - after[i + 1]!, side);
+  }
+
+  /** The point of a cell with `area` between it and the cell's end on that side. */
+  private pointIn(cell: Cell, area: number, side: Side): number {
+    if (!(area > 0)) return side === 'below' ? cell.from : cell.to;
+    if (area >= cell.area) return side === 'below' ? cell.to : cell.from;
+    let [lo, hi] = [cell.from, cell.to];
+    let x = this.firstGuess(cell, area, side);
+    let stride = Infinity;
+    for (let i = 0; i < MOST_STEPS; i++) {
+      if (!(x > lo && x < hi)) x = middle(lo, hi);
+      const reached =
+        side === 'below' ? cell.areaOver(cell.from, x) : cell.areaOver(x, cell.to);
+      // Positive when x must grow.
+      const missing = side === 'below' ? area - reached : reached - area;
+      if (missing === 0) return x;
+      if (missing > 0) lo = x;
+      else hi = x;
+      const step = missing / this.height(x);
+      const isSettled = Math.abs(step) <= 1e-16 * Math.max(Math.abs(x), hi - lo);
+      const next = x + step;
+      if (next === x || isSettled) return next > lo && next < hi ? next : x;
+      if (middle(lo, hi) === lo) return x;
+      // Newton's step if it stays inside and keeps shrinking, else half the bracket.
+      const isGood = next > lo && next < hi && Math.abs(step) < stride / 2;
+      stride = isGood ? Math.abs(step) : hi - lo;
+      x = isGood ? next : middle(lo, hi);
+    }
+    return x;
+  }
+
+  /** Where a straight line between the heights at the cell's ends has the share of area. */
+  private firstGuess({ from, to, area: whole }: Cell, area: number, side: Side): number {
+    const ends = [this.height(from), this.height(to)];
+    const [near, far] = side === 'below' ? ends : ends.reverse();
+    const share = area / whole;
+    const slant = (2 * near!) / (near! + far!);
+    const square = slant * slant + (4 - 4 * slant) * share;
+    const s = (2 * share) / (slant + Math.sqrt(Math.max(0, square)));
+    const t = s === s ? Math.min(1, s) : share;
+    return side === 'below' ? from + (to - from) * t : to - (to - from) * t;
+  }
+}
+
+/** The least index from 0 to n − 1 for which a condition, once true, stays true; n if none. */
+function firstIndex(n: number, isReached: (i: number) => boolean): number {
+  let lo = 0;
+  let hi = n;
+  while (lo < hi) {
+    const mid = (lo + hi) >> 1;
+    if (isReached(mid)) hi = mid;
+    else lo = mid + 1;
+  }
+  return lo;
+}
+
+/** Sums of the first 0, 1, … n numbers, with their rounding errors carried along (Neumaier 1974). */
+function runningSums(numbers: readonly number[]): Float64Array {
+  const sums = new Float64Array(numbers.length + 1);
+  let sum = 0;
+  let carry = 0;
+  numbers.forEach((number, i) => {
+    const next = sum + number;
+    carry +=
+      Math.abs(sum) >= Math.abs(number) ? sum - next + number : number - next + sum;
+    sum = next;
+    sums[i + 1] = sum + carry;
+  });
+  return sums;
+}
