@@ -4,4 +4,6 @@ export { CellErrorPassed, InputError } from './errors';
 export { acceptance } from './worksheet/acceptance';
 export { draw } from './worksheet/draw';
 export { envelope } from './worksheet/envelope';
+export { expect } from './worksheet/expect';
 export { profile } from './worksheet/profile';
+export { above, below, quantile } from './worksheet/shares';

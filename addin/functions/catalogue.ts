@@ -3,7 +3,17 @@
  * faces: the workbook, the command line, the local workbook, the README reference.
  * Names and help come from functions.json, so each is written once, in functions.ts.
  */
-import { acceptance, draw, envelope, InputError, profile } from '../../src/index';
+import {
+  above,
+  acceptance,
+  below,
+  draw,
+  envelope,
+  expect,
+  InputError,
+  profile,
+  quantile,
+} from '../../src/index';
 import type { Range } from '../../src/index';
 import metadata from './functions.json';
 
@@ -41,6 +51,12 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     acceptance(density, limits, rows, seed, label, givens),
   PROFILE: ([density = null, limits = null, count = null], givens) =>
     profile(density, limits, count, givens),
+  BELOW: ([density = null, limits = null, x = null], givens) => below(density, limits, x, givens),
+  ABOVE: ([density = null, limits = null, x = null], givens) => above(density, limits, x, givens),
+  QUANTILE: ([density = null, limits = null, share = null, side = null], givens) =>
+    quantile(density, limits, share, side, givens),
+  EXPECT: ([density = null, limits = null, quantity = null], givens) =>
+    expect(density, limits, quantity, givens),
 };
 
 interface FunctionMetadata {

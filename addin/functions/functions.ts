@@ -60,7 +60,7 @@ export function acceptance(
 }
 
 /**
- * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it. A heading row, then one row a point: x in its unit, the rest in share per unit of x.
+ * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it and the share of the area below x. A heading row, then one row a point: x in its unit, heights in share per unit of x, the last column as fraction of 1.
  * @customfunction PROFILE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
@@ -74,4 +74,74 @@ export function profile(
   givens?: any[][][],
 ): any[][] {
   return answer('PROFILE', [density, limits, count], givens);
+}
+
+/**
+ * Gives the exact share of the density's area below each x, as fraction of 1: the chance that a draw is below it. The result has the shape of x.
+ * @customfunction BELOW
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param x A number or a range of numbers, in the unit of the density's x.
+ * @param givens Values for the names in the formula: two columns, name and value.
+ */
+export function below(
+  density: any[][],
+  limits?: any[][],
+  x?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('BELOW', [density, limits, x], givens);
+}
+
+/**
+ * Gives the exact share of the density's area above each x, as fraction of 1: the chance that a draw is above it. Small shares keep their digits. The result has the shape of x.
+ * @customfunction ABOVE
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param x A number or a range of numbers, in the unit of the density's x.
+ * @param givens Values for the names in the formula: two columns, name and value.
+ */
+export function above(
+  density: any[][],
+  limits?: any[][],
+  x?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('ABOVE', [density, limits, x], givens);
+}
+
+/**
+ * Gives the x that has each share of the density's area below it, or above it: 0.9 gives the value that nine draws in ten stay below. The result has the shape of share, in the unit of x.
+ * @customfunction QUANTILE
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param share A fraction from 0 to 1 or a range of them. 0 and 1 give the limits.
+ * @param side below or above: on which side of x the share lies. Left out: below.
+ * @param givens Values for the names in the formula: two columns, name and value.
+ */
+export function quantile(
+  density: any[][],
+  limits?: any[][],
+  share?: any[][],
+  side?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('QUANTILE', [density, limits, share, side], givens);
+}
+
+/**
+ * Gives the exact mean of a quantity under the density, with proved bounds: the mean that many draws tend to. A heading row, then value, at least and at most in the unit of the quantity.
+ * @customfunction EXPECT
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param quantity A formula in x, such as x, x^2, MAX(0,x-60), or x>80 for a chance.
+ * @param givens Values for the names in the formula: two columns, name and value.
+ */
+export function expect(
+  density: any[][],
+  limits?: any[][],
+  quantity?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('EXPECT', [density, limits, quantity], givens);
 }

@@ -52,7 +52,7 @@ export function cellsOf(envelope: Envelope): readonly Cell[] {
   });
   const mostCells = 4 * drafts.length + MORE_CELLS;
   for (const isRelative of [false, true]) {
-    for (let isDone = false; !isDone && drafts.length < mostCells; ) {
+    for (let isDone = false; !isDone && drafts.length < mostCells;) {
       const allowed = allowedErrors(drafts, envelope.to - envelope.from, isRelative);
       const finer: Draft[] = [];
       drafts.forEach((draft, i) => {
@@ -106,24 +106,14 @@ function refined(draft: Draft, height: (x: number) => number, isEnd: boolean): r
   ];
 }
 
-function smoothCell(
-  height: (x: number) => number,
-  piece: Piece,
-  from: number,
-  to: number,
-): Cell {
+function smoothCell(height: (x: number) => number, piece: Piece, from: number, to: number): Cell {
   const { value, error } = smoothIntegral(height, from, to);
   const areaOver = (a: number, b: number): number =>
     withinLines(piece, a, b, smoothIntegral(height, a, b).value);
   return { from, to, area: withinLines(piece, from, to, value), error, areaOver };
 }
 
-function endpointCell(
-  height: (x: number) => number,
-  piece: Piece,
-  from: number,
-  to: number,
-): Cell {
+function endpointCell(height: (x: number) => number, piece: Piece, from: number, to: number): Cell {
   const { value, error } = endpointIntegral(height, from, to, PRECISE);
   const areaOver = (a: number, b: number): number =>
     withinLines(piece, a, b, endpointIntegral(height, a, b, PRECISE).value);

@@ -10,6 +10,7 @@
  * Not handled: proofs (the caller holds every result within proved bounds).
  */
 import * as elementary from '../numeric/elementary';
+import { middle } from '../numeric/float';
 
 export interface Estimate {
   readonly value: number;
@@ -27,18 +28,18 @@ const GAUSS_WEIGHTS = [
   0.06667134430868814,
 ];
 const SHARED_WEIGHTS = [
-  0.14773910490133849, 0.13470921731147333, 0.10938715880229764, 0.07503967481091995,
-  0.032558162307964727,
+  0.14773910490133849, 0.13470921731147334, 0.10938715880229764, 0.07503967481091996,
+  0.032558162307964725,
 ];
 const ADDED_NODES = [
   0.2943928627014602, 0.5627571346686047, 0.7808177265864169, 0.9301574913557082,
   0.9956571630258081,
 ];
 const ADDED_WEIGHTS = [
-  0.14277593857706008, 0.12349197626206585, 0.0931254545836976, 0.054755896574351995,
+  0.14277593857706009, 0.12349197626206584, 0.0931254545836976, 0.054755896574351995,
   0.011694638867371874,
 ];
-const CENTRE_WEIGHT = 0.14944555400291691;
+const CENTRE_WEIGHT = 0.1494455540029169;
 
 const values = new Float64Array(21);
 
@@ -65,8 +66,7 @@ export function smoothIntegral(f: (x: number) => number, a: number, b: number): 
   let spread = CENTRE_WEIGHT * Math.abs(atCentre - mean);
   for (let i = 0; i < 5; i++) {
     spread +=
-      SHARED_WEIGHTS[i]! *
-        (Math.abs(values[4 * i]! - mean) + Math.abs(values[4 * i + 1]! - mean)) +
+      SHARED_WEIGHTS[i]! * (Math.abs(values[4 * i]! - mean) + Math.abs(values[4 * i + 1]! - mean)) +
       ADDED_WEIGHTS[i]! *
         (Math.abs(values[4 * i + 2]! - mean) + Math.abs(values[4 * i + 3]! - mean));
   }
@@ -119,4 +119,37 @@ export function endpointIntegral(
     if (error <= wanted * Math.abs(value)) break;
   }
   return { value, error };
+}
+
+/** Error left to a stretch, as a share of the integral of |f|. */
+const PRECISE = 1e-15;
+const MOST_STRETCHES = 4000;
+
+interface Stretch {
+  readonly a: number;
+  readonly b: number;
+  readonly value: number;
+  readonly error: number;
+}
+
+/** The integral of f over neighbouring stretches [bounds[i], bounds[i + 1]], halved where f is not smooth. */
+export function refinedIntegral(
+  f: (x: number) => number,
+  stretches: readonly (readonly [from: number, to: number])[],
+): number {
+  const stretch = (a: number, b: number): Stretch => ({ a, b, ...smoothIntegral(f, a, b) });
+  let all = stretches.map(([a, b]) => stretch(a, b));
+  for (;;) {
+    const size = all.reduce((sum, { value }) => sum + Math.abs(value), 0);
+    const finer: Stretch[] = [];
+    all.forEach((s, i) => {
+      const m = middle(s.a, s.b);
+      const room = MOST_STRETCHES - finer.length - (all.length - i);
+      if (s.error <= PRECISE * size || m === s.a || room <= 0) finer.push(s);
+      else finer.push(stretch(s.a, m), stretch(m, s.b));
+    });
+    if (finer.length === all.length) break;
+    all = finer;
+  }
+  return all.reduce((sum, { value }) => sum + value, 0);
 }

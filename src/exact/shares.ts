@@ -102,8 +102,7 @@ export class Shares {
     let stride = Infinity;
     for (let i = 0; i < MOST_STEPS; i++) {
       if (!(x > lo && x < hi)) x = middle(lo, hi);
-      const reached =
-        side === 'below' ? cell.areaOver(cell.from, x) : cell.areaOver(x, cell.to);
+      const reached = side === 'below' ? cell.areaOver(cell.from, x) : cell.areaOver(x, cell.to);
       // Positive when x must grow.
       const missing = side === 'below' ? area - reached : reached - area;
       if (missing === 0) return x;
@@ -154,8 +153,7 @@ function runningSums(numbers: readonly number[]): Float64Array {
   let carry = 0;
   numbers.forEach((number, i) => {
     const next = sum + number;
-    carry +=
-      Math.abs(sum) >= Math.abs(number) ? sum - next + number : number - next + sum;
+    carry += Math.abs(sum) >= Math.abs(number) ? sum - next + number : number - next + sum;
     sum = next;
     sums[i + 1] = sum + carry;
   });

@@ -2,20 +2,28 @@
 import type { Range } from '../density/cells';
 import { given, numberIn, passErrors, singleCell } from '../density/cells';
 import type { Envelope } from '../envelope/envelope';
+import { heightOn } from '../envelope/hat';
 import { InputError } from '../errors';
-import { next, prev } from '../numeric/float';
+import { heightOf } from '../exact/height';
 import { onlyShape } from './envelope';
+import type { Proved } from './proved';
 import { prove } from './proved';
 
 const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)', givens: 4 };
 const COUNT = 'count (argument 3)';
 const DEFAULT_COUNT = 201;
 const MAX_COUNT = 100_000;
+/** An unbounded side is shown up to where this share of the area is left. */
+const LEFT_OUT = 0.00005;
 
 /**
- * Points from limit to limit (on an unbounded side: to where the pieces end): the density scaled to area 1 with its upper and lower line.
- * Shapes: a heading row, then count × 4. Units: x as in the density; the others share per unit of x.
- * Guarantee: none for the density's last digits (it is for looking at); the lines are the proved ones.
+ * Points from limit to limit: the density scaled to area 1 with its upper and lower line,
+ * and the share of the area below each. Where the limits are unbounded, the central 0.9999
+ * of the area; at a pole, from where the pieces begin.
+ * Shapes: a heading row, then count × 5. Units: x as in the density; heights as share per
+ * unit of x; share below as a fraction of 1.
+ * Guarantee: none for the density's last digits (it is for looking at); the lines are the
+ * proved ones, the shares those of BELOW.
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
  */
 export function profile(
@@ -24,16 +32,25 @@ export function profile(
   count: Range | null,
   givens: readonly Range[],
 ): Range {
-  const { envelope, area } = prove(onlyShape(density, limits, givens, PLACES));
+  const proved = prove(onlyShape(density, limits, givens, PLACES));
+  const { envelope, area, shares } = proved;
   const n = readCount(given(count));
-  const { pieces } = envelope;
-  const [from, to] = [pieces[0]!.from, pieces.at(-1)!.to];
+  const [from, to] = shownEnds(proved);
+  const height = heightOf(envelope);
   const rows = Array.from({ length: n }, (_, i) => {
     const x = i === n - 1 ? to : from + (to - from) * (i / (n - 1));
     const { upper, lower } = linesAt(envelope, x);
-    return [x, heightNear(envelope, x) / area, upper / area, lower / area];
+    return [x, height(x) / area, upper / area, lower / area, shares.below(x)];
   });
-  return [['x', 'density', 'upper', 'lower'], ...rows];
+  return [['x', 'density', 'upper', 'lower', 'share below'], ...rows];
+}
+
+function shownEnds({ envelope, shares }: Proved): readonly [from: number, to: number] {
+  const { from, to, pieces } = envelope;
+  return [
+    from === -Infinity ? shares.quantile(LEFT_OUT, 'below') : pieces[0]!.from,
+    to === Infinity ? shares.quantile(LEFT_OUT, 'above') : pieces.at(-1)!.to,
+  ];
 }
 
 function readCount(range: Range | null): number {
@@ -48,13 +65,15 @@ function readCount(range: Range | null): number {
   );
 }
 
-/** The density's height; where a single point is undefined (0^0 at an end), that of its neighbour. */
-function heightNear({ heightAt, from, to }: Envelope, x: number): number {
-  const candidates = [x, x < to ? next(x) : prev(x), x > from ? prev(x) : next(x)].map(heightAt);
-  return Math.max(0, candidates.find((height) => Number.isFinite(height)) ?? 0);
-}
-
-function linesAt({ pieces }: Envelope, x: number): { upper: number; lower: number } {
+function linesAt({ pieces, hats }: Envelope, x: number): { upper: number; lower: number } {
+  const isBeyond = x < pieces[0]!.from || x > pieces.at(-1)!.to;
+  if (isBeyond) {
+    const hat = hats.find(({ origin, direction, c }) => {
+      const inner = origin + direction * c;
+      return x < pieces[0]!.from ? inner <= pieces[0]!.from : inner >= pieces.at(-1)!.to;
+    });
+    return { upper: hat ? heightOn(hat, x) : 0, lower: 0 };
+  }
   let lo = 0;
   let hi = pieces.length - 1;
   while (lo < hi) {

@@ -62,11 +62,20 @@ describe('undercurve call', () => {
     expect(ran(['call', 'DRAW', spread])).toEqual(answer);
   });
 
+  /** Arguments for the functions that a block alone does not satisfy. */
+  const ARGUMENTS: Record<string, readonly unknown[]> = {
+    PROFILE: [BLOCK, null, 20],
+    BELOW: [BLOCK, null, [[3], [4]]],
+    ABOVE: [BLOCK, null, [[3], [4]]],
+    QUANTILE: [BLOCK, null, [[0.1], [0.9]]],
+    EXPECT: [BLOCK, null, 'x'],
+  };
+
   test.each(catalogue.map(({ name }) => name))('answers for UNDERCURVE.%s [law]', (name) => {
-    const count = name === 'PROFILE' ? [null, 20] : [];
-    const { status, out } = ran(['call', `UNDERCURVE.${name}`, JSON.stringify([BLOCK, ...count])]);
+    const args = ARGUMENTS[name] ?? [BLOCK];
+    const { status, out } = ran(['call', `UNDERCURVE.${name}`, JSON.stringify(args)]);
     expect(status).toBe(0);
-    expect((JSON.parse(out) as unknown[]).length).toBeGreaterThan(3);
+    expect((JSON.parse(out) as unknown[]).length).toBeGreaterThan(1);
   });
 
   test('ends with 1 and the message of the function on standard error for wrong input [law]', () => {

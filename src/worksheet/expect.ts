@@ -1,0 +1,72 @@
+/** EXPECT: the exact mean of a quantity under a density, with proved bounds. */
+import type { Range } from '../density/cells';
+import { given, isText, passErrors, quoted, singleCell } from '../density/cells';
+import { Givens, readGivens } from '../density/givens';
+import { DEFAULT_VARIABLE, readLimitCells } from '../density/limits';
+import type { Shape } from '../density/shape';
+import { InputError } from '../errors';
+import { expectation } from '../exact/expect';
+import { compile } from '../formula/compile';
+import { parse } from '../formula/parse';
+import type { Tape } from '../formula/tape';
+import { onlyShape } from './envelope';
+import { prove } from './proved';
+
+const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)', givens: 4 };
+const QUANTITY = 'quantity (argument 3)';
+
+/**
+ * The mean of a formula in the density's variable, weighted by the density.
+ * Shapes: a heading row value | at least | at most, then one row. Units: those of the quantity.
+ * Guarantee: the true mean lies between the two bounds; the value has 12 digits where
+ * density and quantity are smooth.
+ * @throws {InputError} as DRAW does, and when the quantity cannot be read, is undefined or
+ * has no bound where the density is above 0.
+ * @throws {CellErrorPassed} when a cell holds an error value.
+ */
+export function expect(
+  density: Range | null,
+  limits: Range | null,
+  quantity: Range | null,
+  givens: readonly Range[],
+): Range {
+  const shape = onlyShape(density, limits, givens, PLACES);
+  const measured = readQuantity(given(quantity), shape, limits, givens);
+  const { envelope, tape } = prove(shape);
+  const { value, atLeast, atMost } = expectation(envelope, tape, measured, QUANTITY);
+  return [
+    ['value', 'at least', 'at most'],
+    [value, atLeast, atMost],
+  ];
+}
+
+function readQuantity(
+  range: Range | null,
+  shape: Shape,
+  limits: Range | null,
+  givens: readonly Range[],
+): Tape {
+  const expected = 'give a formula as text, such as x or MAX(0,x-60)';
+  if (range === null) throw new InputError(QUANTITY, 'it is missing', expected);
+  passErrors(range);
+  const cell = singleCell(range, QUANTITY);
+  if (!isText(cell) && typeof cell !== 'number')
+    throw new InputError(QUANTITY, `${quoted(cell)} is not a formula`, expected);
+  const text = String(cell);
+  const source = { text, where: 'Quantity', tree: parse(text, 'Quantity') };
+  const { variable, constants } = namesOf(shape, given(limits), givens);
+  return compile([source], [variable], constants);
+}
+
+/** The names that a quantity may use. */
+function namesOf(
+  shape: Shape,
+  limits: Range | null,
+  givens: readonly Range[],
+): { variable: string; constants: ReadonlyMap<string, number> } {
+  if (shape.kind === 'formula') return shape;
+  const variable = limits ? readLimitCells(limits, PLACES.limits).variable : DEFAULT_VARIABLE;
+  const named = new Givens([variable]);
+  readGivens(givens, named, PLACES.givens);
+  return { variable, constants: named.constants };
+}
