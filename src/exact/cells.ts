@@ -14,16 +14,27 @@ import type { Envelope } from '../envelope/envelope';
 import type { Piece } from '../envelope/piece';
 import { middle } from '../numeric/float';
 import { heightOf } from './height';
+import type { Estimate } from './quadrature';
 import { endpointIntegral, smoothIntegral } from './quadrature';
+import { hatCell, isLowerHat } from './side';
 
-/** A stretch of the limits with its area; areas are those of the scaled density. */
+/**
+ * A stretch of the limits with its area; areas are those of the scaled density. Places
+ * in it are told by a parameter that rises with x from `start` to `end`: x itself
+ * within the pieces, another one under a hat.
+ */
 export interface Cell {
   readonly from: number;
   readonly to: number;
+  readonly start: number;
+  readonly end: number;
   readonly area: number;
-  readonly error: number;
-  /** The area over a part of the cell that shares one end with it. */
+  /** The area over a part of the cell that shares one end with it; the two are parameters. */
   readonly areaOver: (a: number, b: number) => number;
+  /** The area for one unit of the parameter. */
+  readonly slopeAt: (u: number) => number;
+  readonly placeAt: (u: number) => number;
+  readonly parameterOf: (x: number) => number;
 }
 
 /** Wanted error of a cell, relative to the area on its smaller side. */
@@ -36,24 +47,49 @@ const MOST_HALVINGS = 48;
 /** Cells beyond four for each piece. */
 const MORE_CELLS = 3000;
 
+type Height = (x: number) => number;
+
 interface Draft {
   readonly piece: Piece;
-  readonly cell: Cell;
+  readonly cell: Cell & { readonly error: number };
   readonly halvings: number;
 }
 
-/** The cells of an envelope in order; those without area are left out. */
+/** The cells of an envelope in order, those under hats included; those without area are left out. */
 export function cellsOf(envelope: Envelope): readonly Cell[] {
-  if (envelope.densityAt === null) return envelope.pieces.map(straightCell).filter(hasArea);
+  const { pieces, hats } = envelope;
+  if (envelope.densityAt === null) return pieces.map(straightCell).filter(hasArea);
   const height = heightOf(envelope);
-  let drafts = envelope.pieces.map((piece): Draft => {
+  const sides = hats.map((hat) => ({
+    isLower: isLowerHat(hat, envelope),
+    cell: hatCell(hat, envelope, height),
+  }));
+  const beyond = (isLower: boolean): readonly Cell[] =>
+    sides.flatMap((side) => (side.isLower === isLower ? [side.cell] : []));
+  const [lower, upper] = [beyond(true), beyond(false)];
+  const within = pieceCells(pieces, height, areaOf(lower), areaOf(upper));
+  return [...lower, ...within, ...upper].filter(hasArea);
+}
+
+function areaOf(cells: readonly Cell[]): number {
+  return cells.reduce((sum, { area }) => sum + area, 0);
+}
+
+/** The cells of the pieces, with these areas before and after them. */
+function pieceCells(
+  pieces: readonly Piece[],
+  height: Height,
+  before: number,
+  after: number,
+): readonly Cell[] {
+  let drafts = pieces.map((piece): Draft => {
     const cell = smoothCell(height, piece, piece.from, piece.to);
     return { piece, cell, halvings: 0 };
   });
   const mostCells = 4 * drafts.length + MORE_CELLS;
   for (const isRelative of [false, true]) {
     for (let isDone = false; !isDone && drafts.length < mostCells;) {
-      const allowed = allowedErrors(drafts, envelope.to - envelope.from, isRelative);
+      const allowed = allowedErrors(drafts, before, after, isRelative);
       const finer: Draft[] = [];
       drafts.forEach((draft, i) => {
         const room = mostCells - finer.length - (drafts.length - i);
@@ -64,7 +100,7 @@ export function cellsOf(envelope: Envelope): readonly Cell[] {
       drafts = finer;
     }
   }
-  return withinPieces(drafts).filter(hasArea);
+  return withinPieces(drafts);
 }
 
 function hasArea({ area }: Cell): boolean {
@@ -74,14 +110,17 @@ function hasArea({ area }: Cell): boolean {
 /** What each cell's error may be, and whether the cell is the first or last with any area. */
 function allowedErrors(
   drafts: readonly Draft[],
-  width: number,
+  areaBefore: number,
+  areaAfter: number,
   isRelative: boolean,
 ): readonly { error: number; isEnd: boolean }[] {
-  const total = drafts.reduce((sum, { cell }) => sum + cell.area, 0);
+  const width = drafts.at(-1)!.cell.to - drafts[0]!.cell.from;
+  const total = drafts.reduce((sum, { cell }) => sum + cell.area, areaBefore + areaAfter);
   const least = Math.max(LEAST_SHARE * total, 5e-324 * width);
   const after = new Float64Array(drafts.length + 1);
+  after[drafts.length] = areaAfter;
   for (let i = drafts.length - 1; i >= 0; i--) after[i] = after[i + 1]! + drafts[i]!.cell.area;
-  let before = 0;
+  let before = areaBefore;
   return drafts.map(({ cell: { area } }, i) => {
     const isEnd = area > 0 && (before === 0 || after[i + 1] === 0);
     before += area;
@@ -91,7 +130,7 @@ function allowedErrors(
 }
 
 /** The draft in two halves, or as one cell for a root or pole at its end, or as it is. */
-function refined(draft: Draft, height: (x: number) => number, isEnd: boolean): readonly Draft[] {
+function refined(draft: Draft, height: Height, isEnd: boolean): readonly Draft[] {
   const { piece, halvings } = draft;
   const { from, to, error } = draft.cell;
   const m = middle(from, to);
@@ -106,37 +145,61 @@ function refined(draft: Draft, height: (x: number) => number, isEnd: boolean): r
   ];
 }
 
-function smoothCell(height: (x: number) => number, piece: Piece, from: number, to: number): Cell {
-  const { value, error } = smoothIntegral(height, from, to);
-  const areaOver = (a: number, b: number): number =>
-    withinLines(piece, a, b, smoothIntegral(height, a, b).value);
-  return { from, to, area: withinLines(piece, from, to, value), error, areaOver };
+function smoothCell(height: Height, piece: Piece, from: number, to: number): Draft['cell'] {
+  return cellBy((a, b) => smoothIntegral(height, a, b), height, piece, from, to);
 }
 
-function endpointCell(height: (x: number) => number, piece: Piece, from: number, to: number): Cell {
-  const { value, error } = endpointIntegral(height, from, to, PRECISE);
-  const areaOver = (a: number, b: number): number =>
-    withinLines(piece, a, b, endpointIntegral(height, a, b, PRECISE).value);
-  return { from, to, area: withinLines(piece, from, to, value), error, areaOver };
+function endpointCell(height: Height, piece: Piece, from: number, to: number): Draft['cell'] {
+  const integral = (a: number, b: number): Estimate => endpointIntegral(height, a, b, PRECISE);
+  return cellBy(integral, height, piece, from, to);
+}
+
+function cellBy(
+  integral: (a: number, b: number) => Estimate,
+  height: Height,
+  piece: Piece,
+  from: number,
+  to: number,
+): Draft['cell'] {
+  const { value, error } = integral(from, to);
+  return {
+    ...placed(from, to),
+    area: withinLines(piece, from, to, value),
+    error,
+    areaOver: (a, b) => withinLines(piece, a, b, integral(a, b).value),
+    slopeAt: height,
+  };
+}
+
+/** A cell whose parameter is x. */
+function placed(
+  from: number,
+  to: number,
+): Pick<Cell, 'from' | 'to' | 'start' | 'end' | 'placeAt' | 'parameterOf'> {
+  const same = (x: number): number => x;
+  return { from, to, start: from, end: to, placeAt: same, parameterOf: same };
 }
 
 /** A piece whose density is its own straight line. */
 function straightCell(piece: Piece): Cell {
   const { from, to } = piece;
   const areaOver = (a: number, b: number): number => lineArea(piece, a, b, 'upper');
-  return { from, to, area: areaOver(from, to), error: 0, areaOver };
+  const slopeAt = (x: number): number => lineHeight(piece, x, 'upper');
+  return { ...placed(from, to), area: areaOver(from, to), areaOver, slopeAt };
 }
 
-function lineArea(p: Piece, a: number, b: number, line: 'upper' | 'lower'): number {
+function lineHeight(p: Piece, x: number, line: 'upper' | 'lower'): number {
   const [left, right] =
     line === 'upper' ? [p.upperLeft, p.upperRight] : [p.lowerLeft, p.lowerRight];
   const width = p.to - p.from;
-  // Heights are taken from the nearer end, so that a line that comes down to 0 keeps its digits.
-  const on = (x: number): number =>
-    x - p.from <= p.to - x
-      ? left + (right - left) * ((x - p.from) / width)
-      : right + (left - right) * ((p.to - x) / width);
-  return (on(a) / 2 + on(b) / 2) * (b - a);
+  // From the nearer end, so that a line that comes down to 0 keeps its digits.
+  return x - p.from <= p.to - x
+    ? left + (right - left) * ((x - p.from) / width)
+    : right + (left - right) * ((p.to - x) / width);
+}
+
+function lineArea(piece: Piece, a: number, b: number, line: 'upper' | 'lower'): number {
+  return (lineHeight(piece, a, line) / 2 + lineHeight(piece, b, line) / 2) * (b - a);
 }
 
 function withinLines(piece: Piece, a: number, b: number, area: number): number {
@@ -158,6 +221,7 @@ function withinPieces(drafts: readonly Draft[]): readonly Cell[] {
       ...cell,
       area: cell.area * factor,
       areaOver: (a, b) => cell.areaOver(a, b) * factor,
+      slopeAt: (u) => cell.slopeAt(u) * factor,
     };
   });
 }

@@ -23,6 +23,8 @@ export interface DensityOver {
 }
 
 export interface DensityJets {
+  /** The formula's encloser, for what is not within the pieces; null for straight lines. */
+  readonly encloser: Encloser | null;
   /** Encloses the density over [from, to], a part of a piece or a sliver between pieces (null). */
   over(from: number, to: number, piece: Piece | null): DensityOver;
 }
@@ -33,7 +35,7 @@ export function densityJets(envelope: Envelope, tape: Tape | null): DensityJets 
 }
 
 class FormulaJets implements DensityJets {
-  private readonly encloser: Encloser;
+  readonly encloser: Encloser;
   private readonly atA;
   private readonly atB;
   private readonly jet = J.jet();
@@ -69,6 +71,7 @@ class FormulaJets implements DensityJets {
 
 /** Straight lines: one a piece, known exactly. */
 class LineJets implements DensityJets {
+  readonly encloser = null;
   private readonly jet = J.jet();
   private readonly atFrom = I.interval();
   private readonly atTo = I.interval();

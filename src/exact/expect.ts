@@ -8,19 +8,24 @@
  * times the area of the part. Parts are halved where that leaves most open. Where g
  * has a kink or a jump, parts end at neighbouring doubles on either side.
  * The value comes from quadrature and is held within the bounds.
+ * Beyond the pieces, towards ±∞ or into a pole, the growth of g·f proves a hat over it,
+ * as the envelope's own; where that leaves too much open it begins further out.
  * Not handled: quantities without bound within the limits.
  */
 import FlatQueue from 'flatqueue';
 import { findCrossing } from '../envelope/crossing';
 import type { Envelope } from '../envelope/envelope';
+import type { Hat } from '../envelope/hat';
+import { hatOver } from '../envelope/hat';
 import type { Piece } from '../envelope/piece';
 import { InputError } from '../errors';
 import type { PointValues } from '../formula/enclose';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
+import { SideEncloser } from '../formula/side';
 import type { Tape } from '../formula/tape';
-import { addDown, addUp, divDown, divUp, middle, powerOfTwo } from '../numeric/float';
+import { addDown, addUp, divDown, divUp, middle, mulUp, powerOfTwo } from '../numeric/float';
 import * as I from '../numeric/interval';
 import * as J from '../numeric/jet';
 import { shortNumber } from '../numeric/text';
@@ -28,6 +33,7 @@ import type { DensityJets } from './density';
 import { densityJets } from './density';
 import { heightOf } from './height';
 import { refinedIntegral, smoothIntegral } from './quadrature';
+import { hatIntegral, isLowerHat } from './side';
 
 export interface Expectation {
   readonly value: number;
@@ -38,17 +44,23 @@ export interface Expectation {
 /** Bounds are narrowed until they are this near, as a share of the mean distance of g from c. */
 const WANTED = 1e-7;
 const MOST_PARTS = 2000;
+/** What lies beyond the parts should be no more than this, as a share of the same. */
+const WANTED_BEYOND = 2e-8;
+/** Doublings of the distance at which the parts end. */
+const MOST_DOUBLINGS = 200;
 /** A part narrower than this share of the limits, or than the second one if g is defined in part, is not halved further. */
 const NARROW = powerOfTwo(-60);
 const NEGLIGIBLE = powerOfTwo(-42);
 /** Kinks and jumps of the quantity that are cut out of one stretch at a time. */
 const MOST_CUTS = 64;
 
-/** A stretch of the limits; `piece` is null for a sliver that the envelope leaves out. */
+/** A stretch of the limits; `piece` is null outside the pieces. */
 interface Stretch {
   readonly from: number;
   readonly to: number;
   readonly piece: Piece | null;
+  /** True for a sliver that the envelope leaves out. */
+  readonly isSliver?: boolean;
 }
 
 /** A stretch with an enclosure of ∫(g − c)f over it. */
@@ -93,51 +105,132 @@ class Expecter {
 
   constructor(
     private readonly envelope: Envelope,
-    tape: Tape | null,
+    private readonly densityTape: Tape | null,
     private readonly quantity: Tape,
     private readonly where: string,
   ) {
     this.encloser = new Encloser(quantity);
-    this.density = densityJets(envelope, tape);
+    this.density = densityJets(envelope, densityTape);
     this.height = heightOf(envelope);
     this.atA = this.encloser.pointValues();
     this.atB = this.encloser.pointValues();
     this.atCut = this.encloser.pointValues();
-    this.span = envelope.to - envelope.from;
+    this.span = envelope.pieces.at(-1)!.to - envelope.pieces[0]!.from;
     this.mayTurn = quantity.steps.some(({ operation }) => operation.turnsOn !== undefined);
   }
 
   expect(): Expectation {
-    const { areaLo, areaHi, pieces } = this.envelope;
+    const { areaLo, areaHi, pieces, hats } = this.envelope;
     const stretches = pieces
       .map((piece): Stretch => ({ from: piece.from, to: piece.to, piece }))
       .flatMap((stretch) => this.cutAtTurns(stretch));
     const value = evaluator(this.quantity);
-    const sum = (f: (x: number) => number): number =>
+    const rough = (f: (x: number) => number): number =>
       stretches.reduce((total, { from, to }) => total + smoothIntegral(f, from, to).value, 0);
-    const rough = sum((x) => finite(value(x)) * this.height(x)) / sum(this.height);
+    const integral = (weight: (x: number) => number): number =>
+      refinedIntegral(
+        (x) => weight(x) * this.height(x),
+        stretches.map(({ from, to }) => [from, to] as const),
+      ) + hats.reduce((sum, hat) => sum + hatIntegral(hat, this.height, weight), 0);
     const { isConstant, value: constant } = this.quantity.steps[this.quantity.root]!;
-    this.centre = isConstant && constant - constant === 0 ? constant : finite(rough);
-    const offset = (x: number): number => finite(value(x) - this.centre) * this.height(x);
-    const scale = sum((x) => Math.abs(offset(x)));
-    const { lo, hi } = this.bounds([...stretches, ...this.slivers()], scale);
+    this.centre =
+      isConstant && constant - constant === 0
+        ? constant
+        : finite(rough((x) => finite(value(x)) * this.height(x)) / rough(this.height));
+    const offset = (x: number): number => finite(value(x) - this.centre);
+    const mean = this.centre + integral(offset) / integral(() => 1);
+    this.centre = finite(mean);
+    const scale = rough((x) => Math.abs(offset(x)) * this.height(x));
+    const sides = hats.map((hat) => this.side(hat, scale));
+    const within = this.bounds(
+      [...stretches, ...sides.flatMap((side) => side.stretches), ...this.slivers()],
+      scale,
+    );
+    const beyond = sides.reduce((sum, side) => addUp(sum, side.most), 0);
+    const [lo, hi] = [addDown(within.lo, -beyond), addUp(within.hi, beyond)];
     const atLeast = addDown(this.centre, lo < 0 ? divDown(lo, areaLo) : divDown(lo, areaHi));
     const atMost = addUp(this.centre, hi > 0 ? divUp(hi, areaLo) : divUp(hi, areaHi));
-    const integral = refinedIntegral(
-      offset,
-      stretches.map(({ from, to }) => [from, to] as const),
-    );
-    const mean = this.centre + integral / sum(this.height);
     return { value: Math.min(atMost, Math.max(atLeast, mean)), atLeast, atMost };
+  }
+
+  /**
+   * A hat over |g|·f and |c|·f from some way out, and the stretches up to there. The
+   * most is a bound of what the integral of (g − c)f holds beyond them.
+   */
+  private side(hat: Hat, scale: number): { most: number; stretches: readonly Stretch[] } {
+    const { origin, direction, isBeyond } = hat;
+    const ofDensity = new SideEncloser(this.densityTape!, this.density.encloser!, hat);
+    const ofQuantity = new SideEncloser(this.quantity, this.encloser, hat);
+    let best: { most: number; distance: number } | null = null;
+    let isInfinite = false;
+    for (let k = 0; k < MOST_DOUBLINGS; k++) {
+      const distance = hat.c * powerOfTwo(isBeyond ? k : -k);
+      const x = origin + direction * distance;
+      if (!Number.isFinite(x) || x === origin) break;
+      const most = this.beyond(hat, distance, x, ofDensity, ofQuantity);
+      if (most === 'infinite') isInfinite = true;
+      if (typeof most === 'string') continue;
+      if (best === null || most < best.most) best = { most, distance };
+      if (most <= WANTED_BEYOND * scale) break;
+    }
+    if (best === null) throw this.refusedSide(hat, isInfinite);
+    const stretches: Stretch[] = [];
+    for (let t = hat.c; t !== best.distance; t *= isBeyond ? 2 : 0.5) {
+      const [a, b] = [t, isBeyond ? 2 * t : t / 2].map((d) => origin + direction * d);
+      stretches.push({ from: Math.min(a!, b!), to: Math.max(a!, b!), piece: null });
+    }
+    return { most: best.most, stretches: stretches.flatMap((each) => this.cutAtTurns(each)) };
+  }
+
+  /** A bound of the integral of |g − c|·f from a distance on. */
+  private beyond(
+    hat: Hat,
+    distance: number,
+    x: number,
+    ofDensity: SideEncloser,
+    ofQuantity: SideEncloser,
+  ): number | 'infinite' | 'unknown' {
+    const f = ofDensity.factors(distance);
+    const g = ofQuantity.factors(distance);
+    if (f === null || g === null) return 'unknown';
+    // Beyond the doubles no factor is left out, which needs no scale.
+    const { exponent } = this.envelope;
+    const scale = Math.abs(exponent) <= 1000 ? powerOfTwo(-exponent) : 0;
+    this.density.encloser!.densityAt(x, this.room);
+    const atX = Math.max(0, this.room.hi);
+    this.encloser.densityAt(x, this.room);
+    const size = Math.max(Math.abs(this.room.lo), Math.abs(this.room.hi));
+    const product = hatOver(hat, distance, [...f, ...g], mulUp(atX, size), scale);
+    const own = this.centre === 0 ? null : hatOver(hat, distance, f, atX, scale);
+    if (typeof product === 'string') return product;
+    if (typeof own === 'string') return own;
+    return addUp(product.hat.area, own ? mulUp(Math.abs(this.centre), own.hat.area) : 0);
+  }
+
+  private refusedSide({ origin, direction, isBeyond }: Hat, isInfinite: boolean): InputError {
+    const place = isBeyond
+      ? `towards ${direction > 0 ? 'larger' : 'smaller'} x`
+      : `near x = ${shortNumber(origin)}`;
+    return new InputError(
+      this.where,
+      isInfinite
+        ? `its mean is infinite, by what lies ${place}`
+        : `its mean cannot be bounded ${place}`,
+      'cap it with MIN or MAX, or give limits that leave the place out',
+    );
   }
 
   /** What the envelope leaves out around jumps. */
   private slivers(): Stretch[] {
-    const { from, to, pieces } = this.envelope;
-    const ends = [from, ...pieces.map((piece) => piece.to)];
-    const starts = [...pieces.map((piece) => piece.from), to];
+    const { from, to, pieces, hats } = this.envelope;
+    const isUnder = (isLower: boolean): boolean =>
+      hats.some((hat) => isLowerHat(hat, this.envelope) === isLower);
+    const first = pieces[0]!.from;
+    const last = pieces.at(-1)!.to;
+    const ends = [isUnder(true) ? first : from, ...pieces.map((piece) => piece.to)];
+    const starts = [...pieces.map((piece) => piece.from), isUnder(false) ? last : to];
     return starts.flatMap((start, i) =>
-      start > ends[i]! ? [{ from: ends[i]!, to: start, piece: null }] : [],
+      start > ends[i]! ? [{ from: ends[i]!, to: start, piece: null, isSliver: true }] : [],
     );
   }
 
@@ -192,7 +285,7 @@ class Expecter {
     const open = [stretch];
     for (let cuts = 0; open.length > 0;) {
       const next = open.pop()!;
-      const { from, to, piece } = next;
+      const { from, to } = next;
       this.encloser.at(from, this.atA);
       this.encloser.at(to, this.atB);
       const { turn } = this.encloser.over(from, to, this.atA, this.atB);
@@ -204,9 +297,9 @@ class Expecter {
       }
       cuts++;
       const { lo, hi } = crossing;
-      if (hi > lo) done.push({ from: Math.max(from, lo), to: Math.min(to, hi), piece });
-      if (hi < to) open.push({ from: hi, to, piece });
-      if (lo > from) open.push({ from, to: lo, piece });
+      if (hi > lo) done.push({ ...next, from: Math.max(from, lo), to: Math.min(to, hi) });
+      if (hi < to) open.push({ ...next, from: hi });
+      if (lo > from) open.push({ ...next, to: lo });
     }
     return done;
   }
@@ -250,7 +343,7 @@ class Expecter {
       meetTrapezoid(moment, atFrom, atTo, product.h, width, cube);
     }
     // A sliver's mass is not drawn.
-    const isSliver = piece === null;
+    const isSliver = stretch.isSliver === true;
     const lo = isSliver ? Math.min(0, moment.lo) : moment.lo;
     const hi = isSliver ? Math.max(0, moment.hi) : moment.hi;
     const isInPart = defined !== Defined.Everywhere && to - from >= NEGLIGIBLE * this.span;

@@ -19,6 +19,8 @@ export function heightOf(
     if (densityAt === null) return heightAt(x);
     densityAt(x, enclosure);
     const { lo, hi } = enclosure;
+    // What may be 0 and is next to nothing must not be taken for half of that.
+    if (lo <= 0 && hi < SAFE) return 0;
     return hi < Infinity ? Math.max(0, lo) / 2 + Math.max(0, hi) / 2 : NaN;
   };
   return (x) => {

@@ -11,7 +11,6 @@ import type { Envelope } from '../envelope/envelope';
 import { middle } from '../numeric/float';
 import type { Cell } from './cells';
 import { cellsOf } from './cells';
-import { heightOf } from './height';
 
 export type Side = 'below' | 'above';
 
@@ -25,11 +24,9 @@ export class Shares {
   /** Area before each cell, and after it. */
   private readonly before: Float64Array;
   private readonly after: Float64Array;
-  private readonly height: (x: number) => number;
 
   constructor(private readonly envelope: Envelope) {
     this.cells = cellsOf(envelope);
-    this.height = heightOf(envelope);
     const areas = this.cells.map(({ area }) => area);
     this.before = runningSums(areas);
     this.after = runningSums(areas.reverse()).reverse();
@@ -57,9 +54,10 @@ export class Shares {
     const i = firstIndex(cells.length, (k) => cells[k]!.to > x);
     const cell = cells[i];
     const isInside = cell !== undefined && cell.from < x;
-    const lower = before[i]! + (isInside ? cell.areaOver(cell.from, x) : 0);
+    const u = isInside ? cell.parameterOf(x) : 0;
+    const lower = before[i]! + (isInside ? cell.areaOver(cell.start, u) : 0);
     if (lower <= total / 2) return isBelow ? lower / total : 1 - lower / total;
-    const upper = isInside ? after[i + 1]! + cell.areaOver(x, cell.to) : after[i]!;
+    const upper = isInside ? after[i + 1]! + cell.areaOver(u, cell.end) : after[i]!;
     return isBelow ? 1 - upper / total : upper / total;
   }
 
@@ -95,43 +93,60 @@ export class Shares {
 
   /** The point of a cell with `area` between it and the cell's end on that side. */
   private pointIn(cell: Cell, area: number, side: Side): number {
-    if (!(area > 0)) return side === 'below' ? cell.from : cell.to;
-    if (area >= cell.area) return side === 'below' ? cell.to : cell.from;
-    let [lo, hi] = [cell.from, cell.to];
-    let x = this.firstGuess(cell, area, side);
-    let stride = Infinity;
-    for (let i = 0; i < MOST_STEPS; i++) {
-      if (!(x > lo && x < hi)) x = middle(lo, hi);
-      const reached = side === 'below' ? cell.areaOver(cell.from, x) : cell.areaOver(x, cell.to);
-      // Positive when x must grow.
-      const missing = side === 'below' ? area - reached : reached - area;
-      if (missing === 0) return x;
-      if (missing > 0) lo = x;
-      else hi = x;
-      const step = missing / this.height(x);
-      const isSettled = Math.abs(step) <= 1e-16 * Math.max(Math.abs(x), hi - lo);
-      const next = x + step;
-      if (next === x || isSettled) return next > lo && next < hi ? next : x;
-      if (middle(lo, hi) === lo) return x;
-      // Newton's step if it stays inside and keeps shrinking, else half the bracket.
-      const isGood = next > lo && next < hi && Math.abs(step) < stride / 2;
-      stride = isGood ? Math.abs(step) : hi - lo;
-      x = isGood ? next : middle(lo, hi);
-    }
-    return x;
+    const isBelow = side === 'below';
+    if (!(area > 0)) return isBelow ? cell.from : cell.to;
+    if (area >= cell.area) return isBelow ? cell.to : cell.from;
+    return cell.placeAt(parameterAt(cell, area, isBelow));
   }
+}
 
-  /** Where a straight line between the heights at the cell's ends has the share of area. */
-  private firstGuess({ from, to, area: whole }: Cell, area: number, side: Side): number {
-    const ends = [this.height(from), this.height(to)];
-    const [near, far] = side === 'below' ? ends : ends.reverse();
-    const share = area / whole;
-    const slant = (2 * near!) / (near! + far!);
-    const square = slant * slant + (4 - 4 * slant) * share;
-    const s = (2 * share) / (slant + Math.sqrt(Math.max(0, square)));
-    const t = s === s ? Math.min(1, s) : share;
-    return side === 'below' ? from + (to - from) * t : to - (to - from) * t;
+/** Newton's method for the parameter, within a bracket that narrows. */
+function parameterAt(cell: Cell, area: number, isBelow: boolean): number {
+  let [lo, hi] = [cell.start, cell.end];
+  let u = firstGuess(cell, area, isBelow);
+  let stride = Infinity;
+  for (let i = 0; i < MOST_STEPS; i++) {
+    if (!(u > lo && u < hi)) u = middle(lo, hi);
+    const reached = isBelow ? cell.areaOver(cell.start, u) : cell.areaOver(u, cell.end);
+    // Positive when u must grow.
+    const missing = isBelow ? area - reached : reached - area;
+    if (missing === 0) return u;
+    if (missing > 0) lo = u;
+    else hi = u;
+    const step = missing / cell.slopeAt(u);
+    const next = u + step;
+    const isInside = next > lo && next < hi;
+    if (next === u || Math.abs(step) <= 1e-16 * Math.abs(u)) return isInside ? next : u;
+    if (middle(lo, hi) === lo) return u;
+    // Newton's step if it stays inside and keeps shrinking, else half the bracket.
+    const isGood = isInside && Math.abs(step) < stride / 2;
+    stride = isGood ? Math.abs(step) : hi - lo;
+    u = isGood ? next : between(lo, hi);
   }
+  return u;
+}
+
+/** The middle of a bracket; by its logarithm where it spans many sizes on one side of 0. */
+function between(lo: number, hi: number): number {
+  const [a, b] = [Math.abs(lo), Math.abs(hi)];
+  const isWide = lo * hi >= 0 && Math.max(a, b) > 16 * Math.min(a, b);
+  if (!isWide) return middle(lo, hi);
+  const small = Math.max(Math.min(a, b), Math.max(a, b) * 1e-300);
+  const m = Math.sqrt(small) * Math.sqrt(Math.max(a, b)) * (lo < 0 || hi < 0 ? -1 : 1);
+  return m > lo && m < hi ? m : middle(lo, hi);
+}
+
+/** Where a straight line between the slopes at the cell's ends has the share of area. */
+function firstGuess(cell: Cell, area: number, isBelow: boolean): number {
+  const { start, end } = cell;
+  const ends = [cell.slopeAt(start), cell.slopeAt(end)];
+  const [near, far] = isBelow ? ends : ends.reverse();
+  const share = area / cell.area;
+  const slant = (2 * near!) / (near! + far!);
+  const square = slant * slant + (4 - 4 * slant) * share;
+  const s = (2 * share) / (slant + Math.sqrt(Math.max(0, square)));
+  const t = s === s ? Math.min(1, s) : share;
+  return isBelow ? start + (end - start) * t : end - (end - start) * t;
 }
 
 /** The least index from 0 to n − 1 for which a condition, once true, stays true; n if none. */

@@ -8,6 +8,7 @@ import { InputError } from '../errors';
 import { expectation } from '../exact/expect';
 import { compile } from '../formula/compile';
 import { parse } from '../formula/parse';
+import type { GivenMap } from '../formula/given';
 import type { Tape } from '../formula/tape';
 import { onlyShape } from './envelope';
 import { prove } from './proved';
@@ -54,8 +55,8 @@ function readQuantity(
     throw new InputError(QUANTITY, `${quoted(cell)} is not a formula`, expected);
   const text = String(cell);
   const source = { text, where: 'Quantity', tree: parse(text, 'Quantity') };
-  const { variable, constants } = namesOf(shape, given(limits), givens);
-  return compile([source], [variable], constants);
+  const { variable, named } = namesOf(shape, given(limits), givens);
+  return compile([source], [variable], named);
 }
 
 /** The names that a quantity may use. */
@@ -63,10 +64,10 @@ function namesOf(
   shape: Shape,
   limits: Range | null,
   givens: readonly Range[],
-): { variable: string; constants: ReadonlyMap<string, number> } {
-  if (shape.kind === 'formula') return shape;
+): { variable: string; named: GivenMap } {
+  if (shape.kind === 'formula') return { variable: shape.variable, named: shape.givens };
   const variable = limits ? readLimitCells(limits, PLACES.limits).variable : DEFAULT_VARIABLE;
   const named = new Givens([variable]);
-  readGivens(givens, named, PLACES.givens);
-  return { variable, constants: named.constants };
+  for (const value of readGivens(givens, PLACES.givens).values) named.add(value);
+  return { variable, named: named.map };
 }

@@ -51,7 +51,8 @@ function sharesAt(
 }
 
 /**
- * The x with each share of the area on its side; shares 0 and 1 give the limits.
+ * The x with each share of the area on its side; shares 0 and 1 give the limits,
+ * if these are finite.
  * Shapes: as `share`. Units: share as a fraction of 1; x as in the density.
  * Guarantee: undoes BELOW (or ABOVE) to 1e-10 of the limits' width where the density is
  * at least 1e-6 of its peak.
@@ -81,7 +82,17 @@ export function quantile(
     });
   });
   const { shares } = prove(shape);
-  return wanted.map((row) => row.map((value) => shares.quantile(value, from)));
+  return wanted.map((row, i) =>
+    row.map((value, j) => {
+      const x = shares.quantile(value, from);
+      if (x - x === 0) return x;
+      throw new InputError(
+        placeOf(wanted, SHARE, i, j),
+        `the x of share ${value} lies beyond all numbers`,
+        'give a share further from 0 and 1, or finite limits',
+      );
+    }),
+  );
 }
 
 function readSide(range: Range | null): Side {

@@ -29,6 +29,15 @@ describe('expectation(envelope, tape, quantity)', () => {
     // ∫|sin 5x| on 0 … 9 is (28 + 1 − cos(45 − 14π))/5, over 9.
     ['1', 0, 9, 'ABS(SIN(5*x))', (29 - Math.cos(45 - 14 * Math.PI)) / 45],
     ['x', 0, 1, 'SQRT(x)', 0.8],
+    // Whole lines and poles: normal and t moments; E ln of gamma(1/2) = ψ(1/2), Abramowitz & Stegun
+    // 6.3.3; ∫ −x ln x = 1/4; lognormal exp(μ + σ²/2); Pareto a·m/(a − 1) with a = 2.5, m = 2.
+    ['EXP(-0.5*x^2)', -Infinity, Infinity, 'x^2', 1],
+    ['EXP(-0.5*x^2)', -Infinity, Infinity, 'EXP(x)', 1.6487212707001282],
+    ['(1+x^2/3)^-2', -Infinity, Infinity, 'x/10', 0],
+    ['x^-0.5*EXP(-x)', 0, Infinity, 'LN(x)', -1.9635100260214235],
+    ['-LN(x)', 0, 1, 'x', 0.25],
+    ['EXP(-2*(LN(x)-1)^2)/x', 0, Infinity, 'x', 3.080216848918031],
+    ['x^-3.5', 2, Infinity, 'x', 10 / 3],
   ] as [string, number, number, string, number][])(
     'mean under %s on %d … %d of %s is %d, within its bounds [published]',
     (density, from, to, quantity, wanted) => {
@@ -85,6 +94,12 @@ describe('expectation(envelope, tape, quantity)', () => {
         expect(atMost).toBeGreaterThanOrEqual(wanted * (1 - 1e-11));
       }),
       { seed: 11, numRuns: 100 },
+    );
+  });
+
+  test('mean of a density that has none is refused [law]', () => {
+    expect(() => meanOf('1/(1+x^2)', -Infinity, Infinity, 'x')).toThrow(
+      'quantity: its mean is infinite, by what lies towards smaller x; cap it with MIN or MAX, or give limits that leave the place out.',
     );
   });
 

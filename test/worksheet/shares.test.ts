@@ -83,6 +83,11 @@ describe('below, above, quantile', () => {
       'share (argument 3): 250 is not a share; give a fraction from 0 to 1.',
     ],
     [
+      'share 1 without a limit',
+      () => quantile([['EXP(-x)']], [[0, 'unbounded']], [[0.5], [1]], null, []),
+      'share (argument 3), row 2: the x of share 1 lies beyond all numbers; give a share further from 0 and 1, or finite limits.',
+    ],
+    [
       'no share',
       () => quantile(BLOCK, null, null, null, []),
       'share (argument 3): it is missing; give a fraction from 0 to 1, or a range of them.',
