@@ -4,7 +4,7 @@ import type { Envelope } from '../../src/envelope/envelope';
 import type { Hat } from '../../src/envelope/hat';
 import { heightOn, placeOn } from '../../src/envelope/hat';
 import { proveEnvelope } from '../../src/envelope/prove';
-import { Shares } from '../../src/exact/shares';
+import { areaOf } from '../../src/exact/area';
 import { compile } from '../../src/formula/compile';
 import { parse } from '../../src/formula/parse';
 
@@ -41,7 +41,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
     expect(envelope.areaLo).toBeLessThanOrEqual(area * (1 + 1e-15));
     expect(envelope.areaHi).toBeGreaterThanOrEqual(area * (1 - 1e-15));
     expect(envelope.lowerArea / envelope.upperArea).toBeGreaterThanOrEqual(0.99);
-    expect(Math.abs(new Shares(envelope).area / area - 1)).toBeLessThan(1e-12);
+    expect(Math.abs(areaOf(envelope) / area - 1)).toBeLessThan(1e-12);
   });
 
   test.each(AREAS)('%s from %d to %d lies under its hats [law]', (text, from, to) => {
@@ -74,7 +74,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
       const n = 20_000;
       const { values, proposals } = new Drawer(envelope).column([3, 4], 1, n);
       expect(values.every((x) => x > from && x < to)).toBe(true);
-      const chance = new Shares(envelope).area / envelope.upperArea;
+      const chance = areaOf(envelope) / envelope.upperArea;
       // Proposals until n acceptances: mean n/p, variance n(1 − p)/p²; 4.9 standard deviations: false alarm 1e-6.
       const sd = Math.sqrt(n * (1 - chance)) / chance;
       expect(Math.abs(proposals - n / chance)).toBeLessThan(4.9 * sd + 1);
