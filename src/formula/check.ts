@@ -1,11 +1,12 @@
 /**
  * What can be seen wrong in a formula's characters before it is parsed: length,
- * bracket depth, brackets left open, separators, decimal commas, signs that look
- * like operators but are none. Checked first so that the parser never recurses
- * deeply and each slip gets its own message.
- * Not handled: anything that needs the grammar (parse.ts, compile.ts).
+ * bracket depth, brackets left open, separators, decimal commas, characters that
+ * look like operators but are none or cannot be seen. Checked first so that the
+ * parser never recurses deeply and each slip gets its own message.
+ * Not handled: operators in a row (signs.ts), what needs the grammar (parse.ts, compile.ts).
  */
 import { InputError } from '../errors';
+import { checkSigns } from './signs';
 
 export const MAX_CHARACTERS = 8192;
 export const MAX_DEPTH = 64;
@@ -16,16 +17,53 @@ const LOOKALIKES = new Map([
   ['≠', '<>'],
   ['−', '-'],
   ['–', '-'],
+  ['—', '-'],
+  ['‑', '-'],
   ['×', '*'],
   ['·', '*'],
+  ['∗', '*'],
   ['÷', '/'],
+  ['∕', '/'],
   ['“', '"'],
   ['”', '"'],
+  ['‘', "'"],
+  ['’', "'"],
+  // The wide forms of East Asian keyboards.
+  ['＋', '+'],
+  ['－', '-'],
+  ['＊', '*'],
+  ['／', '/'],
+  ['＾', '^'],
+  ['％', '%'],
+  ['＝', '='],
+  ['＜', '<'],
+  ['＞', '>'],
+  ['（', '('],
+  ['）', ')'],
+  ['，', ','],
+  ['；', ';'],
 ]);
+
+/** Control and format characters, such as spaces of no width: pasted without being seen. */
+const INVISIBLE = /[\p{Cc}\p{Cf}\u2028\u2029]/u;
+const WHITE = new Set('\t\n\r');
+
+/** As much of a long text as a message should quote. */
+export function cited(text: string): string {
+  return text.length <= 40 ? text : `${text.slice(0, 40)}…`;
+}
 
 /** A place in a formula, for messages: `Formula, character 7`. */
 export function place(where: string, at: number): string {
   return `${where}, character ${at}`;
+}
+
+/** A bracket that is not closed yet. */
+interface Open {
+  readonly bracket: string;
+  readonly at: number;
+  /** Of a function, whose arguments it holds. */
+  readonly isCall: boolean;
 }
 
 /**
@@ -41,19 +79,23 @@ export function checkText(text: string, where: string): string {
       `use at most ${MAX_CHARACTERS}, or split the formula with givens`,
     );
   }
-  const open: { bracket: string; at: number }[] = [];
+  const open: Open[] = [];
   const commas: number[] = [];
   const semicolons: number[] = [];
   let quote: { mark: string; at: number } | undefined;
+  let plain = '';
   for (let i = 0; i < text.length; i++) {
     const c = text.charAt(i);
     if (quote) {
+      plain += 'q';
       if (c === quote.mark) quote = undefined;
       continue;
     }
+    checkCharacter(c, i, where);
+    plain += c === '"' || c === "'" ? 'q' : c;
     if (c === '"' || c === "'") quote = { mark: c, at: i + 1 };
     else if (c === '(' || c === '{') {
-      open.push({ bracket: c, at: i + 1 });
+      open.push({ bracket: c, at: i + 1, isCall: c === '(' && isAfterName(text, i) });
       if (open.length > MAX_DEPTH) {
         throw new InputError(
           place(where, i + 1),
@@ -62,24 +104,16 @@ export function checkText(text: string, where: string): string {
         );
       }
     } else if (c === ')' || c === '}') close(open, c, i + 1, where);
-    else if (open.at(-1)?.bracket !== '{') {
-      if (c === ',') commas.push(i);
-      if (c === ';') semicolons.push(i);
-      const meant = LOOKALIKES.get(c);
-      if (meant !== undefined) {
-        throw new InputError(
-          place(where, i + 1),
-          `"${c}" is not a worksheet operator`,
-          `write ${meant}`,
-        );
-      }
+    else if ((c === ',' || c === ';') && open.at(-1)?.bracket !== '{') {
+      if (!open.at(-1)?.isCall) throw strayComma(text, i, where);
+      (c === ',' ? commas : semicolons).push(i);
     }
   }
   if (quote) {
     throw new InputError(
       place(where, quote.at),
-      `${quote.mark} is never closed`,
-      `add ${quote.mark}`,
+      `the quotation mark ${quote.mark} is never closed`,
+      `add another ${quote.mark}`,
     );
   }
   const left = open.at(-1);
@@ -90,16 +124,46 @@ export function checkText(text: string, where: string): string {
       `add "${left.bracket === '(' ? ')' : '}'}"`,
     );
   }
+  const withoutReferences = plain.replace(/\[[^\]]*\]/g, (part) => 'q'.repeat(part.length));
+  checkSigns(withoutReferences, (at) => place(where, at));
   if (semicolons.length === 0) return text;
   return withCommas(text, commas, semicolons, where);
 }
 
-function close(
-  open: { bracket: string; at: number }[],
-  c: string,
-  at: number,
-  where: string,
-): void {
+function checkCharacter(c: string, i: number, where: string): void {
+  const meant = LOOKALIKES.get(c);
+  if (meant !== undefined) {
+    throw new InputError(
+      place(where, i + 1),
+      `"${c}" is not the sign that worksheet formulas use`,
+      `write ${meant}`,
+    );
+  }
+  if (INVISIBLE.test(c) && !WHITE.has(c)) {
+    const code = c.charCodeAt(0).toString(16).toUpperCase().padStart(4, '0');
+    throw new InputError(
+      place(where, i + 1),
+      `a character that cannot be seen (U+${code})`,
+      'delete it',
+    );
+  }
+}
+
+/** True if the bracket at index i follows a name or a bracket, as that of a call does. */
+function isAfterName(text: string, i: number): boolean {
+  return /[\p{L}\p{N}_.)]$/u.test(text.slice(0, i));
+}
+
+function strayComma(text: string, i: number, where: string): InputError {
+  if (isDecimalComma(text, i)) return decimalComma(text, i, where);
+  return new InputError(
+    place(where, i + 1),
+    `"${text.charAt(i)}" stands outside the brackets of a function`,
+    'remove it, or write a decimal point',
+  );
+}
+
+function close(open: Open[], c: string, at: number, where: string): void {
   const last = open.pop();
   const wanted = c === ')' ? '(' : '{';
   if (!last)
@@ -138,15 +202,22 @@ function withCommas(
   return characters.join('');
 }
 
-/** True if the comma at index i stands between two digits, as a decimal comma does. */
+/**
+ * True if the comma at index i stands between two whole numbers, as a decimal comma
+ * does: not after a name such as x1, nor beside a number that has a decimal point.
+ */
 export function isDecimalComma(text: string, i: number): boolean {
-  return /\d/.test(text.charAt(i - 1)) && /\d/.test(text.charAt(i + 1));
+  return (
+    text.charAt(i) === ',' &&
+    /(?:^|[^\p{L}\p{N}_.$!])\d+$/u.test(text.slice(0, i)) &&
+    /^\d+(?![\d.(!$:])/.test(text.slice(i + 1))
+  );
 }
 
 /** The refusal of a decimal comma at index i of the text. */
 export function decimalComma(text: string, i: number, where: string): InputError {
-  const before = /[\d.]*$/.exec(text.slice(0, i))![0];
-  const after = /^[\d]*/.exec(text.slice(i + 1))![0];
+  const before = /\d*$/.exec(text.slice(0, i))![0];
+  const after = /^\d*/.exec(text.slice(i + 1))![0];
   return new InputError(
     place(where, i + 1 - before.length),
     `"${before},${after}" has a decimal comma`,

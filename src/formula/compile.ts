@@ -6,7 +6,7 @@
  */
 import { InputError } from '../errors';
 import * as I from '../numeric/interval';
-import { decimalComma, isDecimalComma, place } from './check';
+import { cited, decimalComma, isDecimalComma, place } from './check';
 import type { Given, GivenMap } from './given';
 import type { Value } from './names';
 import { callsItself, nameKey, Scope } from './names';
@@ -22,6 +22,8 @@ export { nameKey };
 export const MAX_OPERATIONS = 10_000;
 /** Operations written out on the way there, those on numbers included: each is worked once. */
 const MAX_WRITTEN_OUT = 200_000;
+/** A LAMBDA may be handed to itself; this ends it before the host's own stack does. */
+const MAX_CALLS_DEEP = 100;
 
 /** The text and the meaning of the names around it. */
 export interface Source {
@@ -43,11 +45,16 @@ export function compile(
   return new Compiler(variables, givens).product(sources);
 }
 
+type OperatorTree = Extract<Tree, { kind: 'operator' }>;
+type CallTree = Extract<Tree, { kind: 'call' }>;
+
 class Compiler {
   private readonly steps = new Steps();
   private readonly outermost = new Scope();
   private readonly variablePlaces: number[];
   private work = 0;
+  /** How many LAMBDAs are being written out within one another. */
+  private depth = 0;
   private source!: Source;
 
   constructor(
@@ -97,7 +104,7 @@ class Compiler {
     if (tree.params.length !== this.variables.length) {
       throw this.error(
         tree.at,
-        `LAMBDA has ${tree.params.length} parameters`,
+        `LAMBDA has ${counted(tree.params.length, 'name')}`,
         `give it ${this.variables.length}, one for each variable (${this.variables.join(', ')})`,
       );
     }
@@ -138,7 +145,7 @@ class Compiler {
       case 'text':
         throw this.error(
           tree.at,
-          `the text "${tree.value}" where a number belongs`,
+          `the text "${cited(tree.value)}" where a number belongs`,
           'write a number or a name from the givens',
         );
       case 'name':
@@ -172,13 +179,14 @@ class Compiler {
     const known = [...this.variables, ...this.givens.keys()].join(', ');
     throw this.error(
       at,
-      `"${name}" is not a known name`,
+      `"${cited(name)}" is not a known name`,
       `add it to the givens, or use one of: ${known}`,
     );
   }
 
   private withoutBrackets(name: string, at: number): InputError {
-    return this.error(at, `"${name}" is a function without its brackets`, `write ${name}(…)`);
+    const args = VOCABULARY.get(name)?.most === 0 ? '' : '…';
+    return this.error(at, `"${name}" is a function without its brackets`, `write ${name}(${args})`);
   }
 
   private let(tree: Extract<Tree, { kind: 'let' }>, scope: Scope): Value {
@@ -196,27 +204,34 @@ class Compiler {
     return this.value(tree.body, inner);
   }
 
-  private operator(tree: Extract<Tree, { kind: 'operator' }>, scope: Scope): Value {
-    const { operator, at } = tree;
-    if (tree.args.length === 1 && operator === '+') return this.value(tree.args[0]!, scope);
-    const name = tree.args.length === 1 && operator === '-' ? 'negative' : operator;
-    const row = VOCABULARY.get(name);
-    if (!row || tree.args.length < row.least) {
-      const why = operator === '&' ? 'joins text' : 'is not part of the formula language';
-      throw this.error(
-        at,
-        `the operator "${operator}" ${why}`,
-        'use + - * / ^ %, comparisons, AND and OR',
-      );
+  /** The chain of first operands is followed without recursion, however long it is. */
+  private operator(tree: OperatorTree, scope: Scope): Value {
+    const chain: { readonly link: OperatorTree; readonly row: Row | null }[] = [];
+    let first: Tree = tree;
+    for (; first.kind === 'operator'; first = first.args[0]!)
+      chain.push({ link: first, row: this.rowOf(first) });
+    let value = this.value(first, scope);
+    for (const { link, row } of chain.reverse()) {
+      const rest = link.args.slice(1).map((arg) => this.value(arg, scope));
+      if (row) value = this.elementwise(row, [value, ...rest], link.operatorAt);
     }
-    return this.elementwise(
-      row,
-      tree.args.map((arg) => this.value(arg, scope)),
+    return value;
+  }
+
+  /** The row of an operator; nothing for a plus sign before a part, which changes nothing. */
+  private rowOf({ operator, operatorAt: at, args }: OperatorTree): Row | null {
+    if (args.length === 1 && operator === '+') return null;
+    const row = VOCABULARY.get(args.length === 1 && operator === '-' ? 'negative' : operator);
+    if (row && args.length >= row.least) return row;
+    const why = operator === '&' ? 'joins text' : 'is not part of the formula language';
+    throw this.error(
       at,
+      `the operator "${operator}" ${why}`,
+      'use + - * / ^ %, comparisons, AND and OR',
     );
   }
 
-  private callTree(tree: Extract<Tree, { kind: 'call' }>, scope: Scope): Value {
+  private callTree(tree: CallTree, scope: Scope): Value {
     const { callee, at } = tree;
     const own =
       typeof callee === 'string' ? scope.find(nameKey(callee)) : this.value(callee, scope);
@@ -233,14 +248,14 @@ class Compiler {
     if (!row || !/^[A-Z]/i.test(callee)) {
       throw this.error(
         at,
-        `"${callee}" is not a known function`,
+        `"${cited(callee)}" is not a known function`,
         `use one of: ${functionNames().join(', ')}`,
       );
     }
     return this.applyNamed(row, tree, scope);
   }
 
-  private applyNamed(row: Row, tree: Extract<Tree, { kind: 'call' }>, scope: Scope): Value {
+  private applyNamed(row: Row, tree: CallTree, scope: Scope): Value {
     const { at } = tree;
     this.checkCount(row, tree);
     const args = tree.args.map((arg): Value =>
@@ -264,36 +279,46 @@ class Compiler {
     throw this.functionAsNumber(at);
   }
 
-  private checkCount(row: Row, tree: Extract<Tree, { kind: 'call' }>): void {
+  private checkCount(row: Row, tree: CallTree): void {
     const n = tree.args.length;
     if (n >= row.least && n <= row.most) return;
     const { text, where } = this.source;
-    const comma = text
-      .split('')
-      .findIndex((c, i) => i >= tree.at && c === ',' && isDecimalComma(text, i));
-    if (comma >= 0) throw decimalComma(text, comma, where);
+    const decimal = commasOf(text, tree.at - 1).filter((i) => isDecimalComma(text, i));
+    if (decimal.length === 1 && n - 1 >= row.least && n - 1 <= row.most)
+      throw decimalComma(text, decimal[0]!, where);
     const wanted =
       row.least === row.most
         ? `${row.least}`
         : row.most === Infinity
           ? `${row.least} or more`
           : `${row.least} to ${row.most}`;
-    throw this.error(tree.at, `${row.name} has ${n} arguments`, `give it ${wanted}`);
+    throw this.error(
+      tree.at,
+      `${row.name} has ${counted(n, 'argument')}`,
+      row.most === 0 ? `write ${row.name}()` : `give it ${wanted}`,
+    );
   }
 
   private applyLambda(
     own: Extract<Value, { kind: 'function' }>,
-    tree: Extract<Tree, { kind: 'call' }>,
+    tree: CallTree,
     scope: Scope,
   ): Value {
     if (own.params.length !== tree.args.length) {
       throw this.error(
         tree.at,
-        `a LAMBDA of ${own.params.length} parameters has ${tree.args.length} arguments`,
+        `a LAMBDA of ${counted(own.params.length, 'name')} has ${counted(tree.args.length, 'argument')}`,
         `give it ${own.params.length}`,
       );
     }
     this.count(tree.at);
+    if (this.depth >= MAX_CALLS_DEEP) {
+      throw this.error(
+        tree.at,
+        `LAMBDAs that use one another more than ${MAX_CALLS_DEEP} deep`,
+        'recursion is not part of the formula language; write the steps out',
+      );
+    }
     const inner = new Scope(own.scope);
     own.params.forEach((name, i) => {
       const arg = tree.args[i];
@@ -302,7 +327,10 @@ class Compiler {
         arg ? this.value(arg, scope) : { kind: 'step', step: this.steps.number(0) },
       );
     });
-    return this.value(own.body, inner);
+    this.depth++;
+    const value = this.value(own.body, inner);
+    this.depth--;
+    return value;
   }
 
   /** Applies a row to numbers, or to arrays of one shape (a single row or column is repeated). */
@@ -393,4 +421,22 @@ class Compiler {
 /** Names of the functions of the vocabulary, operators left out. */
 export function functionNames(): readonly string[] {
   return [...VOCABULARY.keys()].filter((name) => /^[A-Z]/.test(name));
+}
+
+function counted(n: number, noun: string): string {
+  return `${n} ${noun}${n === 1 ? '' : 's'}`;
+}
+
+/** Where the commas between the arguments of the call that starts at index `start` stand. */
+function commasOf(text: string, start: number): readonly number[] {
+  const commas: number[] = [];
+  const open = text.indexOf('(', start);
+  for (let i = open, depth = 0; i >= 0 && i < text.length; i++) {
+    const c = text.charAt(i);
+    if (c === '(' || c === '{') depth++;
+    if (c === ')' || c === '}') depth--;
+    if (depth === 0) break;
+    if (c === ',' && depth === 1) commas.push(i);
+  }
+  return commas;
 }

@@ -46,29 +46,34 @@ export class Scope {
 }
 
 /** True if the body of a LAMBDA bound to `name` uses that name. */
-export function callsItself(name: string, tree: Tree): boolean {
+export function callsItself(name: string, body: Tree): boolean {
   const key = nameKey(name);
-  const within = (part: Tree | null): boolean => {
-    if (part === null) return false;
-    switch (part.kind) {
-      case 'name':
-        return nameKey(part.name) === key;
-      case 'call':
-        return (
-          (typeof part.callee === 'string' ? nameKey(part.callee) === key : within(part.callee)) ||
-          part.args.some(within)
-        );
-      case 'operator':
-        return part.args.some(within);
-      case 'array':
-        return part.rows.some((row) => row.some(within));
-      case 'let':
-        return part.bindings.some((b) => within(b.value)) || within(part.body);
-      case 'lambda':
-        return within(part.body);
-      default:
-        return false;
-    }
-  };
-  return within(tree);
+  // A list of what is left, since a long sum is a deep tree.
+  const parts: (Tree | string | null)[] = [body];
+  for (;;) {
+    const part = parts.pop();
+    if (part === undefined) return false;
+    if (typeof part === 'string') {
+      if (nameKey(part) === key) return true;
+    } else if (part !== null) parts.push(...partsOf(part));
+  }
+}
+
+function partsOf(tree: Tree): readonly (Tree | string | null)[] {
+  switch (tree.kind) {
+    case 'name':
+      return [tree.name];
+    case 'call':
+      return [tree.callee, ...tree.args];
+    case 'operator':
+      return tree.args;
+    case 'array':
+      return tree.rows.flat();
+    case 'let':
+      return [...tree.bindings.map((binding) => binding.value), tree.body];
+    case 'lambda':
+      return [tree.body];
+    default:
+      return [];
+  }
 }

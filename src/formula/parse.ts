@@ -9,8 +9,10 @@
 import type { AstExpression, BinaryExpression, Identifier, UnaryExpression } from '@borgar/fx';
 import { parse as parseTokens, tokenize } from '@borgar/fx';
 import { InputError } from '../errors';
-import { checkText, decimalComma, isDecimalComma, place } from './check';
+import { checkText, place } from './check';
 import type { Tree } from './tree';
+import { unreadable } from './unreadable';
+import { VOCABULARY } from './vocabulary';
 
 /** The library's types leave out that a LAMBDA may be called where it stands, and arguments left blank. */
 type Expression = AstExpression | Identifier;
@@ -37,14 +39,7 @@ function parseText(text: string, where: string): Expression {
     }
     return parseTokens(tokens);
   } catch (error) {
-    const comma = text.split('').findIndex((c, i) => c === ',' && isDecimalComma(text, i));
-    if (comma >= 0) throw decimalComma(text, comma, where);
-    const end = (error as { sourceOffset?: number }).sourceOffset ?? text.length;
-    throw new InputError(
-      place(where, Math.max(1, Math.min(end, text.length))),
-      `cannot be read up to here ("${text.slice(Math.max(0, end - 12), end)}")`,
-      'look for a missing operator, number, comma or bracket',
-    );
+    throw unreadable(text, where, error as Error & { sourceOffset?: number });
   }
 }
 
@@ -92,10 +87,13 @@ class Reader {
         };
       }
       case 'LambdaExpression':
+        if (!node.body) {
+          throw this.error(at, 'LAMBDA is empty', 'write its names and then its result');
+        }
         return {
           kind: 'lambda',
           params: node.params.map((p) => p.name),
-          body: this.read(node.body!),
+          body: this.read(node.body),
           at,
         };
       case 'LetExpression':
@@ -121,43 +119,85 @@ class Reader {
     return { kind: 'number', value: value === 0 ? 0 : value, at };
   }
 
+  /** Operators are left-associative: the chain of first operands is followed without recursion, however long it is. */
   private operator(node: UnaryExpression | BinaryExpression, at: number): Tree {
-    const operands = node.arguments;
-    if (node.operator === '^') this.refuseBareMinus(operands[0]!);
-    if (node.operator === ' ' || node.operator === ':') {
+    const chain: (UnaryExpression | BinaryExpression)[] = [];
+    let first: Expression = node;
+    while (first.type === 'UnaryExpression' || first.type === 'BinaryExpression') {
+      chain.push(first);
+      first = first.arguments[0]!;
+    }
+    let tree = this.read(first);
+    for (const link of chain.reverse()) {
+      const operatorAt = this.checkOperator(link);
+      const rest = link.arguments.slice(1).map((operand) => this.read(operand));
+      const start = link === node ? at : span(link)[0] + 1;
+      const args = [tree, ...rest];
+      tree = { kind: 'operator', operator: link.operator, args, at: start, operatorAt };
+    }
+    return tree;
+  }
+
+  /** Refuses what an operator cannot stand for, and tells where it stands. */
+  private checkOperator(node: UnaryExpression | BinaryExpression): number {
+    const { operator } = node;
+    const [start] = span(node);
+    const [first, second] = [node.arguments[0]!, node.arguments[1]];
+    const end = span(first)[1];
+    if (operator === ' ' && first.type === 'ReferenceIdentifier' && isFunction(first.value)) {
       throw this.error(
-        span(operands[0]!)[1] + 1,
+        end + 1,
+        `a space between ${first.value} and its bracket`,
+        'remove the space',
+      );
+    }
+    if (operator === ' ' || operator === ':') {
+      throw this.error(
+        end + 1,
         'two parts with no operator between them',
         'add * or another operator',
       );
     }
-    if (node.operator === ',') {
-      const comma = this.text.indexOf(',', span(operands[0]!)[1]);
-      if (isDecimalComma(this.text, comma)) throw decimalComma(this.text, comma, this.where);
-    }
-    return {
-      kind: 'operator',
-      operator: node.operator,
-      args: operands.map((o) => this.read(o)),
-      at,
-    };
+    const isPrefix = second === undefined && span(first)[0] > start;
+    const index = isPrefix ? start : this.text.indexOf(operator, end);
+    if (operator === '^') this.refuseBareMinus(first, second!);
+    return index + 1;
   }
 
   /** In a worksheet -x^2 is (-x)^2. A negative number, as in -2^2, says plainly what it is. */
-  private refuseBareMinus(base: Expression): void {
-    if (base.type !== 'UnaryExpression' || base.operator !== '-') return;
-    const [start, end] = span(base);
-    if (!/^\s*\^/.test(this.text.slice(end))) return;
-    const operand = this.text.slice(start + 1, end).trim();
-    const power = /^\s*\^\s*(\([^()]*\)|[^\s+\-*/^,()=<>&%]*)/.exec(this.text.slice(end))![1]!;
+  private refuseBareMinus(base: Expression, power: Expression): void {
+    let inner = base;
+    while (inner.type === 'UnaryExpression' && inner.operator === '%') inner = inner.arguments[0]!;
+    if (inner.type !== 'UnaryExpression' || inner.operator !== '-') return;
+    const [start] = span(inner);
+    const end = span(base)[1];
+    const caret = /^[\s%]*\^/.exec(this.text.slice(end));
+    if (!caret) return;
+    const operand = this.text.slice(start + 1, end + caret[0].length - 1).trim();
+    const from = end + caret[0].length;
+    const raised = balanced(this.text.slice(from), span(power)[1] - from).trim();
     throw this.error(
       start + 1,
-      `-${operand}^${power} means (-${operand})^${power} in a worksheet`,
-      `write -(${operand}^${power}), or (-${operand})^${power} if that is meant`,
+      `-${operand}^${raised} means (-${operand})^${raised} in a worksheet`,
+      `write -(${operand}^${raised}), or (-${operand})^${raised} if that is meant`,
     );
   }
 
   private error(at: number, found: string, expected: string): InputError {
     return new InputError(place(this.where, at), found, expected);
   }
+}
+
+function isFunction(name: string): boolean {
+  return VOCABULARY.has(name.toUpperCase());
+}
+
+/** The text up to `end`, and on to the brackets that close what it opens. */
+function balanced(text: string, end: number): string {
+  let i = 0;
+  for (let depth = 0; i < text.length && (i < end || depth > 0); i++) {
+    if (text.charAt(i) === '(') depth++;
+    if (text.charAt(i) === ')' && --depth < 0) break;
+  }
+  return text.slice(0, i);
 }

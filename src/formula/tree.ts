@@ -31,6 +31,8 @@ export type Tree =
       readonly operator: string;
       readonly args: readonly Tree[];
       readonly at: number;
+      /** Where the operator itself stands. */
+      readonly operatorAt: number;
     };
 
 export interface Binding {

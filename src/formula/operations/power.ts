@@ -112,6 +112,12 @@ export const SQRT: Operation = smooth({
   outside: 'SQRT takes a negative number',
 });
 
+/** LN as a power that varies uses it, which must speak of the power where it is undefined. */
+const LN_OF_BASE: Operation = {
+  ...LN,
+  outside: 'a number that is not above 0 is raised to a power that varies',
+};
+
 const MAX_WHOLE_POWER = 1024;
 
 export function raise(make: Maker, [base, power]: readonly number[]): number {
@@ -128,15 +134,15 @@ export function raise(make: Maker, [base, power]: readonly number[]): number {
   if (p !== undefined && Math.floor(p) === p && Math.abs(p) <= MAX_WHOLE_POWER) {
     return p === 1 ? base! : make.apply(wholePower(p), base!);
   }
+  const b = make.exactValue(base!);
+  if (b !== undefined && b < 0) {
+    throw make.refuse(
+      `(${b}) to a power that is not whole, on which spreadsheet programs disagree`,
+      'use a base that is not negative',
+    );
+  }
   if (make.isConstant(power!)) {
-    const b = make.exactValue(base!);
-    if (b !== undefined && b < 0) {
-      throw make.refuse(
-        `(${b}) to a power that is not whole, on which spreadsheet programs disagree`,
-        'use a base that is not negative',
-      );
-    }
     return make.apply(REAL_POWER, base!, power!);
   }
-  return make.apply(EXP, make.apply(MULTIPLY, power!, make.apply(LN, base!)));
+  return make.apply(EXP, make.apply(MULTIPLY, power!, make.apply(LN_OF_BASE, base!)));
 }
