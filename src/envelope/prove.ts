@@ -142,13 +142,16 @@ class Prover {
     const parts = this.kept();
     const pieces = parts.map((part) => part.piece);
     const areas = totalAreas(pieces, this.hats);
-    if (areas.upperArea === 0) throw zeroEverywhere(this);
     this.settleSigns(parts);
+    if (areas.upperArea === 0) throw zeroEverywhere(this);
     const promised = promisedAcceptance(areas);
-    if (promised < LEAST_ACCEPTANCE) throw acceptedTooRarely(promised, MAX_PIECES, worstOf(parts));
+    if (promised < LEAST_ACCEPTANCE) {
+      if (this.isOnlySlivers(parts)) throw zeroEverywhere(this, ', apart from single points');
+      throw acceptedTooRarely(promised, parts.length, worstOf(parts));
+    }
     if (promised < WANTED_ACCEPTANCE) {
       this.notes.push(
-        `the proof promises an acceptance of ${shortNumber(promised)} after ${MAX_PIECES} pieces; the draws are exact all the same`,
+        `the proof promises an acceptance of ${shortNumber(promised)} after ${parts.length} pieces; the draws are exact all the same`,
       );
     }
     const { exponent } = this.encloser;
@@ -365,14 +368,22 @@ class Prover {
     else if (hi <= 0) I.meet(density.v, { lo: right.density.lo, hi: left.density.hi });
   }
 
+  private isSliver({ piece: { from, to } }: Part): boolean {
+    return to - from < NEGLIGIBLE * this.width;
+  }
+
+  /** True if the density can be above 0 only where its parts are next to nothing wide. */
+  private isOnlySlivers(parts: readonly Part[]): boolean {
+    return parts.every((part) => part.piece.upperArea === 0 || this.isSliver(part));
+  }
+
   /** The parts in order, without slivers around jumps that carry less than rounding does. */
   private kept(): Part[] {
     const sorted = [...this.parts].sort((p, q) => p.piece.from - q.piece.from);
     const limit = NEGLIGIBLE * this.lowerArea;
     let dropped = 0;
     return sorted.filter((part) => {
-      const isSliver = part.piece.to - part.piece.from < NEGLIGIBLE * this.width;
-      if (!isSliver || dropped + part.piece.upperArea > limit) return true;
+      if (!this.isSliver(part) || dropped + part.piece.upperArea > limit) return true;
       dropped += part.piece.upperArea;
       return false;
     });

@@ -29,10 +29,10 @@ export function unsettledSign(x: number): InputError {
   );
 }
 
-export function zeroEverywhere({ from, to }: Stretch): InputError {
+export function zeroEverywhere({ from, to }: Stretch, except = ''): InputError {
   return new InputError(
     WHERE,
-    `it is 0 everywhere from x = ${shortNumber(from)} to x = ${shortNumber(to)}`,
+    `it is 0 everywhere from x = ${shortNumber(from)} to x = ${shortNumber(to)}${except}`,
     'some height within the limits must be above 0',
   );
 }
