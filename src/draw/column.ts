@@ -10,7 +10,7 @@
  */
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
-import { placeOn } from '../envelope/hat';
+import { heightOn, placeOn } from '../envelope/hat';
 import { bug } from '../errors';
 import { next, prev } from '../numeric/float';
 import * as I from '../numeric/interval';
@@ -169,9 +169,12 @@ export class Drawer {
     // s runs from the far end of the hat (0, never reached) to where it begins (1).
     const s = hat.isBeyond === hat.direction > 0 ? 1 - r : r;
     placeOn(hat, s > LEAST_SHARE ? s : LEAST_SHARE, this.proposal);
-    if (this.proposal.x !== hat.origin || hat.isBeyond) return;
-    // Nearer to the pole than doubles are to each other: the nearest one stands for it.
-    this.proposal.x = hat.direction > 0 ? next(hat.origin) : prev(hat.origin);
+    if (this.proposal.x === hat.origin && !hat.isBeyond) {
+      // Nearer to the pole than doubles are to each other: the nearest one stands for it.
+      this.proposal.x = hat.direction > 0 ? next(hat.origin) : prev(hat.origin);
+    }
+    // Near a pole the rounding of x is no small part of the distance: the hat is taken where the density is.
+    this.proposal.height = heightOn(hat, this.proposal.x);
   }
 
   private isAccepted(v: number): boolean {
