@@ -6,7 +6,7 @@ if (browser) process.env.UNDERCURVE_CHROMIUM = browser;
 export default {
   testEnvironment: 'node',
   // In jest's sandbox every mention of Math is looked up in the host otherwise, 20 times slower.
-  sandboxInjectedGlobals: ['Math'],
+  sandboxInjectedGlobals: ['Math', 'Infinity', 'Number'],
   testMatch: ['<rootDir>/test/**/*.test.ts'],
   testPathIgnorePatterns: [
     '/node_modules/',
