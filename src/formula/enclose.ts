@@ -239,7 +239,9 @@ export class Encloser {
       [logs[p] ?? fallback, logs[q] ?? fallback, logs[r] ?? fallback],
       [jets[p]!, jets[q]!, jets[r]!],
     );
-    if (out.v.lo >= 0 && structural !== EXP.logarithm) meetExponential(out, log);
+    // A sum with a negative term has no structure to use; its own enclosure still may have a logarithm.
+    if (log.v.hi === Infinity) logarithmOf(log, out);
+    else if (out.v.lo >= 0 && structural !== EXP.logarithm) meetExponential(out, log);
   }
 
   private finish(mayTurn: boolean): Enclosure {
