@@ -261,6 +261,13 @@ class Compiler {
     const args = tree.args.map((arg): Value =>
       arg ? this.value(arg, scope) : { kind: 'step', step: this.steps.number(0) },
     );
+    if (row.rewriteArrays) {
+      this.count(at);
+      const arrays = args.map((arg) =>
+        arg.kind === 'array' ? arg.rows : [this.elements(arg, at)],
+      );
+      return { kind: 'step', step: row.rewriteArrays(this.maker(at), arrays) };
+    }
     // Functions of many numbers take an array as its numbers; the others work on it element by element.
     if (row.most !== Infinity) return this.elementwise(row, args, at);
     return {
@@ -412,6 +419,7 @@ class Compiler {
         return enclosure && enclosure.lo === enclosure.hi ? value : undefined;
       },
       isConstant: (node) => this.steps.at(node).isConstant,
+      enclosure: (node) => this.steps.enclosure(node),
       isTruth: (node) => this.steps.isTruth(node),
       refuse: (found, expected) => this.error(at, found, expected),
     };

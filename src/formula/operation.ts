@@ -26,6 +26,8 @@ export interface Operation {
   readonly slopes: (out: Jet, a: Jet, b: Jet, c: Jet) => void;
   /** Sets out to the jet of ln|result| from the jets of ln|operand|; absent: LN of the enclosure. */
   readonly logarithm?: (out: Jet, logs: Operands, values: Operands) => void;
+  /** For functions g of one argument: encloses (ln|g|)′ over u, which may be unbounded. */
+  readonly logSlope?: (out: Interval, u: Interval) => void;
   /** How much of the operands lies in the domain; absent: everywhere. */
   readonly defined?: (a: Interval, b: Interval) => Defined;
   /** The operand whose passage through 0 (or through a level) brings a kink, a jump or the end of the domain. */
@@ -54,6 +56,15 @@ export type Operands = readonly [Jet, Jet, Jet];
 const slope = I.interval();
 const curvature = I.interval();
 
+/** Encloses ln g, (ln g)′ and (ln g)″ over u, which may be unbounded. */
+interface LogRule {
+  readonly value: (out: Interval, u: Interval) => void;
+  readonly first: (out: Interval, u: Interval) => void;
+  readonly second: (out: Interval, u: Interval) => void;
+  /** True where g > 0 and the rules hold; absent: everywhere. */
+  readonly holdsOver?: (u: Interval) => boolean;
+}
+
 interface Smooth {
   readonly name: string;
   readonly point: (x: number) => number;
@@ -64,6 +75,8 @@ interface Smooth {
   readonly second: (out: Interval, u: Interval, v: Interval, d: Interval) => void;
   /** True where g′ and g″ exist all over u; absent: everywhere. */
   readonly isSmoothOver?: (u: Interval) => boolean;
+  /** For a g ≥ 0 whose logarithm is known better than through its value. */
+  readonly log?: LogRule;
   readonly logarithm?: Operation['logarithm'];
   readonly defined?: Operation['defined'];
   readonly turnsOn?: 0;
@@ -74,9 +87,10 @@ interface Smooth {
 
 /** An operation of one argument from its derivatives, by the chain rule. */
 export function smooth(row: Smooth): Operation {
-  const { first, second, isSmoothOver, ...rest } = row;
+  const { first, second, isSmoothOver, log, ...rest } = row;
   return {
     ...rest,
+    ...(log && { logarithm: logarithmBy(log), logSlope: log.first }),
     slopes(out, a) {
       if (isSmoothOver && !isSmoothOver(a.v)) {
         J.setJump(out);
@@ -86,6 +100,19 @@ export function smooth(row: Smooth): Operation {
       second(curvature, a.v, out.v, slope);
       J.chain(out, a, slope, curvature);
     },
+  };
+}
+
+function logarithmBy({ value, first, second, holdsOver }: LogRule): Operation['logarithm'] {
+  return (out, _, [u]) => {
+    if (holdsOver && !holdsOver(u.v)) {
+      J.setUnknown(out);
+      return;
+    }
+    value(out.v, u.v);
+    first(slope, u.v);
+    second(curvature, u.v);
+    J.chain(out, u, slope, curvature);
   };
 }
 

@@ -1,5 +1,9 @@
 /** What a row of the vocabulary is, and what its rewriting may ask for. */
+import type { Interval } from '../numeric/interval';
 import type { Operation } from './operation';
+
+/** Rows of nodes. */
+export type NodeArray = readonly (readonly number[])[];
 
 /** What a rewriting may ask for: nodes are the places of a tape. */
 export interface Maker {
@@ -10,6 +14,8 @@ export interface Maker {
   /** The value of a node that does not depend on the variables and is exactly known. */
   exactValue(node: number): number | undefined;
   isConstant(node: number): boolean;
+  /** Encloses a node that does not depend on the variables, truths included; nothing where it is undefined. */
+  enclosure(node: number): Interval | undefined;
   isTruth(node: number): boolean;
   /** Refuses the call with a message at its place. */
   refuse(found: string, expected: string): Error;
@@ -21,6 +27,8 @@ export interface Row {
   readonly most: number;
   readonly operation?: Operation;
   readonly rewrite?: (make: Maker, args: readonly number[]) => number;
+  /** As rewrite, for functions that need the shape of their arrays; a number is an array of one. */
+  readonly rewriteArrays?: (make: Maker, args: readonly NodeArray[]) => number;
 }
 
 /** For the most arguments of a function that takes any number of them. */

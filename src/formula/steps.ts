@@ -67,6 +67,18 @@ export class Steps {
     return this.constant(value, out);
   }
 
+  /** Encloses a constant step; truths and steps that could not be folded are worked out here. */
+  enclosure(place: number): Interval | undefined {
+    const { operation, a, b, c, nOperands, isConstant, enclosure } = this.all[place]!;
+    if (enclosure || !isConstant || nOperands === 0) return enclosure ?? undefined;
+    const [u, v, w] = [this.enclosure(a), this.enclosure(b), this.enclosure(c)];
+    if (!u || !v || !w) return undefined;
+    if (operation.defined && operation.defined(u, v) !== Defined.Everywhere) return undefined;
+    const out = I.interval();
+    operation.enclose(out, u, v, w);
+    return out;
+  }
+
   private push(
     operation: Operation,
     args: readonly number[],

@@ -10,9 +10,20 @@
  */
 import type { Operation } from './operation';
 import { ADD, DIVIDE, MULTIPLY, NEGATE, NUMBER, SUBTRACT, VARIABLE } from './operations/arithmetic';
-import { ABS, CHOOSE_BY, extremeOf, MAX, MIN, SIGN } from './operations/choice';
-import { EXP, LN } from './operations/exponential';
+import { BETA_ROWS } from './operations/betas';
+import { BRANCH_ROWS } from './operations/branch';
+import { CALENDAR_ROWS } from './operations/calendar';
+import { ABS, CHOOSE_BY, SIGN } from './operations/choice';
+import { COUNT_ROWS } from './operations/counts';
+import { ERF, ERFC } from './operations/error';
+import { EXP, LN, LOG10 } from './operations/exponential';
+import { COMBINATIONS, FACTORIAL, GAMMA, GAMMALN } from './operations/gamma';
+import { GAMMA_ROWS } from './operations/gammas';
+import { ACOSH, ASINH, ATANH, COSH, SINH, TANH } from './operations/hyperbolic';
+import { MANY_ROWS } from './operations/many';
+import { NORMAL_ROWS } from './operations/normal';
 import { raise, SQRT } from './operations/power';
+import { INT, ROUNDING_ROWS } from './operations/rounding';
 import {
   BOTH,
   comparison,
@@ -24,9 +35,8 @@ import {
   POSITIVE,
   truthOf,
 } from './operations/truth';
-import { ATAN, COS, SIN, TAN, TANH } from './operations/wave';
+import { ACOS, angle, ASIN, ATAN, COS, SIN, TAN } from './operations/wave';
 import type { Maker, Row } from './row';
-import { ANY } from './row';
 
 export type { Maker, Row };
 export { CHOOSE_BY, EXP, NUMBER, VARIABLE };
@@ -35,17 +45,20 @@ function unary(name: string, operation: Operation): Row {
   return { name, least: 1, most: 1, operation };
 }
 
-/**
- * A function of any number of arguments from one of two, as a balanced tree: the
- * rounding of a sum of n terms then grows with log n instead of n.
- */
-function folded(name: string, operation: Operation): Row {
-  const fold = (make: Maker, args: readonly number[], from: number, to: number): number => {
-    if (to - from === 1) return args[from]!;
-    const half = from + Math.ceil((to - from) / 2);
-    return make.apply(operation, fold(make, args, from, half), fold(make, args, half, to));
-  };
-  return { name, least: 1, most: ANY, rewrite: (make, args) => fold(make, args, 0, args.length) };
+/** A function of one argument written out in others. */
+function written(name: string, rewrite: (make: Maker, x: number) => number): Row {
+  return { name, least: 1, most: 1, rewrite: (make, [x]) => rewrite(make, x!) };
+}
+
+function logarithm(make: Maker, [x, base]: readonly number[]): number {
+  if (base === undefined || make.exactValue(base) === 10) return make.apply(LOG10, x!);
+  return make.apply(DIVIDE, make.apply(LN, x!), make.apply(LN, base));
+}
+
+/** ERF(x), or ERF(from, to). */
+function errorBetween(make: Maker, [from, to]: readonly number[]): number {
+  if (to === undefined) return make.apply(ERF, from!);
+  return make.apply(SUBTRACT, make.apply(ERF, to), make.apply(ERF, from!));
 }
 
 const ROWS: readonly Row[] = [
@@ -54,61 +67,73 @@ const ROWS: readonly Row[] = [
   { name: '*', least: 2, most: 2, operation: MULTIPLY },
   { name: '/', least: 2, most: 2, operation: DIVIDE },
   { name: '^', least: 2, most: 2, rewrite: raise },
+  { name: 'POWER', least: 2, most: 2, rewrite: raise },
   { name: 'negative', least: 1, most: 1, operation: NEGATE },
-  {
-    name: '%',
-    least: 1,
-    most: 1,
-    rewrite: (make, [x]) => make.apply(DIVIDE, x!, make.number(100)),
-  },
+  written('%', (make, x) => make.apply(DIVIDE, x, make.number(100))),
+
   comparison('<', POSITIVE, true),
   comparison('>', POSITIVE, false),
   comparison('<=', NOT_NEGATIVE, true),
   comparison('>=', NOT_NEGATIVE, false),
   comparison('<>', NOT_ZERO, false),
   comparison('=', NOT_ZERO, false, true),
-  { name: 'PI', least: 0, most: 0, rewrite: (make) => make.pi() },
+  gate('AND', BOTH),
+  gate('OR', EITHER),
+  written('NOT', (make, x) => make.apply(NOT, truthOf(make, x))),
+  { name: 'TRUE', least: 0, most: 0, rewrite: (make) => make.apply(NOT_ZERO, make.number(1)) },
+  { name: 'FALSE', least: 0, most: 0, rewrite: (make) => make.apply(NOT_ZERO, make.number(0)) },
+  ...BRANCH_ROWS,
+
   unary('ABS', ABS),
   unary('SIGN', SIGN),
-  extremeOf('MIN', MIN),
-  extremeOf('MAX', MAX),
-  folded('SUM', ADD),
-  folded('PRODUCT', MULTIPLY),
-  {
-    name: 'AVERAGE',
-    least: 1,
-    most: ANY,
-    rewrite: (make, args) =>
-      make.apply(DIVIDE, make.call('SUM', ...args), make.number(args.length)),
-  },
+  ...ROUNDING_ROWS,
+  ...MANY_ROWS,
+
   unary('SQRT', SQRT),
+  written('SQRTPI', (make, x) => make.apply(SQRT, make.apply(MULTIPLY, x, make.pi()))),
   unary('EXP', EXP),
   unary('LN', LN),
-  {
-    name: 'LOG',
-    least: 1,
-    most: 2,
-    rewrite: (make, [x, base]) =>
-      make.apply(DIVIDE, make.apply(LN, x!), make.apply(LN, base ?? make.number(10))),
-  },
-  { name: 'LOG10', least: 1, most: 1, rewrite: (make, [x]) => make.call('LOG', x!) },
-  { name: 'POWER', least: 2, most: 2, rewrite: raise },
+  unary('LOG10', LOG10),
+  { name: 'LOG', least: 1, most: 2, rewrite: logarithm },
+
+  { name: 'PI', least: 0, most: 0, rewrite: (make) => make.pi() },
   unary('SIN', SIN),
   unary('COS', COS),
   unary('TAN', TAN),
+  unary('ASIN', ASIN),
+  unary('ACOS', ACOS),
   unary('ATAN', ATAN),
+  { name: 'ATAN2', least: 2, most: 2, rewrite: angle },
+  written('DEGREES', (make, x) =>
+    make.apply(DIVIDE, make.apply(MULTIPLY, x, make.number(180)), make.pi()),
+  ),
+  written('RADIANS', (make, x) =>
+    make.apply(DIVIDE, make.apply(MULTIPLY, x, make.pi()), make.number(180)),
+  ),
+  unary('SINH', SINH),
+  unary('COSH', COSH),
   unary('TANH', TANH),
+  unary('ASINH', ASINH),
+  unary('ACOSH', ACOSH),
+  unary('ATANH', ATANH),
+
+  written('FACT', (make, x) => make.apply(FACTORIAL, make.apply(INT, x))),
   {
-    name: 'IF',
+    name: 'COMBIN',
     least: 2,
-    most: 3,
-    rewrite: (make, [c, a, b]) => make.apply(CHOOSE_BY, a!, b ?? make.number(0), truthOf(make, c!)),
+    most: 2,
+    rewrite: (make, [n, k]) => make.apply(COMBINATIONS, make.apply(INT, n!), make.apply(INT, k!)),
   },
-  gate('AND', BOTH),
-  gate('OR', EITHER),
-  { name: 'NOT', least: 1, most: 1, rewrite: (make, [a]) => make.apply(NOT, truthOf(make, a!)) },
-  { name: 'TRUE', least: 0, most: 0, rewrite: (make) => make.apply(NOT_ZERO, make.number(1)) },
-  { name: 'FALSE', least: 0, most: 0, rewrite: (make) => make.apply(NOT_ZERO, make.number(0)) },
+  unary('GAMMA', GAMMA),
+  unary('GAMMALN', GAMMALN),
+  { name: 'ERF', least: 1, most: 2, rewrite: errorBetween },
+  unary('ERFC', ERFC),
+  ...NORMAL_ROWS,
+  ...GAMMA_ROWS,
+  ...BETA_ROWS,
+  ...COUNT_ROWS,
+
+  ...CALENDAR_ROWS,
 ];
 
 /** Every row by its name in capitals. */

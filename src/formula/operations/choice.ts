@@ -3,8 +3,7 @@ import type { Interval } from '../../numeric/interval';
 import * as I from '../../numeric/interval';
 import * as J from '../../numeric/jet';
 import type { Operation } from '../operation';
-import type { Row } from '../row';
-import { ANY } from '../row';
+import type { Maker } from '../row';
 import { SUBTRACT } from './arithmetic';
 
 /** Slopes of a function that follows `a` or `b`, whichever, without a jump between them. */
@@ -111,12 +110,10 @@ export const CHOOSE_BY: Operation = {
   },
 };
 
-export function extremeOf(name: string, operation: Operation): Row {
-  return {
-    name,
-    least: 1,
-    most: ANY,
-    rewrite: (make, args) =>
-      args.reduce((a, b) => make.apply(operation, a, b, make.apply(SUBTRACT, a, b))),
-  };
+export function lesser(make: Maker, a: number, b: number): number {
+  return make.apply(MIN, a, b, make.apply(SUBTRACT, a, b));
+}
+
+export function greater(make: Maker, a: number, b: number): number {
+  return make.apply(MAX, a, b, make.apply(SUBTRACT, a, b));
 }

@@ -146,3 +146,9 @@ export function raise(make: Maker, [base, power]: readonly number[]): number {
   }
   return make.apply(EXP, make.apply(MULTIPLY, power!, make.apply(LN_OF_BASE, base!)));
 }
+
+const SQUARE = wholePower(2);
+
+export function square(make: Maker, x: number): number {
+  return make.apply(SQUARE, x);
+}

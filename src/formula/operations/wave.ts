@@ -1,9 +1,17 @@
-/** SIN, COS, TAN, ATAN and TANH: each slope is had from the value. */
+/** SIN, COS, TAN and their inverses. */
 import * as elementary from '../../numeric/elementary';
+import { lowerAt, upperAt } from '../../numeric/bounded';
 import type { Interval } from '../../numeric/interval';
 import * as I from '../../numeric/interval';
+import * as special from '../../numeric/special';
 import type { Operation } from '../operation';
 import { smooth } from '../operation';
+import type { Maker } from '../row';
+import { DIVIDE, NEGATE, SUBTRACT } from './arithmetic';
+import { CHOOSE_BY } from './choice';
+import { endOfUnit, withinUnit } from './domain';
+import { POSITIVE } from './truth';
+import { undefinedBecause } from './undefined';
 
 /** Scratch for one rule at a time; it holds nothing between calls. */
 const t = I.interval();
@@ -29,7 +37,7 @@ export const COS: Operation = smooth({
 });
 
 /** 1 + v², the derivative of TAN. */
-function onePlusSquare(out: Interval, v: Interval): void {
+export function onePlusSquare(out: Interval, v: Interval): void {
   I.square(out, v);
   I.add(out, out, one);
 }
@@ -61,18 +69,85 @@ export const ATAN: Operation = smooth({
   },
 });
 
-export const TANH: Operation = smooth({
-  name: 'TANH',
-  point: elementary.tanh,
-  enclose: I.hyperbolicTangent,
-  // 1 − tanh² cancels where TANH is near ±1; (1 − v)(1 + v) loses less and stays ≥ 0.
-  first(out, _, v) {
-    I.add(t, one, v);
-    I.subtract(out, one, v);
-    I.multiply(out, out, t);
+/** 1/√(1 − x²), written as a product for the digits near ±1. */
+function inverseSlope(out: Interval, u: Interval): void {
+  I.add(t, one, u);
+  I.subtract(out, one, u);
+  I.multiply(out, out, t);
+  I.squareRoot(out, out);
+  I.reciprocal(out, out);
+}
+
+export const ASIN: Operation = smooth({
+  name: 'ASIN',
+  point: elementary.asin,
+  enclose(out, u) {
+    const lo = lowerAt(special.asin, Math.max(-1, u.lo));
+    I.set(out, lo, upperAt(special.asin, Math.min(1, u.hi)));
   },
-  second(out, _, v, d) {
-    I.multiply(out, v, d);
-    I.scale(out, out, -2);
+  first: (out, u) => inverseSlope(out, u),
+  second(out, u, _, d) {
+    I.power(t, d, 3);
+    I.multiply(out, u, t);
   },
+  isSmoothOver: (u) => u.lo >= -1 && u.hi <= 1,
+  defined: withinUnit,
+  turnsOn: 0,
+  level: endOfUnit,
+  outside: 'ASIN takes a number that is not from -1 to 1',
 });
+
+export const ACOS: Operation = smooth({
+  name: 'ACOS',
+  point: elementary.acos,
+  enclose(out, u) {
+    const lo = lowerAt(special.acos, Math.min(1, u.hi));
+    I.set(out, lo, upperAt(special.acos, Math.max(-1, u.lo)));
+  },
+  first(out, u) {
+    inverseSlope(out, u);
+    I.negate(out, out);
+  },
+  second(out, u, _, d) {
+    I.power(t, d, 3);
+    I.multiply(out, u, t);
+  },
+  isSmoothOver: (u) => u.lo >= -1 && u.hi <= 1,
+  defined: withinUnit,
+  turnsOn: 0,
+  level: endOfUnit,
+  outside: 'ACOS takes a number that is not from -1 to 1',
+});
+
+/**
+ * ATAN2(x, y), the angle of the point (x, y) from −π to π, by quarters: the arctangent
+ * of the smaller slope in each.
+ */
+export function angle(make: Maker, [x, y]: readonly number[]): number {
+  const quarter = make.apply(DIVIDE, make.pi(), make.number(2));
+  const steep = make.apply(ATAN, make.apply(DIVIDE, x!, y!));
+  const onAxis = make.apply(
+    CHOOSE_BY,
+    make.pi(),
+    undefinedBecause(make, 'ATAN2 takes 0 and 0'),
+    make.apply(POSITIVE, make.apply(NEGATE, x!)),
+  );
+  const below = make.apply(
+    CHOOSE_BY,
+    make.apply(SUBTRACT, make.apply(NEGATE, quarter), steep),
+    onAxis,
+    make.apply(POSITIVE, make.apply(NEGATE, y!)),
+  );
+  const left = make.apply(
+    CHOOSE_BY,
+    make.apply(SUBTRACT, quarter, steep),
+    below,
+    make.apply(POSITIVE, y!),
+  );
+  return make.apply(
+    CHOOSE_BY,
+    make.apply(ATAN, make.apply(DIVIDE, y!, x!)),
+    left,
+    make.apply(POSITIVE, x!),
+  );
+}
