@@ -4,45 +4,24 @@
  * `Math.exp` and its relatives differ in the last bit between engines, so these
  * come from @stdlib's pure JavaScript (pinned versions: another version may round
  * another way and so change a draw). ERROR_ULPS bounds their error; it is at least
- * twice the largest error that the tests measure. Functions with other errors are in
- * special.ts.
+ * twice the largest error that test/numeric/elementary.test.ts measures.
  */
-import acosOf from '@stdlib/math-base-special-acos';
-import acoshOf from '@stdlib/math-base-special-acosh';
-import asinOf from '@stdlib/math-base-special-asin';
-import asinhOf from '@stdlib/math-base-special-asinh';
 import atanOf from '@stdlib/math-base-special-atan';
-import atanhOf from '@stdlib/math-base-special-atanh';
 import cosOf from '@stdlib/math-base-special-cos';
-import coshOf from '@stdlib/math-base-special-cosh';
 import expOf from '@stdlib/math-base-special-exp';
-import expm1Of from '@stdlib/math-base-special-expm1';
 import lnOf from '@stdlib/math-base-special-ln';
-import log10Of from '@stdlib/math-base-special-log10';
-import log1pOf from '@stdlib/math-base-special-log1p';
 import powOf from '@stdlib/math-base-special-pow';
 import sinOf from '@stdlib/math-base-special-sin';
-import sinhOf from '@stdlib/math-base-special-sinh';
 import tanOf from '@stdlib/math-base-special-tan';
 import tanhOf from '@stdlib/math-base-special-tanh';
 
 export const exp: (x: number) => number = expOf;
-export const expm1: (x: number) => number = expm1Of;
 export const ln: (x: number) => number = lnOf;
-export const log1p: (x: number) => number = log1pOf;
-export const log10: (x: number) => number = log10Of;
 export const sin: (x: number) => number = sinOf;
 export const cos: (x: number) => number = cosOf;
 export const tan: (x: number) => number = tanOf;
-export const asin: (x: number) => number = asinOf;
-export const acos: (x: number) => number = acosOf;
 export const atan: (x: number) => number = atanOf;
-export const sinh: (x: number) => number = sinhOf;
-export const cosh: (x: number) => number = coshOf;
 export const tanh: (x: number) => number = tanhOf;
-export const asinh: (x: number) => number = asinhOf;
-export const acosh: (x: number) => number = acoshOf;
-export const atanh: (x: number) => number = atanhOf;
 export const pow: (x: number, y: number) => number = powOf;
 
 /** Error bound of all of the above, in units in the last place; of `pow` up to the power below. */

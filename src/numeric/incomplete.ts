@@ -12,7 +12,8 @@
 import { bug } from '../errors';
 import type { Bounded } from './bounded';
 import { EPSILON } from './bounded';
-import { exp, ln, log1p } from './elementary';
+import { exp, ln } from './elementary';
+import { log1p } from './special';
 import { stirlingRatio } from './stirling';
 
 /** The errors were measured for parameters between these. */

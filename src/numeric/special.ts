@@ -6,18 +6,30 @@
  * to the value or, near a zero, absolute.
  * Not handled: GAMMA and its logarithm at arguments ≤ 0.
  */
+import acosOf from '@stdlib/math-base-special-acos';
+import acoshOf from '@stdlib/math-base-special-acosh';
+import asinOf from '@stdlib/math-base-special-asin';
+import asinhOf from '@stdlib/math-base-special-asinh';
+import atanhOf from '@stdlib/math-base-special-atanh';
+import coshOf from '@stdlib/math-base-special-cosh';
+import digammaOf from '@stdlib/math-base-special-digamma';
 import erfOf from '@stdlib/math-base-special-erf';
 import erfcOf from '@stdlib/math-base-special-erfc';
 import erfcxOf from '@stdlib/math-base-special-erfcx';
+import expm1Of from '@stdlib/math-base-special-expm1';
 import gammaOf from '@stdlib/math-base-special-gamma';
 import gammalnOf from '@stdlib/math-base-special-gammaln';
-import digammaOf from '@stdlib/math-base-special-digamma';
+import log10Of from '@stdlib/math-base-special-log10';
+import log1pOf from '@stdlib/math-base-special-log1p';
+import sinhOf from '@stdlib/math-base-special-sinh';
 import trigammaOf from '@stdlib/math-base-special-trigamma';
 import type { Bounded } from './bounded';
 import { EPSILON } from './bounded';
 import * as elementary from './elementary';
 
 type Fixed = (x: number) => number | undefined;
+
+export const log1p: (x: number) => number = log1pOf;
 
 /** An elementary function that is monotone all over its domain. */
 function plain(at: (x: number) => number, exact: Fixed, least: number, most: number): Bounded {
@@ -28,21 +40,21 @@ const at0: Fixed = (x) => (x === 0 ? 0 : undefined);
 const HALF_PI = 1.5707963267948968;
 const PI_UP = 3.1415926535897936;
 
-export const asin = plain(elementary.asin, at0, -HALF_PI, HALF_PI);
-export const acos = plain(elementary.acos, (x) => (x === 1 ? 0 : undefined), 0, PI_UP);
-export const sinh = plain(elementary.sinh, at0, -Infinity, Infinity);
+export const asin = plain(asinOf, at0, -HALF_PI, HALF_PI);
+export const acos = plain(acosOf, (x) => (x === 1 ? 0 : undefined), 0, PI_UP);
+export const sinh = plain(sinhOf, at0, -Infinity, Infinity);
 /** For x ≥ 0. */
-export const cosh = plain(elementary.cosh, (x) => (x === 0 ? 1 : undefined), 1, Infinity);
-export const asinh = plain(elementary.asinh, at0, -Infinity, Infinity);
-export const acosh = plain(elementary.acosh, (x) => (x === 1 ? 0 : undefined), 0, Infinity);
-export const atanh = plain(elementary.atanh, at0, -Infinity, Infinity);
-export const expm1 = plain(elementary.expm1, at0, -1, Infinity);
+export const cosh = plain(coshOf, (x) => (x === 0 ? 1 : undefined), 1, Infinity);
+export const asinh = plain(asinhOf, at0, -Infinity, Infinity);
+export const acosh = plain(acoshOf, (x) => (x === 1 ? 0 : undefined), 0, Infinity);
+export const atanh = plain(atanhOf, at0, -Infinity, Infinity);
+export const expm1 = plain(expm1Of, at0, -1, Infinity);
 
 const POWERS_OF_TEN = new Map(Array.from({ length: 23 }, (_, k) => [Number(`1e${k}`), k]));
 
 /** Exact at 1, 10, 100, … as worksheets are. */
 export const log10 = plain(
-  (x) => POWERS_OF_TEN.get(x) ?? elementary.log10(x),
+  (x) => POWERS_OF_TEN.get(x) ?? log10Of(x),
   (x) => POWERS_OF_TEN.get(x),
   -Infinity,
   Infinity,
@@ -131,7 +143,7 @@ const LN_2 = 0.6931471805599453;
 
 /** ln COSH(x) for x ≥ 0, without overflow. */
 export const lncosh: Bounded = {
-  at: (x) => x + elementary.log1p(elementary.exp(-2 * x)) - LN_2,
+  at: (x) => x + log1p(elementary.exp(-2 * x)) - LN_2,
   relative: 8 * EPSILON,
   absolute: 1e-15,
   exact: at0,
@@ -141,7 +153,7 @@ export const lncosh: Bounded = {
 
 /** ln SINH(x) for x > 0, without overflow. */
 export const lnsinh: Bounded = {
-  at: (x) => x + elementary.ln(-elementary.expm1(-2 * x)) - LN_2,
+  at: (x) => x + elementary.ln(-expm1Of(-2 * x)) - LN_2,
   relative: 8 * EPSILON,
   absolute: 2e-15,
   least: -Infinity,

@@ -65,7 +65,7 @@ export const LOG10: Operation = smooth({
 /** EXP(u) − 1 without cancelling near 0. */
 export const EXP_LESS_1: Operation = smooth({
   name: 'EXP less 1',
-  point: elementary.expm1,
+  point: special.expm1.at,
   enclose: (out, u) => setRising(out, special.expm1, u),
   first: (out, u) => I.exponential(out, u),
   second: (out, u) => I.exponential(out, u),

@@ -31,7 +31,7 @@ function cosine(out: Interval, u: Interval): void {
 
 export const SINH: Operation = smooth({
   name: 'SINH',
-  point: elementary.sinh,
+  point: special.sinh.at,
   enclose: (out, u) => setRising(out, special.sinh, u),
   first: (out, u) => cosine(out, u),
   second: (out, _, v) => I.copy(out, v),
@@ -55,7 +55,7 @@ export const SINH: Operation = smooth({
 
 export const COSH: Operation = smooth({
   name: 'COSH',
-  point: elementary.cosh,
+  point: special.cosh.at,
   enclose: cosine,
   first: (out, u) => setRising(out, special.sinh, u),
   second: (out, _, v) => I.copy(out, v),
@@ -85,7 +85,7 @@ export const TANH: Operation = smooth({
 
 export const ASINH: Operation = smooth({
   name: 'ASINH',
-  point: elementary.asinh,
+  point: special.asinh.at,
   enclose: (out, u) => setRising(out, special.asinh, u),
   first(out, u) {
     onePlusSquare(out, u);
@@ -105,7 +105,7 @@ function atLeast1(u: Interval): Defined {
 
 export const ACOSH: Operation = smooth({
   name: 'ACOSH',
-  point: elementary.acosh,
+  point: special.acosh.at,
   enclose(out, u) {
     I.set(out, lowerAt(special.acosh, Math.max(1, u.lo)), upperAt(special.acosh, u.hi));
   },
@@ -136,7 +136,7 @@ function withinOne(u: Interval): Defined {
 
 export const ATANH: Operation = smooth({
   name: 'ATANH',
-  point: elementary.atanh,
+  point: special.atanh.at,
   enclose(out, u) {
     const lo = u.lo <= -1 ? -Infinity : lowerAt(special.atanh, u.lo);
     I.set(out, lo, u.hi >= 1 ? Infinity : upperAt(special.atanh, u.hi));

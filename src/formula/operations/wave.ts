@@ -80,7 +80,7 @@ function inverseSlope(out: Interval, u: Interval): void {
 
 export const ASIN: Operation = smooth({
   name: 'ASIN',
-  point: elementary.asin,
+  point: special.asin.at,
   enclose(out, u) {
     const lo = lowerAt(special.asin, Math.max(-1, u.lo));
     I.set(out, lo, upperAt(special.asin, Math.min(1, u.hi)));
@@ -99,7 +99,7 @@ export const ASIN: Operation = smooth({
 
 export const ACOS: Operation = smooth({
   name: 'ACOS',
-  point: elementary.acos,
+  point: special.acos.at,
   enclose(out, u) {
     const lo = lowerAt(special.acos, Math.min(1, u.hi));
     I.set(out, lo, upperAt(special.acos, Math.max(-1, u.lo)));
