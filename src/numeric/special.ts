@@ -2,7 +2,7 @@
  * Special functions with the bounds of their errors.
  *
  * Source: @stdlib's pure JavaScript (pinned versions). Each bound is at least twice
- * the largest error measured against mpmath (test/formula/vectors/errors.py), relative
+ * the largest error measured against mpmath (test/numeric/vectors/make.py), relative
  * to the value or, near a zero, absolute.
  * Not handled: GAMMA and its logarithm at arguments ≤ 0.
  */
