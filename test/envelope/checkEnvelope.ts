@@ -7,9 +7,10 @@
 import type { Decimal } from 'decimal.js';
 import type { Envelope } from '../../src/envelope/envelope';
 import type { Hat } from '../../src/envelope/hat';
-import { placeOn } from '../../src/envelope/hat';
+import { heightOn, placeOn } from '../../src/envelope/hat';
 import type { Piece } from '../../src/envelope/piece';
 import { next, prev } from '../../src/numeric/float';
+import { integral } from './quadrature';
 import type { Reference } from './reference';
 import { Precise, preciseOf } from './reference';
 
@@ -17,8 +18,12 @@ import { Precise, preciseOf } from './reference';
 const LEFT_OUT = 1e-10;
 /** MAX(0, f) is drawn where f is below 0 by less than this share of its peak. */
 const SIGN_TOLERANCE = 1e-12;
+/** Pieces of an envelope whose area is found by quadrature. */
+const MOST_AREAS = 20;
+/** How well two quadratures have to agree, relative to the area. */
+const QUADRATURE = 1e-11;
 /** After these the rest is not looked for. */
-const MOST_VIOLATIONS = 10;
+const MOST_VIOLATIONS = 3;
 /** Doubles that differ less than this may do so by their own rounding. */
 const CLOSE = 1e-13;
 
@@ -38,6 +43,8 @@ export interface Report {
   readonly decided: number;
   /** Points at which the density itself is undefined or beyond what decimals reach. */
   readonly undefinedPoints: number;
+  /** Pieces whose area was found by quadrature and lay within its enclosure. */
+  readonly areas: number;
   readonly violations: readonly string[];
 }
 
@@ -52,6 +59,7 @@ class Checker {
   private readonly down: number;
   private readonly least: Decimal;
   private points = 0;
+  private areas = 0;
   private decided = 0;
   private undefinedPoints = 0;
   private unsure = 0;
@@ -81,9 +89,12 @@ class Checker {
       const piece = pieces[Math.floor(random() * pieces.length)]!;
       this.at(piece, this.pointIn(piece), i % preciseEvery === 0);
     }
+    for (let i = 0; i < MOST_AREAS; i++)
+      this.checkArea(pieces[Math.floor(random() * pieces.length)]!);
     for (const hat of this.envelope.hats) this.checkHat(hat);
-    const { points, decided, undefinedPoints, violations } = this;
-    return { points, decided, undefinedPoints, violations };
+    this.checkBeyond();
+    const { points, decided, undefinedPoints, areas, violations } = this;
+    return { points, decided, undefinedPoints, areas, violations };
   }
 
   private fault(text: string): void {
@@ -91,21 +102,29 @@ class Checker {
   }
 
   private checkTiling(): void {
-    const { pieces, hats } = this.envelope;
+    const { pieces } = this.envelope;
     const [from, to] = withoutHats(this.envelope);
-    let reached = from;
+    // Without a hat there has to be nothing on an unbounded side, which checkBeyond looks into.
+    let reached = from === -Infinity ? pieces[0]!.from : from;
+    const end = to === Infinity ? pieces.at(-1)!.to : to;
     let leftOut = 0;
     for (const piece of pieces) {
       if (piece.from < reached) this.fault(`piece at ${piece.from} begins before ${reached}`);
       if (!(piece.to > piece.from)) this.fault(`piece ${piece.from} … ${piece.to} is empty`);
-      leftOut += piece.from - reached;
+      leftOut += this.stretch(reached, piece.from);
       reached = piece.to;
     }
-    if (hats.length === 0 && !(Number.isFinite(from) && Number.isFinite(to)))
-      this.fault('an unbounded side has no hat');
-    if (reached > to) this.fault(`the last piece ends at ${reached}, after ${to}`);
-    leftOut += to - reached;
-    if (!(leftOut <= LEFT_OUT * (to - from))) this.fault(`${leftOut} of the limits is left out`);
+    if (reached > end) this.fault(`the last piece ends at ${reached}, after ${end}`);
+    leftOut += this.stretch(reached, end);
+    if (!(leftOut <= LEFT_OUT * (end - pieces[0]!.from)))
+      this.fault(`${leftOut} of the limits is left out`);
+  }
+
+  /** The length of what lies between two pieces; none where the density is far below all doubles. */
+  private stretch(from: number, to: number): number {
+    if (to <= from) return 0;
+    const height = this.reference.precise(from / 2 + to / 2).times(this.scale);
+    return height.abs().lt(5e-324) ? 0 : to - from;
   }
 
   private checkPiece(piece: Piece): void {
@@ -132,6 +151,37 @@ class Checker {
       );
   }
 
+  /** The area under a piece by quadrature in doubles, where two of them agree. */
+  private checkArea({ from, to, areaLo, areaHi }: Piece): void {
+    // Among neighbouring doubles the nodes themselves are rounded.
+    if (!(to - from > Math.max(Math.abs(from), Math.abs(to)) * 1e-6)) return;
+    const height = (x: number): number => Math.max(0, this.reference.plain(x) * this.down);
+    const [once, twice] = [integral(height, from, to, 1), integral(height, from, to, 2)];
+    if (!(Math.abs(once - twice) <= QUADRATURE * twice)) return;
+    this.areas++;
+    const slack = 2 * QUADRATURE * twice;
+    if (twice < areaLo - slack || twice > areaHi + slack)
+      this.fault(`piece ${from} … ${to}: its area ${twice} is not in ${areaLo} … ${areaHi}`);
+  }
+
+  /** Nothing may lie beyond the pieces of a side that is unbounded and has no hat. */
+  private checkBeyond(): void {
+    const [from, to] = withoutHats(this.envelope);
+    const { pieces } = this.envelope;
+    const sides = [
+      { end: pieces[0]!.from, limit: from, direction: -1 },
+      { end: pieces.at(-1)!.to, limit: to, direction: 1 },
+    ];
+    for (const { end, limit, direction } of sides) {
+      if (Number.isFinite(limit)) continue;
+      for (let k = -40; k < 300; k++) {
+        const x = end + direction * Math.pow(2, k) * (1 + this.options.random());
+        if (Number.isFinite(x) && this.reference.plain(x) > 0)
+          this.fault(`x = ${x} lies beyond the pieces and has height ${this.reference.plain(x)}`);
+      }
+    }
+  }
+
   /** Evenly by the hat's own area, and far out. */
   private checkHat(hat: Hat): void {
     const { nPoints, random } = this.options;
@@ -139,6 +189,8 @@ class Checker {
     for (let i = 0; i < nPoints / 10; i++) {
       placeOn(hat, i % 2 === 0 ? random() : Math.pow(2, -60 * random()), at);
       if (at.x === hat.origin || !Number.isFinite(at.x)) continue;
+      // The place is rounded, which is much of the distance from a pole: the hat counts where x is.
+      at.height = heightOn(hat, at.x);
       this.points++;
       const height = this.reference.plain(at.x) * this.down;
       if (height <= at.height || (!Number.isFinite(height) && i % 10 > 0)) continue;

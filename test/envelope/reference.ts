@@ -51,9 +51,9 @@ const doubles: Arithmetic<number> = {
   sign: Math.sign,
 };
 
-/** Decimals of 60 digits, and of 800 where 60 may have cancelled: enough for 1 + 5E-324, squared. */
+/** Decimals of 60 digits, and of 680 where 60 may have cancelled: enough for 1 + 5E-324, squared. */
 export const Precise = Decimal.clone({ precision: 60, minE: -9e15, maxE: 9e15 });
-const VeryPrecise = Decimal.clone({ precision: 800, minE: -9e15, maxE: 9e15 });
+const VeryPrecise = Decimal.clone({ precision: 680, minE: -9e15, maxE: 9e15 });
 
 /** Beyond this decimals have no exponent for EXP, and take for ever over waves: both count as unknown. */
 const FAR = 1e14;
@@ -363,7 +363,7 @@ export interface Reference {
   readonly plain: (x: number) => number;
   /** In 60 digits. */
   readonly precise: (x: number) => Decimal;
-  /** In 800 digits, for a second look. */
+  /** In 680 digits, for a second look. */
   readonly veryPrecise: (x: number) => Decimal;
 }
 

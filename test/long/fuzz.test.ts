@@ -1,0 +1,23 @@
+/** Fuzzing the proof at length (npm run check:long). */
+import { fuzz } from '../envelope/fuzz';
+import { randomOpenShape, randomShape } from '../envelope/randomFormula';
+
+const POINTS = 1300;
+
+describe('proveEnvelope on many random formulas', () => {
+  test.each([
+    { what: 'finite limits', make: randomShape, shapes: 5000, leastPoints: 5_000_000 },
+    { what: 'unbounded sides and poles', make: randomOpenShape, shapes: 1500, leastPoints: 1e6 },
+  ])(
+    'on $what it refuses in words or proves lines that no point passes [law]',
+    ({ what, make, shapes, leastPoints }) => {
+      const report = fuzz({ seed: `harvest, ${what}`, shapes, points: POINTS, make });
+      const { faults, proved, refused, points } = report;
+      console.log(
+        `${what}: ${shapes} shapes, ${proved} proved, ${refused} refused, ${points} points, ${faults.length} faults`,
+      );
+      expect(faults).toEqual([]);
+      expect(points).toBeGreaterThanOrEqual(leastPoints);
+    },
+  );
+});
