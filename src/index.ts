@@ -2,8 +2,11 @@
 export type { Cell, ErrorCell, Range } from './density/cells';
 export { CellErrorPassed, InputError } from './errors';
 export { acceptance } from './worksheet/acceptance';
+export { blend } from './worksheet/blend';
 export { draw } from './worksheet/draw';
 export { envelope } from './worksheet/envelope';
 export { expect } from './worksheet/expect';
+export { fromBins, fromData, fromPercentiles } from './worksheet/histogram';
 export { profile } from './worksheet/profile';
+export { proposals } from './worksheet/proposals';
 export { above, below, quantile } from './worksheet/shares';

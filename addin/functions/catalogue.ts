@@ -7,11 +7,16 @@ import {
   above,
   acceptance,
   below,
+  blend,
   draw,
   envelope,
   expect,
+  fromBins,
+  fromData,
+  fromPercentiles,
   InputError,
   profile,
+  proposals,
   quantile,
 } from '../../src/index';
 import type { Range } from '../../src/index';
@@ -57,6 +62,13 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     quantile(density, limits, share, side, givens),
   EXPECT: ([density = null, limits = null, quantity = null], givens) =>
     expect(density, limits, quantity, givens),
+  PROPOSALS: ([density = null, limits = null, rows = null, seed = null, label = null], givens) =>
+    proposals(density, limits, rows, seed, label, givens),
+  FROMBINS: ([edges = null, shares = null]) => fromBins(edges, shares),
+  FROMPERCENTILES: ([levels = null, values = null, lowest = null, highest = null]) =>
+    fromPercentiles(levels, values, lowest, highest),
+  FROMDATA: ([values = null, lowest = null, highest = null]) => fromData(values, lowest, highest),
+  BLEND: ([shares = null], shapes) => blend(shares, shapes),
 };
 
 interface FunctionMetadata {

@@ -145,3 +145,72 @@ export function expect(
 ): any[][] {
   return answer('EXPECT', [density, limits, quantity], givens);
 }
+
+/**
+ * Lists every proposal behind the draws of DRAW with the same cells, kept or not. A heading row, then one row a proposal: row, attempt, value in the unit of x, height drawn (none is needed under the lower line), density there, kept as TRUE or FALSE.
+ * @customfunction PROPOSALS
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param rows How many values, 1 to 100000, or two cells: first row and last row.
+ * @param seed Seed of the draws. Give the same as to DRAW.
+ * @param label Label of the draws. Give the same as to DRAW.
+ * @param givens Values for the names in the formula: two columns, name and value.
+ */
+export function proposals(
+  density: any[][],
+  limits?: any[][],
+  rows?: any[][],
+  seed?: any[][],
+  label?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('PROPOSALS', [density, limits, rows, seed, label], givens);
+}
+
+/**
+ * Makes a table of points from a histogram: each bin gets its share of the area, whatever its width. A heading row, then x in the unit of the edges and height in share per unit of x. Give it to DRAW as density.
+ * @customfunction FROMBINS
+ * @param edges Edges of the bins, rising: one more than there are bins.
+ * @param shares Share of each bin, 0 or more. Counts or percentages do as well: they are scaled to add up to 1.
+ */
+export function fromBins(edges: any[][], shares: any[][]): any[][] {
+  return answer('FROMBINS', [edges, shares], null);
+}
+
+/**
+ * Makes a table of points from judged percentiles, evenly spread between neighbours. A heading row, then x in the unit of the values and height in share per unit of x. Give it to DRAW as density.
+ * @customfunction FROMPERCENTILES
+ * @param levels Levels as fractions between 0 and 1, rising, such as 0.1, 0.5, 0.9.
+ * @param values The value that is not exceeded with each of these chances, rising.
+ * @param lowest The least that can happen, below the first value.
+ * @param highest The most that can happen, above the last value.
+ */
+export function fromPercentiles(
+  levels: any[][],
+  values: any[][],
+  lowest: any[][],
+  highest: any[][],
+): any[][] {
+  return answer('FROMPERCENTILES', [levels, values, lowest, highest], null);
+}
+
+/**
+ * Makes a table of points from data: a histogram with bins of width 2 IQR / n^(1/3) (Freedman and Diaconis 1981), or 1 + log2 n bins (Sturges 1926) when the middle half of the values are all alike. A heading row, then x in the unit of the values and height in share per unit of x. Give it to DRAW as density.
+ * @customfunction FROMDATA
+ * @param values One row or column of numbers. A blank counts as 0.
+ * @param lowest Where the first bin begins. Left out: the least value.
+ * @param highest Where the last bin ends. Left out: the largest value.
+ */
+export function fromData(values: any[][], lowest?: any[][], highest?: any[][]): any[][] {
+  return answer('FROMDATA', [values, lowest, highest], null);
+}
+
+/**
+ * Blends shapes by shares of the area, whatever their heights: 0.9 and 0.1 mean nine draws in ten from the first. Tables alone give a table of points; with a formula among them a block of two columns with density, from, to and constants. Give the result to DRAW as density.
+ * @customfunction BLEND
+ * @param shares Share of each shape as fraction of 1; they add up to 1.
+ * @param shapes A table of points, or a block of two columns that names density, from, to and constants; one range for each share.
+ */
+export function blend(shares: any[][], shapes?: any[][][]): any[][] {
+  return answer('BLEND', [shares], shapes);
+}

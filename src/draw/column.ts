@@ -122,6 +122,27 @@ export class Drawer {
     return nOpen;
   }
 
+  /** Every proposal of rows `first` … `first + n − 1`, as `column` makes them; null when there are more than `most`. */
+  proposals(key: Key, first: number, n: number, most: number, method = 0): Proposal[] | null {
+    const stream = new RowStream(key, method);
+    const made: Proposal[] = [];
+    for (let row = first; row < first + n; row++) {
+      stream.fillFirst(row, this.one, 1);
+      const u = this.one[0]!;
+      stream.further(row, 0, this.pair);
+      this.propose(u);
+      for (let attempt = 0, isKept = false; !isKept; attempt++) {
+        if (made.length === most) return null;
+        const v = this.pair[1]!;
+        isKept = this.isAccepted(v);
+        made.push({ row, attempt, x: this.proposal.x, height: this.heightAtShare(v), isKept });
+        stream.further(row, attempt + 1, this.pair);
+        if (!isKept) this.propose(this.pair[0]!);
+      }
+    }
+    return made;
+  }
+
   /** Finishes a row whose first number u fell into a gap or a hat; returns the proposals it took. */
   private finish(
     stream: RowStream,
@@ -187,12 +208,28 @@ export class Drawer {
 
   /** Whether the height at share v of the gap lies under the density at x. */
   private isUnderGap(x: number, piece: number, v: number): boolean {
+    const { lower, gap } = this.linesAt(x, piece);
+    return this.isUnder(x, lower + v * gap, (lower + gap) * (1 + LINE_ROUNDING));
+  }
+
+  /** The height of the lower line at x, and from there to the upper one. */
+  private linesAt(x: number, piece: number): { readonly lower: number; readonly gap: number } {
     const { lines } = this.guide;
     const at = piece * LINES_STRIDE;
     const t = (x - lines[at]!) * lines[at + 1]!;
-    const lower = lines[at + 2]! + lines[at + 3]! * t;
-    const gap = lines[at + 4]! + lines[at + 5]! * t;
-    return this.isUnder(x, lower + v * gap, (lower + gap) * (1 + LINE_ROUNDING));
+    return {
+      lower: lines[at + 2]! + lines[at + 3]! * t,
+      gap: lines[at + 4]! + lines[at + 5]! * t,
+    };
+  }
+
+  /** The height that share v stands for at the proposal at hand; NaN under the lower line. */
+  private heightAtShare(v: number): number {
+    const { x, gap, height } = this.proposal;
+    if (gap < 0) return NaN;
+    if (gap >= this.envelope.pieces.length) return v * height;
+    const lines = this.linesAt(x, gap);
+    return lines.lower + v * lines.gap;
   }
 
   private isUnder(x: number, height: number, upper: number): boolean {

@@ -58,6 +58,10 @@ function copyGrowth(out: Growth, a: Growth): void {
   I.copy(out.s, a.s);
 }
 
+function isZero({ lo, hi }: Interval): boolean {
+  return lo === 0 && hi === 0;
+}
+
 /** Scratch for one rule at a time; it holds nothing between calls. */
 const p = I.interval();
 const q = I.interval();
@@ -246,6 +250,11 @@ export class SideEncloser {
    * is bounded by its value where the side begins when its elasticity keeps its sign.
    */
   private sum(step: Step, out: Growth, a: Growth, b: Growth, sign: 1 | -1): void {
+    // A term that is 0 all over the side adds nothing, and the ratio to it says nothing.
+    if (isZero(b.v) || (isZero(a.v) && sign > 0)) {
+      copyGrowth(out, isZero(b.v) ? a : b);
+      return;
+    }
     const ratio = r;
     this.ratio(step, ratio, a, b);
     if (sign < 0) I.negate(ratio, ratio);

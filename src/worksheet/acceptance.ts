@@ -7,6 +7,9 @@ import type { Column } from '../draw/column';
 import { promisedAcceptance } from '../envelope/envelope';
 import type { Given } from '../formula/given';
 import { waitingPValue, wilson } from '../evidence/proportion';
+import { sharesOfTerms } from '../exact/terms';
+import { compile } from '../formula/compile';
+import { termsOf } from '../formula/terms';
 import type { Proved } from './proved';
 import { drawColumn, prove } from './proved';
 import type { ColumnRequest, DrawRequest } from './request';
@@ -34,7 +37,22 @@ export function acceptance(
 ): Range {
   const request = readDrawRequest(density, limits, rows, seed, label, givens);
   const tables = request.columns.map((column) => diagnose(column, request));
-  return tables[0]!.map(([item], i) => [item, ...tables.map((lines) => lines[i]![1])]);
+  return joined(tables);
+}
+
+/** One line for each item of any column, in order; blank where a column has none. */
+function joined(tables: readonly (readonly Line[])[]): Range {
+  const items: string[] = [];
+  for (const lines of tables) {
+    let after = -1;
+    for (const [item] of lines) {
+      const known = items.indexOf(item);
+      if (known < 0) items.splice(after + 1, 0, item);
+      after = known < 0 ? after + 1 : known;
+    }
+  }
+  const columns = tables.map((lines) => new Map(lines));
+  return items.map((item) => [item, ...columns.map((column) => column.get(item) ?? null)]);
 }
 
 function diagnose(
@@ -51,6 +69,7 @@ function diagnose(
     ['first row', firstRow],
     ['rows', nRows],
     ...proofLines(proved),
+    ...termLines(request.shape, proved),
     ...drawLines(proved, column, nRows),
     ['method', CURRENT_METHOD],
     ['notes', allNotes.length === 0 ? 'none' : allNotes.join('; ')],
@@ -114,6 +133,28 @@ function proofLines({ envelope }: Proved): readonly Line[] {
     ['area at most', envelope.areaHi],
     ['scale exponent', envelope.exponent],
   ];
+}
+
+/** What share of the area each term of a sum holds, which is seldom the number in front of it. */
+function termLines(shape: Shape, { envelope }: Proved): readonly Line[] {
+  if (shape.kind === 'table') return [];
+  const { sources, variable, givens } = shape;
+  const sums = sources.filter((source) => termsOf(source).length > 0);
+  if (sums.length !== 1) return [];
+  const others = sources.filter((source) => source !== sums[0]);
+  const terms = termsOf(sums[0]!);
+  const shares = sharesOfTerms(
+    envelope,
+    terms.map((term) => compile([term, ...others], [variable], givens)),
+  );
+  return (shares ?? []).map((share, i): Line => [
+    `share of area, term ${i + 1}: ${shortened(terms[i]!.text)}`,
+    share,
+  ]);
+}
+
+function shortened(text: string): string {
+  return text.length <= 60 ? text : `${text.slice(0, 59)}…`;
 }
 
 function drawLines({ envelope, area }: Proved, column: Column, nRows: number): readonly Line[] {

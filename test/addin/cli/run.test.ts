@@ -69,6 +69,10 @@ describe('undercurve call', () => {
     ABOVE: [BLOCK, null, [[3], [4]]],
     QUANTILE: [BLOCK, null, [[0.1], [0.9]]],
     EXPECT: [BLOCK, null, 'x'],
+    FROMBINS: [[[0, 1, 3]], [[0.2, 0.8]]],
+    FROMPERCENTILES: [[[0.1, 0.9]], [[2, 5]], 0, 9],
+    FROMDATA: [[[1], [2], [4], [4.5], [7]]],
+    BLEND: [[[0.9, 0.1]], BLOCK, BLOCK],
   };
 
   test.each(catalogue.map(({ name }) => name))('answers for UNDERCURVE.%s [law]', (name) => {
