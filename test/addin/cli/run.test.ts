@@ -102,7 +102,7 @@ describe('undercurve functions', () => {
     const { status, out } = ran(['functions']);
     expect(status).toBe(0);
     for (const { name, description, parameters } of catalogue) {
-      expect(out).toContain(`UNDERCURVE.${name}(density, `);
+      expect(out).toContain(`UNDERCURVE.${name}(${parameters[0]!.name}, `);
       expect(out).toContain(description);
       for (const parameter of parameters) expect(out).toContain(parameter.description);
     }
