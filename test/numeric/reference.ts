@@ -5,7 +5,7 @@
 import Decimal from 'decimal.js';
 import { dyadic } from './dyadic';
 
-/** Digits carried; the comparisons below lean on the first 38. */
+/** Digits carried; the comparisons below lean on the first 30, so that some may cancel. */
 export const Big = Decimal.clone({ precision: 44, defaults: true, maxE: 9e15, minE: -9e15 });
 export type Big = Decimal;
 
@@ -24,8 +24,8 @@ export function big(x: number): Big {
   return powerOfTwo(e).times(m.toString());
 }
 
-/** What 38 digits leave open of a value. */
-const SLACK = new Big('1e-38');
+/** What 30 digits leave open of a value. */
+const SLACK = new Big('1e-30');
 
 /** lo ≤ t ≤ hi, for double ends and a reference value. */
 export function isBetween(lo: number, t: Big, hi: number): boolean {
