@@ -12,9 +12,11 @@ import { Drawer } from '../draw/column';
 import type { Envelope } from '../envelope/envelope';
 import { polylineEnvelope } from '../envelope/polyline';
 import { proveEnvelope } from '../envelope/prove';
+import { rescaled } from '../exact/rescale';
 import { Shares } from '../exact/shares';
 import { compile } from '../formula/compile';
 import type { Tape } from '../formula/tape';
+import { powerOfTwo } from '../numeric/float';
 import type { Key } from '../random/key';
 
 const MAX_BYTES = 64 * 1024 * 1024;
@@ -72,14 +74,20 @@ export function prove(shape: Shape): Proved {
 }
 
 function withShares(proof: Omit<Proved, 'shares' | 'area'>): Proved {
-  let shares: Shares | undefined;
+  let known: { readonly shares: Shares; readonly area: number } | undefined;
+  const exact = (): { readonly shares: Shares; readonly area: number } => {
+    if (known) return known;
+    const { envelope, shift } = rescaled(proof.envelope, proof.tape);
+    const shares = new Shares(envelope);
+    return (known = { shares, area: shares.area / powerOfTwo(shift) });
+  };
   return {
     ...proof,
     get shares() {
-      return (shares ??= new Shares(proof.envelope));
+      return exact().shares;
     },
     get area() {
-      return this.shares.area;
+      return exact().area;
     },
   };
 }

@@ -40,6 +40,20 @@ describe('below, above, quantile', () => {
     expect(Number(above(BLOCK, null, upper, [])[0]![0])).toBeCloseTo(0.1, 14);
   });
 
+  test.each([
+    'EXP(-0.5*x^2)',
+    '1E-100*EXP(-0.5*x^2)',
+    '1E-200*EXP(-0.5*x^2)',
+    'EXP(-800-0.5*x^2)',
+    '1E200*EXP(-0.5*x^2)',
+  ])('above(…) of %s keeps a share of 1e-300, whatever the heights [published]', (density) => {
+    // 1 − Φ(37), recomputed as erfc(37/√2)/2; x² rounds by 6e-14 of the height there.
+    for (const limits of [[[-39, 39]], null]) {
+      const share = above([[density]], limits, [[37]], [])[0]![0];
+      expect(Math.abs(Number(share) / 5.725571222524577e-300 - 1)).toBeLessThan(4e-13);
+    }
+  });
+
   test('below(…) of a table takes its ends, and limits truncate it [law]', () => {
     const table = [
       ['x', 'height'],
