@@ -155,6 +155,7 @@ class Checker {
   private checkArea({ from, to, areaLo, areaHi }: Piece): void {
     // Among neighbouring doubles the nodes themselves are rounded.
     if (!(to - from > Math.max(Math.abs(from), Math.abs(to)) * 1e-6)) return;
+    if (!this.areDoublesGood(from + (to - from) * 0.37)) return;
     const height = (x: number): number => Math.max(0, this.reference.plain(x) * this.down);
     const [once, twice] = [integral(height, from, to, 1), integral(height, from, to, 2)];
     if (!(Math.abs(once - twice) <= QUADRATURE * twice)) return;
@@ -162,6 +163,19 @@ class Checker {
     const slack = 2 * QUADRATURE * twice;
     if (twice < areaLo - slack || twice > areaHi + slack)
       this.fault(`piece ${from} … ${to}: its area ${twice} is not in ${areaLo} … ${areaHi}`);
+  }
+
+  /** Whether doubles have not lost their digits on the way, and hold the scaled density at all. */
+  private areDoublesGood(x: number): boolean {
+    const height = this.reference.plain(x) * this.down;
+    const precise = this.reference.precise(x).times(this.scale);
+    return (
+      Number.isFinite(height) &&
+      precise
+        .minus(height)
+        .abs()
+        .lt(precise.times(QUADRATURE / 10))
+    );
   }
 
   /** Nothing may lie beyond the pieces of a side that is unbounded and has no hat. */

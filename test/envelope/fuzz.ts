@@ -76,7 +76,7 @@ function proveOrRefuse(
     return proved(text, from, to);
   } catch (error) {
     if (!(error instanceof InputError)) fault(String(error));
-    else if (/NaN|undefined(?! (from|below))|Infinity/.test(error.message)) fault(error.message);
+    else if (/NaN|Infinity/.test(error.message)) fault(error.message);
     return null;
   } finally {
     const { user, system } = process.cpuUsage(start);
