@@ -104,7 +104,7 @@ const entries: readonly Entry[] = [
     from: -40,
     to: 40,
     area: 1,
-    below: [[1, 0.7310585786300049]],
+    below: [[1, 0.73105857863000490]],
     source: 'CDF(1) = 1/(1 + 1/e)',
   },
   {
@@ -140,7 +140,7 @@ const entries: readonly Entry[] = [
     density: 'EXP(-x-EXP(-x))',
     from: -5,
     to: 0.5,
-    area: 0.5452392118926051,
+    area: 0.54523921189260505,
     below: [],
     source: 'CDF(.5) = .54523921189260506, closed form',
   },
@@ -182,7 +182,7 @@ const entries: readonly Entry[] = [
     area: 5 / 3.5,
     below: [
       [1, 0.035355339059327376],
-      [3, 0.8548450522795154],
+      [3, 0.85484505227951535],
     ],
     source: 'van Dorp & Kotz 2002',
   },
