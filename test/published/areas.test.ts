@@ -104,7 +104,7 @@ const entries: readonly Entry[] = [
     from: -40,
     to: 40,
     area: 1,
-    below: [[1, 0.73105857863000490]],
+    below: [[1, 0.7310585786300049]],
     source: 'CDF(1) = 1/(1 + 1/e)',
   },
   {
