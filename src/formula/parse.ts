@@ -9,7 +9,7 @@
 import type { AstExpression, BinaryExpression, Identifier, UnaryExpression } from '@borgar/fx';
 import { parse as parseTokens, tokenize } from '@borgar/fx';
 import { InputError } from '../errors';
-import { checkText, place } from './check';
+import { checkText, cited, place } from './check';
 import type { Tree } from './tree';
 import { unreadable } from './unreadable';
 import { VOCABULARY } from './vocabulary';
@@ -22,8 +22,9 @@ type Expression = AstExpression | Identifier;
  * @throws {InputError} when the text is not a formula.
  */
 export function parse(text: string, where: string): Tree {
-  const checked = checkText(text, where);
-  if (/^\s*=?\s*$/.test(checked)) {
+  // The sign that makes a cell a formula says nothing here, wherever spaces put it.
+  const checked = checkText(text, where).replace(/^\s*=/, (start) => ' '.repeat(start.length));
+  if (checked.trim() === '') {
     throw new InputError(where, 'it is blank', 'give a formula such as EXP(-x)');
   }
   return new Reader(checked, where).read(parseText(checked, where));
@@ -114,7 +115,7 @@ class Reader {
     if (typeof value === 'boolean') return { kind: 'truth', value, at };
     if (typeof value === 'string') return { kind: 'text', value, at };
     if (typeof value !== 'number' || !Number.isFinite(value)) {
-      throw this.error(at, `the number ${raw} is too large`, 'use numbers up to 1.79E308');
+      throw this.error(at, `the number ${cited(raw)} is too large`, 'use numbers up to 1.79E308');
     }
     return { kind: 'number', value: value === 0 ? 0 : value, at };
   }
