@@ -6,7 +6,7 @@ import { Encloser } from '../../src/formula/enclose';
 import { evaluator } from '../../src/formula/evaluate';
 import { checkContainment } from './containment';
 import { CASES, isWithin, relativeError } from './references';
-import { tapeOf } from './tapes';
+import { tapeOf } from './formulas';
 
 /** Relative, at every reference point: the promise for all functions of the worksheet. */
 const POINT_TOLERANCE = 1e-12;
