@@ -37,8 +37,8 @@ function* intervalsOf(
 }
 
 describe('VOCABULARY', () => {
-  it('every row is tried in uses.ts, steps.test.ts or vectors/values.txt [law]', () => {
-    const texts = ['steps.test.ts', 'vectors/values.txt'].map((file) =>
+  it('every row is tried in uses.ts, rules.ts, steps.test.ts or vectors/values.txt [law]', () => {
+    const texts = ['rules.ts', 'steps.test.ts', 'vectors/values.txt'].map((file) =>
       readFileSync(join(__dirname, file), 'utf8'),
     );
     const isTried = (name: string): boolean =>
