@@ -124,9 +124,11 @@ class Finder {
     const steps = new SideEncloser(this.tape, this.encloser, side);
     let best: { c: number; area: number } | null = null;
     let isInfinite = false;
-    for (const c of candidates) {
-      const x = steps.pointAt(c);
+    for (const candidate of candidates) {
+      const x = steps.pointAt(candidate);
       if (x === side.origin || !Number.isFinite(x)) continue;
+      // Near a pole x is rounded: the distance that counts is the one at which the hat's height is found.
+      const c = (x - side.origin) * side.direction;
       const verdict = this.verdict(steps, side, c, x);
       if (verdict === 'infinite') isInfinite = true;
       if (typeof verdict === 'string') continue;
