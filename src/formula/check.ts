@@ -124,7 +124,7 @@ export function checkText(text: string, where: string): string {
       `add "${left.bracket === '(' ? ')' : '}'}"`,
     );
   }
-  const withoutReferences = plain.replace(/\[[^\]]*\]/g, (part) => 'q'.repeat(part.length));
+  const withoutReferences = plain.replace(/\[[^[\]]*\]/g, (part) => 'q'.repeat(part.length));
   checkSigns(withoutReferences, (at) => place(where, at));
   if (semicolons.length === 0) return text;
   return withCommas(text, commas, semicolons, where);

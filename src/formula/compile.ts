@@ -190,16 +190,19 @@ class Compiler {
   }
 
   private let(tree: Extract<Tree, { kind: 'let' }>, scope: Scope): Value {
-    const inner = new Scope(scope);
+    let inner = scope;
     for (const { name, value, at } of tree.bindings) {
-      if (value.kind === 'lambda' && !scope.find(nameKey(name)) && callsItself(name, value.body)) {
+      if (value.kind === 'lambda' && !inner.find(nameKey(name)) && callsItself(name, value.body)) {
         throw this.error(
           at,
           `${name} calls itself`,
           'recursion is not part of the formula language; write the steps out',
         );
       }
-      inner.set(nameKey(name), this.value(value, inner));
+      // A scope for every name: a LAMBDA sees what stood before it, not itself.
+      const next = new Scope(inner);
+      next.set(nameKey(name), this.value(value, inner));
+      inner = next;
     }
     return this.value(tree.body, inner);
   }

@@ -37,7 +37,12 @@ export class Scope {
   constructor(private readonly outer?: Scope) {}
 
   find(key: string): Value | undefined {
-    return this.values.get(key) ?? this.outer?.find(key);
+    // eslint-disable-next-line @typescript-eslint/no-this-alias
+    for (let scope: Scope | undefined = this; scope; scope = scope.outer) {
+      const value = scope.values.get(key);
+      if (value) return value;
+    }
+    return undefined;
   }
 
   set(key: string, value: Value): void {

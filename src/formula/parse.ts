@@ -30,6 +30,12 @@ export function parse(text: string, where: string): Tree {
   return new Reader(checked, where).read(parseText(checked, where));
 }
 
+/**
+ * The library takes the names that every JavaScript object has for names that stand
+ * twice. This character, which no checked text holds, makes them others; it is taken off again.
+ */
+const MARK = '\u200b';
+
 function parseText(text: string, where: string): Expression {
   try {
     const tokens = tokenize(text, { withLocation: true });
@@ -37,6 +43,7 @@ function parseText(text: string, where: string): Expression {
       // The library takes a lone c or r for a piece of a row-and-column reference.
       if (token.type === 'unknown' && /^[A-Za-z_]\w*$/.test(token.value))
         token.type = 'range_named';
+      if (/^(constructor|__proto__)$/i.test(token.value)) token.value += MARK;
     }
     return parseTokens(tokens);
   } catch (error) {
@@ -64,9 +71,9 @@ class Reader {
       case 'ErrorLiteral':
         throw this.error(at, `the error value ${node.raw}`, 'write a formula without error values');
       case 'ReferenceIdentifier':
-        return { kind: 'name', name: node.value, isCell: node.kind !== 'name', at };
+        return { kind: 'name', name: nameOf(node.value), isCell: node.kind !== 'name', at };
       case 'Identifier':
-        return { kind: 'name', name: node.name, isCell: false, at };
+        return { kind: 'name', name: nameOf(node.name), isCell: false, at };
       case 'ArrayExpression':
         return {
           kind: 'array',
@@ -80,7 +87,7 @@ class Reader {
         const callee: Expression = node.callee;
         return {
           kind: 'call',
-          callee: callee.type === 'Identifier' ? callee.name : this.read(callee),
+          callee: callee.type === 'Identifier' ? nameOf(callee.name) : this.read(callee),
           args: node.arguments.map(
             (argument: Expression | null) => argument && this.read(argument),
           ),
@@ -93,7 +100,7 @@ class Reader {
         }
         return {
           kind: 'lambda',
-          params: node.params.map((p) => p.name),
+          params: node.params.map((p) => nameOf(p.name)),
           body: this.read(node.body),
           at,
         };
@@ -101,7 +108,7 @@ class Reader {
         return {
           kind: 'let',
           bindings: node.declarations.map((d) => ({
-            name: d.id.name,
+            name: nameOf(d.id.name),
             value: this.read(d.init!),
             at: span(d)[0] + 1,
           })),
@@ -187,6 +194,10 @@ class Reader {
   private error(at: number, found: string, expected: string): InputError {
     return new InputError(place(this.where, at), found, expected);
   }
+}
+
+function nameOf(value: string): string {
+  return value.replace(MARK, '');
 }
 
 function isFunction(name: string): boolean {

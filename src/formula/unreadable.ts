@@ -6,7 +6,7 @@ import { InputError } from '../errors';
 import { cited, decimalComma, isDecimalComma, place } from './check';
 
 const WORD = /^[^\s,;(){}+\-*/^&=<>%]*/;
-const WORD_TO_THE_END = /[^\s,;(){}+\-*/^&=<>%]*$/;
+const BREAK = /[\s,;(){}+\-*/^&=<>%]/;
 
 /** What a message of the library means for the person who wrote the formula. */
 export function unreadable(
@@ -15,7 +15,8 @@ export function unreadable(
   { message, sourceOffset = text.length }: Error & { sourceOffset?: number },
 ): InputError {
   const end = Math.max(1, Math.min(sourceOffset, text.length));
-  const start = text.slice(0, end).search(WORD_TO_THE_END);
+  let start = end;
+  while (start > 0 && !BREAK.test(text.charAt(start - 1))) start--;
   const token = WORD.exec(text.slice(start))![0] || text.charAt(end - 1);
   const at = place(where, start === end ? end : start + 1);
   const isOfNames = /argument/i.test(message);
