@@ -120,11 +120,11 @@ class Checker {
       this.fault(`${leftOut} of the limits is left out`);
   }
 
-  /** The length of what lies between two pieces; none where the density is far below all doubles. */
+  /** The length of what lies between two pieces; none where the density is below all doubles, or too far below for decimals. */
   private stretch(from: number, to: number): number {
     if (to <= from) return 0;
     const height = this.reference.precise(from / 2 + to / 2).times(this.scale);
-    return height.abs().lt(5e-324) ? 0 : to - from;
+    return height.abs().gt(5e-324) ? to - from : 0;
   }
 
   private checkPiece(piece: Piece): void {
