@@ -196,6 +196,11 @@ export class SideEncloser {
     b: Growth,
     c: Growth,
   ): void {
+    if (operation.logSlope) {
+      operation.logSlope(r, a.v);
+      meetProduct(out.d, r, a.s);
+      meetProduct(out.e, r, a.g);
+    }
     switch (operation.growth?.kind) {
       case 'product':
         I.add(p, a.e, b.e);
