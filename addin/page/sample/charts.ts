@@ -41,12 +41,32 @@ export function pointsChart({ title, unit }: Quantity, x: string, heights: strin
 export function countsChart(quantity: Quantity): Definition {
   const { title, unit, evidence, color } = quantity;
   const [above, , count] = evidence.counts;
-  const series: Series[] = [['draws', binRange(count, quantity), color]];
+  return barsChart({
+    title: `${title}: the draws`,
+    x: `${unit}, bins from`,
+    y: 'draws',
+    labels: binRange(above, quantity),
+    values: binRange(count, quantity),
+    color,
+  });
+}
+
+/** Titles, ranges and colour of a chart of counts; the ranges have no headings. */
+export interface Bars {
+  readonly title: string;
+  readonly x: string;
+  readonly y: string;
+  readonly labels: string;
+  readonly values: string;
+  readonly color: string;
+}
+
+export function barsChart({ title, x, y, labels, values, color }: Bars): Definition {
   return {
     type: 'bar',
     stacked: false,
-    ...common(`${title}: the draws`, `${unit}, bins from`, 'draws'),
-    ...dataOf(binRange(above, quantity), series, false),
+    ...common(title, x, y),
+    ...dataOf(labels, [[y, values, color]], false),
   };
 }
 

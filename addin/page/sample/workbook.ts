@@ -4,6 +4,7 @@
  */
 import { acceptanceSheet } from './acceptance';
 import { drawsSheet } from './draws';
+import { inputsSheet } from './inputs';
 import { type Look, styleOf } from './looks';
 import { shapesSheet } from './shapes';
 
@@ -13,7 +14,7 @@ const DATA_VERSION = '19.3.2';
 export function sampleWorkbook(): object {
   const looks: Look[] = [];
   const formats: string[] = [];
-  const sheets = [shapesSheet(), drawsSheet(), acceptanceSheet()].map((sheet) =>
+  const sheets = [shapesSheet(), drawsSheet(), acceptanceSheet(), inputsSheet()].map((sheet) =>
     sheet.build(
       (look) => numberIn(looks, look),
       (format) => numberIn(formats, format),
