@@ -6,7 +6,7 @@ import type { Model } from '@odoo/o-spreadsheet';
 import { onEdit } from './edits';
 
 /** Raise the number when the sample changes in a way that old edits would hide. */
-const KEY = 'undercurve.workbook.1';
+const KEY = 'undercurve.workbook.2';
 /** Milliseconds without an edit before it is kept. */
 const PAUSE = 600;
 

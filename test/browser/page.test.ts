@@ -85,12 +85,15 @@ async function type(page: Page, address: string, text: string): Promise<void> {
 const itemOf = (table: unknown[][], item: string) => table.find(([name]) => name === item)?.[1];
 
 describe('the local workbook', () => {
-  test('the local workbook opens with its three sheets and a status that names the cell [law]', async () => {
+  test('the local workbook opens with its sheets and a status that names the cell [law]', async () => {
     const page = await opened();
     expect(await page.getByRole('navigation').getByRole('button').allInnerTexts()).toEqual([
       'Shapes',
       'Draws',
       'Acceptance',
+      'Judgement',
+      'Inputs',
+      'Answers',
     ]);
     expect(await message(page)).toMatch(/^A1 Shapes: /);
   });
@@ -201,7 +204,7 @@ describe('what was edited', () => {
     'kept edits that cannot be read (%s) give way to the sample [law]',
     async (kept) => {
       const page = await opened();
-      await page.evaluate((text) => localStorage.setItem('undercurve.workbook.1', text), kept);
+      await page.evaluate((text) => localStorage.setItem('undercurve.workbook.2', text), kept);
       await page.reload();
       await shown(page);
       expect(await read(page, 'Shapes', 'E14')).toBe(4);

@@ -70,6 +70,16 @@ export function barsChart({ title, x, y, labels, values, color }: Bars): Definit
   };
 }
 
+/** A line over numbers; the first cell of each range is its heading. */
+export function lineChart(
+  title: string,
+  unit: string,
+  x: string,
+  series: readonly Series[],
+): Definition {
+  return lines(title, unit, 'density', x, series);
+}
+
 function lines(
   title: string,
   x: string,

@@ -95,7 +95,7 @@ const FIGURES_ROW = LAST + 4;
 const BINS = { first: -150, width: 25, n: 24, row: LAST + 4, above: 'E', upTo: 'F', count: 'G' };
 
 export function inputsSheet(): SheetPlan {
-  const sheet = new SheetPlan('Inputs', { columns: 23, rows: LAST_ROW, frozenRows: HEAD })
+  const sheet = new SheetPlan('Inputs', { columns: 23, rows: LAST_ROW, frozenRows: 0 })
     .columnWidths([110, 260, 70, 80, 70, 70, 320, 24, 110, 110, 24])
     .put('A1', 'Inputs: a dozen unknowns, one a line, drawn by one formula', 'title')
     .put(
@@ -132,7 +132,7 @@ function results(sheet: SheetPlan): void {
   sheet
     .put('I5', 'The season, a scenario a row', 'section')
     .put('L5', 'The draws of all inputs, from one formula', 'section')
-    .put(`I${HEAD - 1}`, '1,000', 'unit')
+    .put(`I${HEAD - 1}`, 'thousands', 'unit')
     .put(`J${HEAD - 1}`, '1,000 euros', 'unit')
     .put(`I${HEAD}`, 'bottles', 'head')
     .put(`J${HEAD}`, 'margin', 'head')

@@ -3,8 +3,10 @@
  * an orchard co-operative that plans its pressing season. All figures invented.
  */
 import { acceptanceSheet } from './acceptance';
+import { answersSheet } from './answers';
 import { drawsSheet } from './draws';
 import { inputsSheet } from './inputs';
+import { judgementSheet } from './judgement';
 import { type Look, styleOf } from './looks';
 import { shapesSheet } from './shapes';
 
@@ -14,7 +16,14 @@ const DATA_VERSION = '19.3.2';
 export function sampleWorkbook(): object {
   const looks: Look[] = [];
   const formats: string[] = [];
-  const sheets = [shapesSheet(), drawsSheet(), acceptanceSheet(), inputsSheet()].map((sheet) =>
+  const sheets = [
+    shapesSheet(),
+    drawsSheet(),
+    acceptanceSheet(),
+    judgementSheet(),
+    inputsSheet(),
+    answersSheet(),
+  ].map((sheet) =>
     sheet.build(
       (look) => numberIn(looks, look),
       (format) => numberIn(formats, format),

@@ -12,8 +12,31 @@ import { type Grid, gridOf } from './grid';
 const log = prepareLibrary();
 const sample = (): Grid => gridOf(sampleWorkbook(), log);
 
-const APPLES = ['Acceptance!A20', 'Acceptance!G19', 'Acceptance!Y19', 'Draws!B8'];
-const DOWNTIME = ['Acceptance!AH19', 'Acceptance!D20', 'Acceptance!P19', 'Draws!C8'];
+/** The cells that call our functions, by what they depend on. */
+const cells = (sheet: string, ...addresses: string[]) =>
+  addresses.map((each) => `${sheet}!${each}`);
+const APPLE_DRAWS = ['Acceptance!A20', 'Draws!B8'];
+const APPLES = [
+  ...APPLE_DRAWS,
+  ...cells('Acceptance', 'G19', 'Y19'),
+  ...cells('Answers', 'B24', 'B25', 'B27', 'B30'),
+];
+const DOWNTIME = [
+  'Draws!C8',
+  ...cells('Acceptance', 'AH19', 'D20', 'P19'),
+  ...cells('Answers', 'A42', 'C24', 'C25', 'C27', 'C30'),
+];
+const COLD_DRAWS = ['Answers!J21'];
+const COLD = [...COLD_DRAWS, ...cells('Answers', 'D24', 'D25', 'D27', 'D30')];
+const WAITING_DRAWS = ['Answers!K21'];
+const WAITING = [...WAITING_DRAWS, ...cells('Answers', 'B36', 'E24', 'E25', 'E27', 'E30')];
+const PRICE = cells('Judgement', 'A27', 'P20', 'U19');
+const DELIVERIES = cells('Judgement', 'D28', 'Q20', 'AA19');
+const SUGAR = cells('Judgement', 'H19', 'R20', 'AG19');
+const SEASON = cells('Judgement', 'K37', 'S20', 'AM19');
+const JUDGED_DRAWS = cells('Judgement', 'P20', 'Q20', 'R20', 'S20');
+const INPUTS = ['Inputs!L9'];
+const ALL = [APPLES, DOWNTIME, COLD, WAITING, PRICE, DELIVERIES, SUGAR, SEASON, INPUTS].flat();
 
 const column = (grid: Grid, sheet: string, address: string) =>
   grid.readSpill(sheet, address).map(([cell]) => Number(cell));
@@ -44,9 +67,7 @@ describe('sampleWorkbook()', () => {
   });
 
   test('sampleWorkbook() calls each of our functions once for each of its cells [law]', () => {
-    expect(grid.calls()).toEqual(
-      Object.fromEntries([...APPLES, ...DOWNTIME].map((cell) => [cell, 1])),
-    );
+    expect(grid.calls()).toEqual(Object.fromEntries(ALL.map((cell) => [cell, 1])));
   });
 
   test('sampleWorkbook() shows 2,000 draws of each quantity, inside its limits [law]', () => {
@@ -104,16 +125,147 @@ describe('sampleWorkbook()', () => {
   });
 });
 
+/** A rectangle of any sheet, blanks as the functions get them. */
+const block = (
+  grid: Grid,
+  sheet: string,
+  columns: readonly string[],
+  first: number,
+  last: number,
+) =>
+  Array.from({ length: last - first + 1 }, (_, i) =>
+    columns.map((each) => grid.read(sheet, `${each}${first + i}`)),
+  );
+
+describe('the sample, from judgement to answers', () => {
+  const grid = sample();
+  const seed = one('plan-2027');
+
+  test('sampleWorkbook() shows the shapes that FROMPERCENTILES, FROMBINS, FROMDATA and BLEND make of its cells [law]', () => {
+    const of = (columns: string[], first: number, last: number) =>
+      block(grid, 'Judgement', columns, first, last);
+    for (const [address, expected] of [
+      ['A27', call('FROMPERCENTILES', of(['A'], 20, 22), of(['B'], 20, 22), one(0.7), one(2.1))],
+      ['D28', call('FROMBINS', of(['D'], 20, 26), of(['E'], 20, 25))],
+      ['H19', call('FROMDATA', of(['G'], 20, 49))],
+      ['K37', call('BLEND', of(['L'], 34, 35), of(['K', 'L'], 20, 24), of(['K', 'L'], 27, 31))],
+    ] as const) {
+      expect(grid.readSpill('Judgement', address)).toEqual(expected);
+    }
+  });
+
+  test.each([
+    ['P20', 'A27', 'price'],
+    ['Q20', 'D28', 'deliveries'],
+    ['R20', 'H19', 'sugar'],
+    ['S20', 'K37', 'season'],
+  ])(
+    'sampleWorkbook() draws %s from the shape that spills from %s [law]',
+    (...[to, from, label]) => {
+      const shapeSpilt = grid.readSpill('Judgement', from);
+      expect(grid.readSpill('Judgement', to)).toEqual(
+        call('DRAW', shapeSpilt, null, one(1000), seed, one(label)),
+      );
+    },
+  );
+
+  test('sampleWorkbook() gives each judged percentile its share of the shape [law]', () => {
+    const made = grid.readSpill('Judgement', 'A27');
+    // Shares of straight lines: a few roundings of numbers near 1.
+    for (const [level, value] of [
+      [0.1, 0.92],
+      [0.5, 1.1],
+      [0.9, 1.46],
+    ] as const) {
+      expect(Number(call('BELOW', made, null, one(value))[0]?.[0])).toBeCloseTo(level, 12);
+    }
+  });
+
+  test('sampleWorkbook() draws a dozen inputs with one formula, and its margin row by row [law]', () => {
+    const list = block(grid, 'Inputs', ['A', 'B', 'C', 'D', 'E', 'F'], 8, 20);
+    const drawn = grid.readSpill('Inputs', 'L9');
+    expect(drawn).toEqual(call('DRAW', list, null, one(1000), seed));
+    expect(drawn[0]).toHaveLength(12);
+    const margin = column(grid, 'Inputs', 'J9');
+    expect(margin).toHaveLength(1000);
+    drawn.forEach((row, i) => {
+      const [harvest = 0, frost = 0, litres = 0, broken = 0, picking = 0, pressing = 0] =
+        row.map(Number);
+      const [power = 0, tariff = 0, bottle = 0, weeks = 0, storage = 0, price = 0] = row
+        .slice(6)
+        .map(Number);
+      const bottles = (harvest * (1 - frost) * litres * (1 - broken)) / 750;
+      const income = bottles * (price - bottle - (weeks * storage) / 1000);
+      const costs = (harvest * (picking + pressing + power * tariff)) / 1000;
+      expect(margin[i]).toBeCloseTo(income - costs, 8);
+    });
+    const losses = margin.filter((each) => each < 0).length / 1000;
+    expect(grid.read('Inputs', 'B28')).toBe(losses);
+  });
+
+  test('sampleWorkbook() answers from the shapes what is known of them [law]', () => {
+    const read = (address: string) => Number(grid.read('Answers', address));
+    // Waiting: EXP(-x/18), so the share above t is EXP(-t/18), the median 18 LN 2, the mean 18.
+    expect(read('E25')).toBeCloseTo(Math.exp(-60 / 18), 12);
+    expect(read('E28')).toBeCloseTo(18 * Math.LN2, 9);
+    expect(read('E30')).toBeCloseTo(18, 9);
+    // Half an hour is free, then 1.4 a minute: 1.4 × 18 EXP(-30/18), between its bounds.
+    expect(read('B37')).toBeCloseTo(1.4 * 18 * Math.exp(-30 / 18), 9);
+    expect(read('C37')).toBeLessThanOrEqual(read('B37'));
+    expect(read('D37')).toBeGreaterThanOrEqual(read('B37'));
+    // Cold store: straight lines, cut at 5.5 degrees: 19.5 below 5 and 1.4375 from there to the cut.
+    expect(read('D24')).toBeCloseTo(19.5 / 20.9375, 12);
+    for (const each of ['B', 'C', 'D', 'E']) {
+      expect(read(`${each}24`) + read(`${each}25`)).toBeCloseTo(1, 12);
+      // 2,000 draws against the exact share: 6 standard deviations, false alarm 2e-9 a column.
+      const share = read(`${each}25`);
+      const allowed = 6 * Math.sqrt((share * (1 - share)) / 2000);
+      expect(Math.abs(read(`${each}26`) - share)).toBeLessThan(allowed);
+    }
+  });
+
+  test('sampleWorkbook() lists the proposals behind the draws, the last of each row kept [law]', () => {
+    const [head, ...lines] = grid.readSpill('Answers', 'A42');
+    expect(head).toEqual(['row', 'attempt', 'value', 'height drawn', 'density there', 'kept']);
+    const kept = lines.filter((line) => line[5] === true);
+    const drawn = column(grid, 'Draws', 'C8');
+    expect(kept.map((line) => line[2])).toEqual(drawn.slice(128, 135));
+    expect(lines.length).toBeGreaterThan(kept.length);
+  });
+});
+
 describe('an edit of the sample', () => {
   const shared = sample();
   test.each([
     ['a point', 'Shapes', 'B17', '3', APPLES],
     ['a constant', 'Shapes', 'E14', '5', DOWNTIME],
     ['the formula', 'Shapes', 'E8', 'EXP(-ABS(x-m)/s)', DOWNTIME],
-    ['the label of the apples', 'Draws', 'B6', 'fruit', ['Acceptance!A20', 'Draws!B8']],
+    ['the label of the apples', 'Draws', 'B6', 'fruit', APPLE_DRAWS],
     // The block holds seed and rows, so all of its functions read them; a table's bounds do not.
-    ['the seed', 'Draws', 'B3', 'other', ['Acceptance!A20', ...DOWNTIME, 'Draws!B8']],
-    ['the rows', 'Draws', 'B4', '500', ['Acceptance!A20', ...DOWNTIME, 'Draws!B8']],
+    [
+      'the seed',
+      'Draws',
+      'B3',
+      'other',
+      [...APPLE_DRAWS, ...DOWNTIME, ...COLD_DRAWS, ...WAITING_DRAWS, ...JUDGED_DRAWS, ...INPUTS],
+    ],
+    [
+      'the rows',
+      'Draws',
+      'B4',
+      '500',
+      [...APPLE_DRAWS, ...DOWNTIME, ...COLD_DRAWS, ...WAITING_DRAWS],
+    ],
+    ['a percentile', 'Judgement', 'B21', '1.2', PRICE],
+    ['the days of a bin', 'Judgement', 'E22', '40', DELIVERIES],
+    ['a measured value', 'Judgement', 'G30', '101', SUGAR],
+    ["an expert's constant", 'Judgement', 'L30', '70', SEASON],
+    ['the belief in an expert', 'Judgement', 'L34', '0.8', SEASON],
+    ['the end of one shape', 'Answers', 'E12', '4.5', COLD],
+    ['the waiting', 'Answers', 'H11', '25', WAITING],
+    ['a threshold', 'Answers', 'E23', '90', ['Answers!E24', 'Answers!E25']],
+    ['what a wait costs', 'Answers', 'B35', 'x', ['Answers!B36']],
+    ['a line of the inputs', 'Inputs', 'E9', '950', INPUTS],
     ['an unused cell', 'Shapes', 'J30', '1', []],
     ['the edge of a bin', 'Acceptance', 'AE30', '25', []],
   ])('editing %s recalculates what depends on it and nothing else [law]', (...edit) => {
