@@ -148,7 +148,10 @@ export const refusedForms: readonly RefusedForm[] = [
   },
 ];
 
-/** Forms whose density today's vocabulary and finite limits express. */
-export const TODAY: readonly Form[] = forms.filter(
-  ({ number }) => number <= 12 || number === 19 || (number >= 24 && number <= 36),
-);
+/** All but the removable 0/0 of form 18, which may be refused and is. */
+export const drawnForms: readonly Form[] = forms.filter(({ number }) => number !== 18);
+
+/** The limits of a form as numbers. */
+export function limitsOf({ from, to }: Pick<Form, 'from' | 'to'>): readonly [number, number] {
+  return [from === 'unbounded' ? -Infinity : from, to === 'unbounded' ? Infinity : to];
+}
