@@ -25,6 +25,8 @@ const ABSOLUTE = 1e-290;
 
 const SMALL = 1e-300;
 const CLOSE = 1.1e-16;
+/** A rounded factor may stay one unit off 1 for ever. */
+const SETTLED = 3e-16;
 const MAX_TERMS = 100_000;
 
 /** The value of b₀ + a₁/(b₁ + a₂/(b₂ + …)); `term` gives aₙ and bₙ. */
@@ -41,7 +43,7 @@ function continuedFraction(b0: number, term: (n: number) => readonly [number, nu
     d = 1 / d;
     const factor = c * d;
     value *= factor;
-    if (Math.abs(factor - 1) <= CLOSE) return value;
+    if (Math.abs(factor - 1) <= SETTLED) return value;
   }
   throw bug('a continued fraction does not converge');
 }

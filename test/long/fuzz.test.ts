@@ -1,6 +1,7 @@
 /** Fuzzing the proof at length (npm run check:long). */
 import { fuzz } from '../envelope/fuzz';
 import { randomOpenShape, randomShape } from '../envelope/randomFormula';
+import { wideFuzz } from '../envelope/wideFuzz';
 
 const POINTS = 1300;
 
@@ -20,4 +21,13 @@ describe('proveEnvelope on many random formulas', () => {
       expect(points).toBeGreaterThanOrEqual(leastPoints);
     },
   );
+});
+
+describe('proveEnvelope on the whole vocabulary, tables and lists', () => {
+  test('refuses in words or proves lines that no point passes [law]', () => {
+    const { proved, points, faults } = wideFuzz('mill', 11_000, 1300);
+    console.log(`whole vocabulary: ${proved} proved, ${points} points, ${faults.length} faults`);
+    expect(faults).toEqual([]);
+    expect(points).toBeGreaterThanOrEqual(10_000_000);
+  });
 });
