@@ -37,10 +37,20 @@ export function isBlankOrZero(cell: Cell): boolean {
   return isBlank(cell) || cell === 0;
 }
 
-/** An omitted argument and one of blank cells only are the same; both read as null. */
+/** An omitted argument and a single blank cell are the same; both read as null. */
 export function given(range: Range | null): Range | null {
   if (range === null || range.length === 0) return null;
-  return range.every((row) => row.every(isBlank)) ? null : range;
+  return isSingle(range) && isBlank(range[0]![0]!) ? null : range;
+}
+
+/** As `given`, for arguments that 0 is no answer to: a blank cell that arrives as 0 counts as omitted too. */
+export function givenUnlessZero(range: Range | null): Range | null {
+  const own = given(range);
+  return own !== null && isSingle(own) && isBlankOrZero(own[0]![0]!) ? null : own;
+}
+
+function isSingle(range: Range): boolean {
+  return range.length === 1 && range[0]!.length === 1;
 }
 
 export function isText(cell: Cell): cell is string {
@@ -52,10 +62,16 @@ export function word(cell: Cell): string {
   return typeof cell === 'string' ? cell.trim().toLowerCase() : '';
 }
 
+/** As much of a long text as a message should quote. */
+const QUOTED_CHARACTERS = 40;
+
 /** A cell as messages quote it. */
 export function quoted(cell: Cell): string {
-  if (cell === null) return 'a blank';
-  if (typeof cell === 'string') return `"${cell}"`;
+  if (cell === null || isBlank(cell)) return 'a blank';
+  if (typeof cell === 'string') {
+    const isShort = cell.length <= QUOTED_CHARACTERS;
+    return isShort ? `"${cell}"` : `"${cell.slice(0, QUOTED_CHARACTERS)}…"`;
+  }
   if (typeof cell === 'boolean') return cell ? 'TRUE' : 'FALSE';
   return typeof cell === 'number' ? String(cell) : cell.error;
 }
@@ -69,21 +85,19 @@ export function numberIn(cell: Cell, where: Where): number {
 
 /** The only cell of an argument that takes one. @throws {InputError} for a larger range. */
 export function singleCell(range: Range, where: Where): Cell {
-  if (range.length === 1 && range[0]!.length === 1) return range[0]![0]!;
-  throw new InputError(
-    where,
-    `${range.length} rows and ${range[0]!.length} columns`,
-    'give one cell',
-  );
+  if (isSingle(range)) return range[0]![0]!;
+  throw new InputError(where, sizeOf(range), 'give one cell');
 }
 
 /** All cells of a range that is one row or one column. @throws {InputError} for another shape. */
 export function lineOfCells(range: Range, where: Where): readonly Cell[] {
   if (range.length === 1) return range[0]!;
   if (range[0]!.length === 1) return range.map((row) => row[0]!);
-  throw new InputError(
-    where,
-    `${range.length} rows and ${range[0]!.length} columns`,
-    'give one row or one column',
-  );
+  throw new InputError(where, sizeOf(range), 'give one row or one column');
+}
+
+/** How large a range is, for messages: `1 row and 3 columns`. */
+export function sizeOf(range: Range): string {
+  const counted = (n: number, noun: string): string => `${n} ${noun}${n === 1 ? '' : 's'}`;
+  return `${counted(range.length, 'row')} and ${counted(range[0]!.length, 'column')}`;
 }

@@ -3,22 +3,27 @@ import { InputError } from '../errors';
 import type { Source } from '../formula/compile';
 import { parse } from '../formula/parse';
 import type { Cell, Range } from './cells';
-import { isBlankOrZero, isText, quoted } from './cells';
+import { isBlankOrZero, isText, quoted, sizeOf, word } from './cells';
 
 /** A single formula, or a column of them. @throws {InputError} when one is no text or cannot be parsed. */
 export function readLines(range: Range, where: string): readonly Source[] {
   if (range[0]!.length !== 1) {
+    if (range.some((row) => word(row[0]!) === 'density')) {
+      throw new InputError(
+        where,
+        `a block of ${range[0]!.length} columns`,
+        'give its two columns, words and values',
+      );
+    }
     throw new InputError(
       where,
-      `${range.length} rows and ${range[0]!.length} columns that begin with ${quoted(range[0]![0]!)}`,
+      `${sizeOf(range)} that begin with ${quoted(range[0]![0]!)}`,
       'give a formula, a column of formulas, a table of points (x and height), or a block with a row density',
     );
   }
   const lines = range
     .map((row, i) => ({ cell: row[0]!, line: i + 1 }))
     .filter(({ cell }) => !isBlankOrZero(cell));
-  if (lines.length === 0)
-    throw new InputError(where, 'it is blank', 'give a formula such as EXP(-x)');
   const isOne = range.length === 1;
   return lines.map(({ cell, line }) =>
     readFormula(

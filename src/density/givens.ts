@@ -36,7 +36,7 @@ export class Givens {
   /** Adds a constant, a list or a function. @throws {InputError} when the name is taken or the value is not a number. */
   add({ name: cell, value, where }: NamedValue): void {
     const name = cell.trim();
-    const at = `${where}, "${name}"`;
+    const at = `${where}, ${quoted(name)}`;
     const isNamed = typeof value === 'object' && value !== null && 'kind' in value;
     if (word(name) === METHOD) {
       if (isNamed)
@@ -62,7 +62,8 @@ export class Givens {
     }
     const other = this.keys.get(key);
     if (other !== undefined) {
-      const found = other === name ? 'it is given twice' : `it is the same name as "${other}"`;
+      const found =
+        other === name ? 'it is given twice' : `it is the same name as ${quoted(other)}`;
       throw new InputError(at, found, 'keep one of the two');
     }
     this.keys.set(key, name);
@@ -112,7 +113,7 @@ export function readGivens(ranges: readonly Range[], firstArgument: number): Giv
       const table = readFunctions(range, where);
       values.push(...table.functions.map(({ name, given }) => ({ name, value: given, where })));
       notes.push(...table.notes);
-    } else values.push(...readConstants(range, where));
+    } else for (const constant of readConstants(range, where)) values.push(constant);
   });
   return { values, notes };
 }

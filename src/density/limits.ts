@@ -6,7 +6,7 @@
  */
 import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
-import { isBlankOrZero, isText, numberIn, passErrors, quoted, word } from './cells';
+import { isBlankOrZero, isText, numberIn, passErrors, quoted, sizeOf, word } from './cells';
 import type { Givens } from './givens';
 
 /** Ends beyond this are refused: their areas could not be told in doubles. */
@@ -39,7 +39,7 @@ export function readLimitCells(range: Range, where: string): LimitCells {
   if (body.length === 0 || width < 3 || width > 4) {
     throw new InputError(
       where,
-      `${range.length} rows and ${width} columns`,
+      sizeOf(range),
       'give two cells, from and to, or a row name, from, to',
     );
   }

@@ -10,7 +10,7 @@ import type { GivenMap } from '../formula/given';
 import type { Block } from './block';
 import { isBlock, readBlock } from './block';
 import type { Range } from './cells';
-import { given, passErrors } from './cells';
+import { given, givenUnlessZero, isBlankOrZero, passErrors } from './cells';
 import { readFormula, readLines } from './formulas';
 import type { GivenRanges, NamedValue } from './givens';
 import { checkMethod, Givens, readGivens } from './givens';
@@ -75,7 +75,7 @@ export function readShapes(
   places: Places,
 ): Shapes {
   const range = given(density);
-  if (range === null) {
+  if (range === null || range.every((row) => row.every(isBlankOrZero))) {
     throw new InputError(
       places.density,
       'it is blank',
@@ -83,7 +83,7 @@ export function readShapes(
     );
   }
   passErrors(range);
-  const limitsRange = given(limits);
+  const limitsRange = givenUnlessZero(limits);
   const own = limitsRange ? readLimitCells(limitsRange, places.limits) : null;
   const shared = readGivens(givens, places.givens);
   if (isShapeList(range)) {

@@ -19,12 +19,9 @@ export interface PointTable {
   readonly notes: readonly string[];
 }
 
-/** True for a range that reads as a table of points: a number somewhere in its first two rows' first cell. */
+/** True for a range that reads as a table of points: two columns or more, numbers in the first. */
 export function isPointTable(range: Range): boolean {
-  return (
-    range[0]!.length >= 2 &&
-    [range[0]![0]!, range[1]?.[0] ?? null].some((cell) => typeof cell === 'number')
-  );
+  return range[0]!.length >= 2 && range.some((row) => typeof row[0] === 'number');
 }
 
 /**
@@ -32,8 +29,8 @@ export function isPointTable(range: Range): boolean {
  * @throws {InputError} as `readPoints`, and for negative heights or a column of heights that are all 0.
  */
 export function readTable(range: Range, where: string): PointTable {
-  const hasHeading = range[0]!.some(isText) && !range[0]!.some((cell) => typeof cell === 'number');
-  const table = readPoints(range, where, hasHeading, height);
+  // A blank may arrive as 0, so only a text above x tells a heading row from a point.
+  const table = readPoints(range, where, isText(range[0]![0]!), height);
   for (const [j, { heights }] of table.columns.entries())
     checkSomeArea(table.x, heights, `${where}, column ${j + 2}`);
   return table;
@@ -50,9 +47,7 @@ export function readPoints(
   readHeight: (cell: Cell, where: string) => number,
 ): PointTable {
   const firstRow = hasHeading ? 1 : 0;
-  const headings = hasHeading
-    ? range[0]!.map((cell) => (isText(cell) ? cell.trim() : ''))
-    : range[0]!.map(() => '');
+  const headings = hasHeading ? range[0]!.map(headingIn) : range[0]!.map(() => '');
   const { rows, dropped } = withoutTrailingBlanks(range.slice(firstRow));
   const place = (i: number): string => `${where}, row ${i + firstRow + 1}`;
   if (rows.length < 2) {
@@ -82,6 +77,12 @@ export function readPoints(
         ]
       : [];
   return { x, columns, notes };
+}
+
+/** A year may head a column too. */
+function headingIn(cell: Cell): string {
+  if (typeof cell === 'number' && cell !== 0) return String(cell);
+  return isText(cell) ? cell.trim() : '';
 }
 
 /** Blank rows at the end arrive as zeros, which would make x fall or repeat. */

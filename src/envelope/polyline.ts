@@ -14,7 +14,7 @@ const SHORTEST = 1e-140;
 
 /** The envelope of straight lines between points with some area. */
 export function polylineEnvelope({ x, heights }: Polyline): Envelope {
-  const exponent = exponentOf(Math.max(...heights));
+  const exponent = exponentOf(heights.reduce((a, b) => Math.max(a, b)));
   const scaled = heights.map((height) => scaleBy(height, -exponent));
   const pieces = x
     .slice(1)

@@ -1,6 +1,6 @@
 /** EXPECT: the exact mean of a quantity under a density, with proved bounds. */
 import type { Range } from '../density/cells';
-import { given, isText, passErrors, quoted, singleCell } from '../density/cells';
+import { given, givenUnlessZero, isText, passErrors, quoted, singleCell } from '../density/cells';
 import { Givens, readGivens } from '../density/givens';
 import { DEFAULT_VARIABLE, readLimitCells } from '../density/limits';
 import type { Shape } from '../density/shape';
@@ -55,7 +55,7 @@ function readQuantity(
     throw new InputError(QUANTITY, `${quoted(cell)} is not a formula`, expected);
   const text = String(cell);
   const source = { text, where: 'Quantity', tree: parse(text, 'Quantity') };
-  const { variable, named } = namesOf(shape, given(limits), givens);
+  const { variable, named } = namesOf(shape, givenUnlessZero(limits), givens);
   return compile([source], [variable], named);
 }
 

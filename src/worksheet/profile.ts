@@ -1,6 +1,6 @@
 /** PROFILE: evenly spaced points of a density and its envelope, for charts. */
 import type { Range } from '../density/cells';
-import { given, numberIn, passErrors, singleCell } from '../density/cells';
+import { givenUnlessZero, numberIn, passErrors, singleCell } from '../density/cells';
 import type { Envelope } from '../envelope/envelope';
 import { heightOn } from '../envelope/hat';
 import { InputError } from '../errors';
@@ -34,7 +34,7 @@ export function profile(
 ): Range {
   const proved = prove(onlyShape(density, limits, givens, PLACES));
   const { envelope, area, shares } = proved;
-  const n = readCount(given(count));
+  const n = readCount(givenUnlessZero(count));
   const [from, to] = shownEnds(proved);
   const height = heightOf(envelope);
   const rows = Array.from({ length: n }, (_, i) => {

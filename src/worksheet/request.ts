@@ -2,17 +2,24 @@
  * What the arguments of DRAW and its companions ask for: shapes, rows, seed and one
  * label a column. Arguments given outright win over a block's words.
  */
-import type { BlockWord } from '../density/block';
 import type { Cell, Range } from '../density/cells';
-import { given, isBlank, lineOfCells, passErrors, quoted, singleCell } from '../density/cells';
+import {
+  given,
+  givenUnlessZero,
+  isBlank,
+  lineOfCells,
+  passErrors,
+  quoted,
+  singleCell,
+} from '../density/cells';
 import type { Shape, Shapes } from '../density/shape';
 import type { ListLine } from '../density/shapelist';
 import { readShapes } from '../density/shape';
 import { InputError } from '../errors';
 import type { Key, KeyPart } from '../random/key';
 import { keyOf, keyText } from '../random/key';
-
-export const MAX_ROWS = 1_048_575;
+import type { Placed } from './rows';
+import { readRows } from './rows';
 
 /** One column that is asked for. */
 export interface ColumnRequest {
@@ -49,63 +56,69 @@ export function readDrawRequest(
 ): DrawRequest {
   const shapes = readShapes(density, limits, givens, DRAW_PLACES);
   const { firstRow, nRows } = readRows(
-    argumentOr(rows, shapes, 'rows') ?? rowsOfLines(shapes.lines),
-    DRAW_PLACES.rows,
+    argumentOr(rows, shapes, 'rows') ??
+      rowsOfLines(shapes.lines) ?? { range: given(rows), where: DRAW_PLACES.rows },
   );
   const seedCells = argumentOr(seed, shapes, 'seed');
   const labels = readLabels(argumentOr(label, shapes, 'label'));
   const columns = shapes.lines
     ? lineColumns(shapes, shapes.lines, seedCells, labels)
-    : plainColumns(shapes.shapes, readSeed(seedCells ?? [[null]], DRAW_PLACES.seed), labels);
+    : plainColumns(shapes.shapes, readSeed(seedCells), labels);
   refuseEqualLabels(columns, shapes.lines);
   return { columns, firstRow, nRows, notes: shapes.notes };
 }
 
 /** The argument, else the block's word. */
-function argumentOr(argument: Range | null, { block }: Shapes, name: BlockWord): Range | null {
-  const own = given(argument);
+function argumentOr(
+  argument: Range | null,
+  { block }: Shapes,
+  name: 'rows' | 'seed' | 'label',
+): Placed<Range> | null {
+  const own = givenUnlessZero(argument);
   if (own !== null) {
     passErrors(own);
-    return own;
+    return { range: own, where: DRAW_PLACES[name] };
   }
   const cell = block?.words.get(name);
-  return cell === undefined ? null : [[cell]];
+  return cell === undefined ? null : { range: [[cell]], where: `${DRAW_PLACES.density}, ${name}` };
 }
 
 function plainColumns(
   shapes: readonly Shape[],
-  seed: KeyPart,
-  labels: readonly KeyPart[],
+  seed: Part,
+  labels: readonly Part[],
 ): readonly ColumnRequest[] {
-  return assignLabels(shapes, labels).map(({ shape, label }) =>
-    columnOf(shape, seed, label, DRAW_PLACES),
-  );
+  return assignLabels(shapes, labels).map(({ shape, label }) => columnOf(shape, seed, label));
 }
 
-function readSeed(range: Range, where: string): KeyPart {
+/** What a cell says of a seed or label, and where it stands. */
+interface Part {
+  readonly value: KeyPart;
+  readonly where: string;
+}
+
+function readSeed(cells: Placed<Range> | null): Part {
+  const { range, where } = cells ?? { range: [[null]], where: DRAW_PLACES.seed };
   return keyPart(singleCell(range, where), where);
 }
 
-function columnOf(
-  shape: Shape,
-  seed: KeyPart,
-  label: KeyPart,
-  where: { readonly seed: string; readonly label: string },
-): ColumnRequest {
-  return {
-    shape,
-    seed: String(seed).trim(),
-    label: String(label).trim(),
-    key: placed(where.label, 'label', () => placed(where.seed, 'seed', () => keyOf(seed, label))),
-  };
+function columnOf(shape: Shape, seed: Part, label: Part): ColumnRequest {
+  const key = placed(label.where, 'label', () =>
+    placed(seed.where, 'seed', () => keyOf(seed.value, label.value)),
+  );
+  return { shape, seed: textOf(seed), label: textOf(label), key };
+}
+
+function textOf({ value }: Part): string {
+  return String(value).trim();
 }
 
 /** One column per line of a list: its own label, after the argument's if there is one, and its own seed unless one is given. */
 function lineColumns(
   { shapes }: Shapes,
   lines: readonly ListLine[],
-  seedCells: Range | null,
-  labels: readonly KeyPart[],
+  seedCells: Placed<Range> | null,
+  labels: readonly Part[],
 ): readonly ColumnRequest[] {
   if (labels.length > 1) {
     throw new InputError(
@@ -116,19 +129,22 @@ function lineColumns(
   }
   return lines.map(({ block, where }, i) => {
     const part = keyPart(block.words.get('label') ?? null, `${where}, label`);
-    if (isBlank(part))
+    if (isBlank(part.value))
       throw new InputError(where, 'it has no label', 'give every line a label of its own');
-    const label = labels.length === 0 ? part : `${String(labels[0])} ${String(part)}`;
     const own = block.words.get('seed');
-    const isOwn = seedCells === null && own !== undefined;
-    const seedPlace = isOwn ? `${where}, seed` : DRAW_PLACES.seed;
-    const seed = readSeed(isOwn ? [[own]] : (seedCells ?? [[null]]), seedPlace);
-    return columnOf(shapes[i]!, seed, label, { seed: seedPlace, label: `${where}, label` });
+    const ownSeed = own === undefined ? null : { range: [[own]], where: `${where}, seed` };
+    return columnOf(shapes[i]!, readSeed(seedCells ?? ownSeed), behind(labels, part));
   });
 }
 
+/** A label of the arguments goes before the own one, with a space. */
+function behind(labels: readonly Part[], own: Part): Part {
+  const first = labels[0];
+  return first ? { value: `${textOf(first)} ${textOf(own)}`, where: first.where } : own;
+}
+
 /** The rows that the lines of a list name; the columns of one spill are all as long. */
-function rowsOfLines(lines: readonly ListLine[] | null): Range | null {
+function rowsOfLines(lines: readonly ListLine[] | null): Placed<Range> | null {
   const named = (lines ?? []).filter(({ block }) => block.words.has('rows'));
   const [first, ...others] = named;
   if (first === undefined) return null;
@@ -141,45 +157,22 @@ function rowsOfLines(lines: readonly ListLine[] | null): Range | null {
       'give all lines the same number of rows, or give rows as an argument',
     );
   }
-  return [[rows]];
+  return { range: [[rows]], where: `${first.where}, rows` };
 }
 
-function readRows(range: Range | null, where: string): { firstRow: number; nRows: number } {
-  const expected = `give a whole number from 1 to ${MAX_ROWS}`;
-  if (range === null) throw new InputError(where, 'they are missing', expected);
-  const cells = lineOfCells(range, where).map((cell) => wholeRow(cell, where, expected));
-  if (cells.length === 1) return { firstRow: 1, nRows: cells[0]! };
-  const [first, last] = cells;
-  if (cells.length !== 2 || !(first! <= last!)) {
-    throw new InputError(
-      where,
-      `${cells.join(', ')}`,
-      'give one number of rows, or the first and the last row',
-    );
-  }
-  return { firstRow: first!, nRows: last! - first! + 1 };
-}
-
-function wholeRow(cell: Cell, where: string, expected: string): number {
-  if (typeof cell !== 'number') {
-    throw new InputError(where, `${quoted(cell)} is not a number`, expected);
-  }
-  if (Math.floor(cell) !== cell) throw new InputError(where, `${cell} is not whole`, expected);
-  if (cell < 1) throw new InputError(where, `${cell} is below 1`, expected);
-  if (cell > MAX_ROWS) throw new InputError(where, `${cell} is above ${MAX_ROWS}`, expected);
-  return cell;
-}
-
-function keyPart(cell: Cell, where: string): KeyPart {
-  if (cell === null) return '';
-  if (typeof cell === 'object')
+function keyPart(cell: Cell, where: string): Part {
+  if (cell !== null && typeof cell === 'object')
     throw new InputError(where, quoted(cell), 'give a text or a number');
-  return cell;
+  return { value: cell ?? '', where };
 }
 
-function readLabels(range: Range | null): readonly KeyPart[] {
-  if (range === null) return [];
-  return lineOfCells(range, DRAW_PLACES.label).map((cell) => keyPart(cell, DRAW_PLACES.label));
+function readLabels(cells: Placed<Range> | null): readonly Part[] {
+  if (cells === null) return [];
+  const { range, where } = cells;
+  const line = lineOfCells(range, where);
+  return line.map((cell, i) =>
+    keyPart(cell, line.length === 1 ? where : `${where}, cell ${i + 1}`),
+  );
 }
 
 /**
@@ -188,12 +181,15 @@ function readLabels(range: Range | null): readonly KeyPart[] {
  */
 function assignLabels(
   shapes: readonly Shape[],
-  labels: readonly KeyPart[],
-): readonly { shape: Shape; label: KeyPart }[] {
+  labels: readonly Part[],
+): readonly { shape: Shape; label: Part }[] {
+  const headingOf = (shape: Shape): Part => ({
+    value: shape.kind === 'table' ? shape.heading : '',
+    where: DRAW_PLACES.label,
+  });
   if (shapes.length === 1) {
     const shape = shapes[0]!;
-    const own = shape.kind === 'table' ? shape.heading : '';
-    return (labels.length > 0 ? labels : [own]).map((label) => ({ shape, label }));
+    return (labels.length > 0 ? labels : [headingOf(shape)]).map((label) => ({ shape, label }));
   }
   if (labels.length > 1) {
     throw new InputError(
@@ -203,15 +199,15 @@ function assignLabels(
     );
   }
   return shapes.map((shape, i) => {
-    const heading = shape.kind === 'table' ? shape.heading : '';
-    if (isBlank(heading)) {
+    const heading = headingOf(shape);
+    if (isBlank(heading.value)) {
       throw new InputError(
         DRAW_PLACES.density,
         `column ${i + 2} has no heading`,
         'give every column of heights a heading; it is the label of its draws',
       );
     }
-    return { shape, label: labels.length === 0 ? heading : `${String(labels[0])} ${heading}` };
+    return { shape, label: behind(labels, heading) };
   });
 }
 
@@ -238,8 +234,10 @@ function placed<T>(where: string, what: string, read: () => T): T {
   try {
     return read();
   } catch (error) {
-    if (error instanceof InputError && error.where === what)
-      throw new InputError(where, error.found, error.expected);
+    if (error instanceof InputError && error.where === what) {
+      const found = /^"\s*" counts/.test(error.found) ? 'it is blank' : error.found;
+      throw new InputError(where, found, error.expected);
+    }
     throw error;
   }
 }

@@ -166,7 +166,7 @@ describe('expect', () => {
       [[true]],
       'quantity (argument 3): TRUE is not a formula; give a formula as text, such as x or MAX(0,x-60).',
     ],
-    ['two cells', [['x', 'x^2']], 'quantity (argument 3): 1 rows and 2 columns; give one cell.'],
+    ['two cells', [['x', 'x^2']], 'quantity (argument 3): 1 row and 2 columns; give one cell.'],
     [
       'an unknown name',
       [['x+y']],
