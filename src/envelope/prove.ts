@@ -7,6 +7,7 @@
  * jump) is cut out between neighbouring doubles. The refinement depends on the
  * shape alone, never on the number of rows or a clock.
  * Source: src/METHOD.md. Unbounded sides and poles are covered by hats (reach.ts, hat.ts).
+ * The file is long because it is one algorithm, read from the top down.
  */
 import FlatQueue from 'flatqueue';
 import type { InputError } from '../errors';

@@ -11,6 +11,7 @@
  * Beyond the pieces, towards ±∞ or into a pole, the growth of g·f proves a hat over it,
  * as the envelope's own; where that leaves too much open it begins further out.
  * Not handled: quantities without bound within the limits.
+ * The file is long because it is one algorithm, read from the top down.
  */
 import FlatQueue from 'flatqueue';
 import { findCrossing } from '../envelope/crossing';

@@ -3,6 +3,7 @@
  * arrays are worked element by element, equal steps are shared, constants folded.
  *
  * Not handled: recursion (a LAMBDA cannot see its own name), text.
+ * The file is long because it is one walk over the tree.
  */
 import { InputError } from '../errors';
 import * as I from '../numeric/interval';

@@ -6,6 +6,7 @@
  * (product → sum, EXP(u) → u) and meets the direct enclosure, which keeps products
  * of EXPs tight and lets a density that overflows doubles be scaled by 2^-exponent.
  * Not handled: unbounded intervals, several variables.
+ * The file is long because the enclosures of a step depend on each other.
  */
 import type { Interval } from '../numeric/interval';
 import * as I from '../numeric/interval';

@@ -10,6 +10,7 @@
  * that a proof of a finite area needs.
  * Source: src/METHOD.md, "Unbounded sides" and "Poles".
  * Not handled: a side on which a condition is not settled, or a step undefined.
+ * The file is long because the five enclosures of a step depend on each other.
  */
 import { bug } from '../errors';
 import type { Interval } from '../numeric/interval';

@@ -7,6 +7,7 @@
  * an operand too, so that proving an envelope allocates nothing.
  * Not handled: empty intervals (an empty intersection is a fault and throws),
  * decorations (formula/enclose.ts keeps track of undefined stretches itself).
+ * The file is long because all rounding of intervals is in one place.
  */
 import { bug } from '../errors';
 import * as elementary from './elementary';
