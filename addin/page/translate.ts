@@ -2,8 +2,8 @@
  * Worksheet values of the grid library to and from the ranges of the functions.
  *
  * The grid hands over one `{value}` object, or columns of them (column-major);
- * the functions take rows of plain cells. A blank stays null and −0 becomes 0 in
- * both directions, as on every other host. Not handled here: what the cells mean.
+ * the functions take rows of plain cells. −0 becomes 0 in both directions, a blank comes
+ * in as null and goes out as an empty text, as on every other host. Not handled here: what the cells mean.
  */
 import type { Cell, ErrorCell, Range } from '../../src/index';
 
@@ -31,7 +31,7 @@ export function toRange(argument: GridArgument, isErrorCode: IsErrorCode): Range
 
 /**
  * A result as columns of grid cells.
- * @throws {Error} a bug of ours: a ragged result, or a cell the grid would show as 0 (NaN, infinity, blank).
+ * @throws {Error} a bug of ours: a ragged result, or a cell the grid would show as 0 (NaN, infinity).
  */
 export function toColumns(result: Range): GridCell[][] {
   const width = result[0]?.length ?? 0;
@@ -77,7 +77,7 @@ function toGridCell(cell: Cell): GridCell {
     if (!Number.isFinite(cell)) throw new Error(`bug: a result of ${cell}`);
     return { value: cell + 0 };
   }
-  if (cell === null) throw new Error('bug: a blank in a result');
+  if (cell === null) return { value: '' };
   if (isErrorCell(cell)) return { value: cell.error, message: cell.error };
   return { value: cell };
 }

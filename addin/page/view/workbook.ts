@@ -22,7 +22,7 @@ import { paintWithPalette } from './palette';
 const HELP: Readonly<Record<string, string>> = {
   Shapes: 'State what is not known: points or a formula. Yellow cells are yours to change.',
   Draws: 'Each column follows its shape exactly and stays still until an input changes.',
-  Acceptance: 'How each column was drawn, and the evidence that it was drawn correctly.',
+  Acceptance: 'How each column was drawn, and the evidence for it.',
   Judgement: 'What people know, made into shapes that can be drawn.',
   Inputs: "A dozen inputs from one formula, and the season's margin.",
   Answers: 'Exact shares, values and means from the shapes, without draws.',
