@@ -5,14 +5,32 @@ import { run } from '../addin/cli/run';
 import { VOCABULARY } from '../src/formula/vocabulary';
 
 const readme = readFileSync(resolve(__dirname, '../README.md'), 'utf8');
+/** What is typed and what comes back, one exchange after the other. */
+const [, transcript = ''] = /<!-- transcript -->\n```\n([^]+?)\n```/.exec(readme) ?? [];
+const exchanges = transcript.split('\n\n').map((exchange) => {
+  const [typed = '', ...answer] = exchange.split('\n');
+  return [typed, answer.join('\n')] as const;
+});
 /** Examples that read a file of the reader's own cannot run. */
-const examples = [...readme.matchAll(/^npx undercurve (?!.*@)(.+)$/gm)].map(
+const examples = [...readme.replace(transcript, '').matchAll(/^npx undercurve (?!.*@)(.+)$/gm)].map(
   ([, line]) => line ?? '',
 );
 
 /** The words of a line as a shell takes them apart; the examples quote with ' only. */
 function words(line: string): string[] {
   return [...line.matchAll(/'([^']*)'|(\S+)/g)].map(([, quoted, bare]) => quoted ?? bare ?? '');
+}
+
+/** What the command line answers to the words after `npx undercurve`. */
+function typedIn(line: string): { status: number; out: string; err: string } {
+  let out = '';
+  let err = '';
+  const status = run(words(line), {
+    write: (text) => void (out += text),
+    writeError: (text) => void (err += text),
+    read: () => '',
+  });
+  return { status, out, err };
 }
 
 describe('README.md', () => {
@@ -29,14 +47,17 @@ describe('README.md', () => {
   });
 
   test.each(examples)('npx undercurve %s runs [law]', (line) => {
-    let out = '';
-    let err = '';
-    const status = run(words(line), {
-      write: (text) => void (out += text),
-      writeError: (text) => void (err += text),
-      read: () => '',
-    });
+    const { status, out, err } = typedIn(line);
     expect([status, err]).toEqual([0, '']);
     expect(out).not.toBe('');
+  });
+
+  test('has a transcript of answers and of a mistake [law]', () => {
+    expect(exchanges).toHaveLength(3);
+  });
+
+  test.each(exchanges)('%s answers as it stands there [pinned]', (typed, answer) => {
+    const { out, err } = typedIn(typed.replace('npx undercurve ', ''));
+    expect(`${out}${err}`.trim()).toBe(answer);
   });
 });
