@@ -163,7 +163,9 @@ describe('the local workbook', () => {
     const page = await opened();
     await type(page, 'Shapes!E8', 'EXP(-0.5*((x-m)/s)^2');
     const text = 'Formula, character 4: "(" is never closed; add ")".';
-    expect(await message(page)).toContain(`Draws!C8 #VALUE! ${text}`);
+    const shown = (await message(page)).replace(/\s+/g, ' ');
+    expect(shown).toContain(`Draws!C8 #VALUE! ${text} (and 9 more)`);
+    expect(readFileSync('README.md', 'utf8')).toContain(`Draws!C8 #VALUE! ${text} (and 9 more)`);
     await page.getByRole('status').getByRole('button').click();
     await settled(page);
     expect(await message(page)).toBe(`C8 #VALUE! ${text}`);
