@@ -114,7 +114,7 @@ describe('limits', () => {
       ['highest', 7],
       ['B2', 9],
     ];
-    const shape = formula([[`EXP(-${variable})`]], limits as Range, givens);
+    const shape = formula([[`EXP(-${variable})`]], limits, givens);
     expect([shape.variable, shape.limits]).toEqual([variable, { from, to }]);
   });
 
@@ -203,7 +203,7 @@ describe('a shape block', () => {
     expect(givensOf(BLOCK)).toEqual({ m: 3, s: 1.3 });
     expect(formula([...BLOCK].reverse())).toMatchObject({ limits: { from: 0, to: 3 } });
     expect(
-      formula(BLOCK.map(([name, value]) => [` ${String(name).toUpperCase()} `, value!])),
+      formula(BLOCK.map(([name, value]) => [` ${(name as string).toUpperCase()} `, value!])),
     ).toEqual({
       ...shape,
       givens: new Map([
@@ -381,8 +381,7 @@ describe('error values', () => {
     ['givens', EXP, [[0, 1]], [[['k', error]]]],
     ['a list', EXP, [[0, 1]], [[['obs'], [error]]]],
   ] as const)('in %s are passed on as they are [law]', (_, density, limits, givens) => {
-    const call = () =>
-      read(density as Range, limits as Range | null, ...(givens as readonly Range[]));
+    const call = () => read(density, limits, ...(givens as readonly Range[]));
     expect(call).toThrow(CellErrorPassed);
     expect(messageOf(call)).toBe('#N/A');
   });
