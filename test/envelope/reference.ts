@@ -358,6 +358,21 @@ function functionOf<T>(
   return (x) => code(math.of(x));
 }
 
+/** NaN where the decimals' own constants do not reach far enough; that leaves their precision changed. */
+function orUnknown(f: (x: number) => Decimal, Kind: typeof Decimal): (x: number) => Decimal {
+  const { precision } = Kind;
+  return (x) => {
+    try {
+      return f(x);
+    } catch (error) {
+      if (!/Precision limit/.test(String(error))) throw error;
+      Kind.set({ precision });
+      new Kind(2).ln();
+      return new Kind(NaN);
+    }
+  };
+}
+
 export interface Reference {
   /** In doubles. */
   readonly plain: (x: number) => number;
@@ -374,7 +389,7 @@ export function referenceOf(
 ): Reference {
   return {
     plain: functionOf(text, doubles, constants),
-    precise: functionOf(text, decimals(Precise), constants),
-    veryPrecise: functionOf(text, decimals(VeryPrecise), constants),
+    precise: orUnknown(functionOf(text, decimals(Precise), constants), Precise),
+    veryPrecise: orUnknown(functionOf(text, decimals(VeryPrecise), constants), VeryPrecise),
   };
 }
