@@ -42,6 +42,7 @@ import {
   zeroEverywhere,
 } from './refusal';
 import { findExponent } from './scale';
+import { undefinedStretch } from './stretch';
 
 export const WANTED_ACCEPTANCE = 0.99;
 export const LEAST_ACCEPTANCE = 0.01;
@@ -241,7 +242,7 @@ class Prover {
   }
 
   private refuseUrgent(part: Part): never {
-    if (part.defined === Defined.Nowhere) throw undefinedOn(part.piece, part.reason);
+    if (part.defined === Defined.Nowhere) throw this.undefinedAround(part);
     const { from, to } = part.piece;
     throw unboundedNear(
       to - from < NARROW * this.width && from <= 0 && to >= 0
@@ -250,6 +251,10 @@ class Prover {
           ? from
           : to,
     );
+  }
+
+  private undefinedAround({ piece, reason }: Part): InputError {
+    return undefinedOn(undefinedStretch(this.encloser, piece, this), reason);
   }
 
   private split(part: Part): void {
@@ -337,7 +342,7 @@ class Prover {
     const reason = defined === Defined.Everywhere ? '' : this.encloser.undefinedReason();
     if (defined === Defined.Nowhere) {
       const part = { piece: nothing(left.x, right.x), defined, turn, reason };
-      if (isBeyondRounding) throw undefinedOn(part.piece, part.reason);
+      if (isBeyondRounding) throw this.undefinedAround(part);
       this.notes.push(
         `the density is undefined on a stretch of ${shortNumber(right.x - left.x)} at x = ${shortNumber(left.x)}, where ${reason}; nothing is drawn there`,
       );

@@ -144,7 +144,9 @@ class Finder {
   private refusePoint(x: number, side: Side): void {
     if (!Number.isFinite(x)) return;
     const { density, defined } = this.encloser.over(x, x, null, null);
-    if (defined === Defined.Everywhere && density.v.hi < 0) throw negativeAt(x, density.v.hi);
+    if (defined === Defined.Everywhere && density.v.hi < 0) {
+      throw negativeAt(x, density.v.hi, side.isBeyond);
+    }
     if (defined === Defined.Nowhere) {
       throw undefinedSide(x, this.encloser.undefinedReason(), side);
     }

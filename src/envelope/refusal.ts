@@ -11,13 +11,13 @@ interface Stretch {
   readonly to: number;
 }
 
-/** `height` is left out where it stands for a scaled density. */
-export function negativeAt(x: number, height?: number): InputError {
+/** `height` is left out where it stands for a scaled density; `isFarOut` is true beyond any limit that was given. */
+export function negativeAt(x: number, height?: number, isFarOut = false): InputError {
   const value = height === undefined ? '' : ` (${shortNumber(height)})`;
   return new InputError(
     WHERE,
     `it is negative at x = ${shortNumber(x)}${value}`,
-    'heights must be 0 or more; use MAX(0, …) if that is meant',
+    `heights must be 0 or more; ${isFarOut ? 'give limits, or ' : ''}use MAX(0, …) if that is meant`,
   );
 }
 
@@ -45,7 +45,7 @@ export function nothingSeen(): InputError {
   );
 }
 
-/** `reason` says what the formula does there, e.g. `SQRT takes a negative number`. */
+/** `reason` says what the formula does there, e.g. `it divides by zero`. */
 export function undefinedOn({ from, to }: Stretch, reason: string): InputError {
   return new InputError(
     WHERE,

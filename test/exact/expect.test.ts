@@ -110,7 +110,7 @@ describe('expectation(envelope, tape, quantity)', () => {
     ],
     [
       'SQRT(x-1)',
-      'quantity: it is undefined from x = 0 to x = 1, where SQRT takes a negative number; give it a value there with IF, or limits that leave the place out.',
+      'quantity: it is undefined from x = 0 to x = 1, where the square root of a negative number is taken; give it a value there with IF, or limits that leave the place out.',
     ],
   ])('mean of %s is refused where it has none [law]', (quantity, message) => {
     expect(() => meanOf('1', 0, 9, quantity)).toThrow(message);

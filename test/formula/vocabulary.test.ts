@@ -172,7 +172,7 @@ describe('domains', () => {
   };
   const DIVIDES = 'it divides by zero';
   const LOG_OF = 'LN takes a number that is not above 0';
-  const ROOT_OF = 'SQRT takes a negative number';
+  const ROOT_OF = 'the square root of a negative number is taken';
   const POWER_OF = 'a negative number is raised to a power that is not whole';
   const VARYING = 'a number that is not above 0 is raised to a power that varies';
 

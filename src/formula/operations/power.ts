@@ -109,7 +109,7 @@ export const SQRT: Operation = smooth({
   },
   defined: nonNegative,
   turnsOn: 0,
-  outside: 'SQRT takes a negative number',
+  outside: 'the square root of a negative number is taken',
 });
 
 /** LN as a power that varies uses it, which must speak of the power where it is undefined. */
