@@ -2,7 +2,7 @@
  * One piece of an envelope: an upper and a lower straight line over [from, to],
  * both proved by the bounds on f″ (src/METHOD.md, "A piece").
  */
-import { addDown, addUp, down, mulDown, mulUp, ulp, up } from '../numeric/float';
+import { addDown, addUp, down, middle, mulDown, mulUp, ulp, up } from '../numeric/float';
 import type { Interval } from '../numeric/interval';
 import type { Jet } from '../numeric/jet';
 
@@ -23,6 +23,17 @@ export interface Piece {
   readonly areaHi: number;
   /** A lower bound of the density itself, which may be negative. */
   readonly least: number;
+  /** What is known beyond the lines; null where the density is its lines. */
+  readonly inside: Inside | null;
+}
+
+/** Bounds of the density at three points of a piece, and of f″ between them. */
+export interface Inside {
+  readonly middle: number;
+  readonly atFrom: Interval;
+  readonly atMiddle: Interval;
+  readonly atTo: Interval;
+  readonly bend: Interval;
 }
 
 /** Lines are evaluated in doubles when drawing: their ends leave room for that rounding. */
@@ -128,6 +139,13 @@ export function provePiece(
     areaLo: areaLo > lowerArea ? areaLo : lowerArea,
     areaHi: areaHi < upperArea && areaHi >= 0 ? areaHi : upperArea,
     least: Math.max(floor, Math.min(addDown(atFrom.lo, -sag), addDown(atTo.lo, -sag))),
+    inside: {
+      middle: middle(from, to),
+      atFrom: { ...atFrom },
+      atMiddle: { ...atMiddle },
+      atTo: { ...atTo },
+      bend: { ...f.h },
+    },
   };
 }
 
@@ -190,5 +208,6 @@ export function trapezoid(from: number, to: number, left: number, right: number)
     areaLo,
     areaHi,
     least: Math.min(left, right),
+    inside: null,
   };
 }

@@ -142,7 +142,8 @@ class Finder {
 
   /** A side that no hat covers may be negative or undefined: then that is what to say. */
   private refusePoint(x: number, side: Side): void {
-    if (!Number.isFinite(x)) return;
+    // At the pole itself nothing is defined: its area says what is wrong.
+    if (!Number.isFinite(x) || (!side.isBeyond && x === side.origin)) return;
     const { density, defined } = this.encloser.over(x, x, null, null);
     if (defined === Defined.Everywhere && density.v.hi < 0) {
       throw negativeAt(x, density.v.hi, side.isBeyond);

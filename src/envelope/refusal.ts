@@ -63,7 +63,9 @@ export function undefinedSide(
   return new InputError(
     WHERE,
     `it is undefined at x = ${shortNumber(x)}, where ${reason}`,
-    `give a number as the ${name} limit, so that it is defined everywhere within the limits`,
+    isBeyond
+      ? `give a number as the ${name} limit, so that it is defined everywhere within the limits`
+      : `give another ${name} limit, so that it is defined everywhere within the limits`,
   );
 }
 

@@ -161,7 +161,7 @@ class Reader {
     }
     if (operator === ' ' || operator === ':') {
       throw this.error(
-        end + 1,
+        span(second!)[0] + 1,
         'two parts with no operator between them',
         'add * or another operator',
       );

@@ -36,19 +36,12 @@ export function unreadable(
       'write pairs of name and value and then the result, as in LET(a,2,a*x)',
     );
   }
-  if (/not a name/.test(message)) {
-    if (start === end)
-      return new InputError(at, 'LET or LAMBDA lacks a name here', 'write one, such as a or mu');
+  if (/not a name/.test(message)) return noName(text.slice(0, end), where);
+  const twice = /Duplicate name: (.*)/.exec(message)?.[1];
+  if (twice !== undefined) {
     return new InputError(
-      at,
-      `"${cited(token)}" cannot be a name in LET or LAMBDA`,
-      'use letters that are not a cell address, such as a or mu',
-    );
-  }
-  if (/Duplicate name/.test(message)) {
-    return new InputError(
-      at,
-      `the name "${cited(token)}" stands twice in one LET or LAMBDA`,
+      place(where, text.lastIndexOf(twice, end - 1) + 1),
+      `the name "${cited(twice)}" stands twice in one LET or LAMBDA`,
       'give each name once',
     );
   }
@@ -91,5 +84,21 @@ export function unreadable(
     at,
     `"${cited(token)}" does not fit what stands before it`,
     'look for a missing operator, number, comma or bracket',
+  );
+}
+
+/** LET or LAMBDA without a name where the read part ends. */
+function noName(read: string, where: string): InputError {
+  const part = read.replace(/[\s,]+$/, '');
+  let start = part.length;
+  while (start > 0 && !BREAK.test(part.charAt(start - 1))) start--;
+  const at = place(where, start + 1);
+  if (start === part.length) {
+    return new InputError(at, 'LET or LAMBDA lacks a name here', 'write one, such as a or mu');
+  }
+  return new InputError(
+    at,
+    `"${cited(part.slice(start))}" cannot be a name in LET or LAMBDA`,
+    'use letters that are not a cell address, such as a or mu',
   );
 }
