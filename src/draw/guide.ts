@@ -12,6 +12,7 @@
  *     lower ──────╯                      lies under the density
  */
 import type { Envelope } from '../envelope/envelope';
+import type { Inside } from '../envelope/piece';
 
 /** Numbers of one segment in `Guide.segments`, in this order. */
 export const STRIDE = 6;
@@ -30,11 +31,14 @@ export interface Guide {
   readonly gapOf: Int32Array;
   /** Cell ⌊u · cells⌋ names the segment to begin the search at. */
   readonly cells: Int32Array;
-  /** The pieces' lines at STRIDE_LINES numbers each: from, 1/width, lower left, lower rise, gap left, gap rise. */
+  /**
+   * The pieces at LINES_STRIDE numbers each: from, 1/width, lower left, lower rise, gap left, gap
+   * rise; middle, to, then bounds (lo, hi) of the density at from, middle and to, and of f″.
+   */
   readonly lines: Float64Array;
 }
 
-export const LINES_STRIDE = 6;
+export const LINES_STRIDE = 16;
 
 /** One segment before it is laid out: a trapezoid, or a hat (without a place of its own). */
 interface Segment {
@@ -44,6 +48,16 @@ interface Segment {
   readonly area: number;
   readonly gapOf: number;
 }
+
+const unknown = { lo: NaN, hi: NaN };
+/** NaN settles nothing. */
+const NOTHING_INSIDE: Inside = {
+  middle: NaN,
+  atFrom: unknown,
+  atMiddle: unknown,
+  atTo: unknown,
+  bend: unknown,
+};
 
 interface Trapezoid {
   readonly piece: number;
@@ -126,14 +140,13 @@ function linesOf({ pieces }: Envelope): Float64Array {
   pieces.forEach((p, i) => {
     const gapLeft = p.upperLeft - p.lowerLeft;
     const gapRight = p.upperRight - p.lowerRight;
+    const { middle, atFrom, atMiddle, atTo, bend } = p.inside ?? NOTHING_INSIDE;
     lines.set(
       [
-        p.from,
-        1 / (p.to - p.from),
-        p.lowerLeft,
-        p.lowerRight - p.lowerLeft,
-        gapLeft,
-        gapRight - gapLeft,
+        ...[p.from, 1 / (p.to - p.from)],
+        ...[p.lowerLeft, p.lowerRight - p.lowerLeft, gapLeft, gapRight - gapLeft],
+        ...[middle, p.to],
+        ...[atFrom, atMiddle, atTo, bend].flatMap(({ lo, hi }) => [lo, hi]),
       ],
       i * LINES_STRIDE,
     );

@@ -461,5 +461,15 @@ function twoTo(k: number): number {
 /** A part with no height. */
 function nothing(from: number, to: number): Piece {
   const zero = { upperLeft: 0, upperRight: 0, lowerLeft: 0, lowerRight: 0 };
-  return { from, to, ...zero, upperArea: 0, lowerArea: 0, areaLo: 0, areaHi: 0, least: 0, inside: null };
+  return {
+    from,
+    to,
+    ...zero,
+    upperArea: 0,
+    lowerArea: 0,
+    areaLo: 0,
+    areaHi: 0,
+    least: 0,
+    inside: null,
+  };
 }

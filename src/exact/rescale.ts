@@ -59,5 +59,7 @@ function scaledPiece(piece: Piece, unit: number): Piece {
     areaLo: piece.areaLo * unit,
     areaHi: piece.areaHi * unit,
     least: piece.least * unit,
+    // Only draws look further than the lines.
+    inside: null,
   };
 }
