@@ -86,10 +86,9 @@ function asRead(shape: Shape): readonly Line[] {
   ];
   if (shape.kind === 'table') {
     const name = shape.heading === '' ? '' : ` "${shape.heading}"`;
-    return [
-      ['density', `table of points${name}, ${shape.polyline.x.length / 2} straight lines`],
-      ...ends('x'),
-    ];
+    const nLines = shape.polyline.x.length / 2;
+    const lines = `${nLines} straight line${nLines === 1 ? '' : 's'}`;
+    return [['density', `table of points${name}, ${lines}`], ...ends('x')];
   }
   const { sources, variable, givens } = shape;
   const lines = sources.map(({ text }, i): Line => [

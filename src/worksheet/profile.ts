@@ -82,7 +82,19 @@ function linesAt({ pieces, hats }: Envelope, x: number): { upper: number; lower:
     else hi = mid - 1;
   }
   const p = pieces[lo]!;
-  const t = Math.min(1, (x - p.from) / (p.to - p.from));
-  const on = (left: number, right: number): number => left + (right - left) * t;
+  const q = pieces[lo + 1];
+  if (x > p.to && q) {
+    // Between two pieces, at a jump or a kink: the lines of both sides.
+    return {
+      upper: Math.max(p.upperRight, q.upperLeft),
+      lower: Math.min(p.lowerRight, q.lowerLeft),
+    };
+  }
+  const width = p.to - p.from;
+  // From the nearer end, so that a line keeps the digits of its lower end there.
+  const on = (left: number, right: number): number =>
+    x - p.from <= p.to - x
+      ? left + (right - left) * ((x - p.from) / width)
+      : right - (right - left) * ((p.to - x) / width);
   return { upper: on(p.upperLeft, p.upperRight), lower: on(p.lowerLeft, p.lowerRight) };
 }
