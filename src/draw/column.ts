@@ -225,18 +225,19 @@ export class Drawer {
   private settleInside(x: number, piece: number, height: number): number {
     const { lines } = this.guide;
     const at = piece * LINES_STRIDE;
-    const isLeft = x < lines[at + 6]!;
-    const a = lines[isLeft ? at : at + 6]!;
-    const b = lines[isLeft ? at + 6 : at + 7]!;
+    const isLeft = x < lines[at + 7]!;
+    const a = lines[isLeft ? at : at + 7]!;
+    const b = lines[isLeft ? at + 7 : at + 6]!;
+    const [bendLo, bendHi] = [lines[at + 14]!, lines[at + 15]!];
+    // Bounds of the density at a and b.
     const ends = isLeft ? at + 8 : at + 10;
+    const [atA, atB] = [lines[ends + 1]!, lines[ends + 3]!];
     const t = (x - a) / (b - a);
     const arc = ((x - a) * (b - x)) / 2;
-    const most = lines[ends + 1]! * (1 - t) + lines[ends + 3]! * t - lines[at + 14]! * arc;
-    const least = lines[ends]! * (1 - t) + lines[ends + 2]! * t - lines[at + 15]! * arc;
-    const bend = Math.abs(lines[at + 14]!) + Math.abs(lines[at + 15]!);
-    const room =
-      INSIDE_ROUNDING *
-      (Math.abs(lines[ends + 1]!) + Math.abs(lines[ends + 3]!) + bend * arc + height);
+    const most = atA * (1 - t) + atB * t - bendLo * arc;
+    const least = lines[ends]! * (1 - t) + lines[ends + 2]! * t - bendHi * arc;
+    const bend = Math.abs(bendLo) + Math.abs(bendHi);
+    const room = INSIDE_ROUNDING * (Math.abs(atA) + Math.abs(atB) + bend * arc + height);
     return height < least - room ? 1 : height > most + room ? -1 : 0;
   }
 

@@ -12,7 +12,7 @@
  *     lower ──────╯                      lies under the density
  */
 import type { Envelope } from '../envelope/envelope';
-import type { Inside } from '../envelope/piece';
+import { N_INSIDE } from '../envelope/piece';
 
 /** Numbers of one segment in `Guide.segments`, in this order. */
 export const STRIDE = 6;
@@ -33,7 +33,7 @@ export interface Guide {
   readonly cells: Int32Array;
   /**
    * The pieces at LINES_STRIDE numbers each: from, 1/width, lower left, lower rise, gap left, gap
-   * rise; middle, to, then bounds (lo, hi) of the density at from, middle and to, and of f″.
+   * rise, to; then what is known inside (envelope/piece.ts).
    */
   readonly lines: Float64Array;
 }
@@ -48,16 +48,6 @@ interface Segment {
   readonly area: number;
   readonly gapOf: number;
 }
-
-const unknown = { lo: NaN, hi: NaN };
-/** NaN settles nothing. */
-const NOTHING_INSIDE: Inside = {
-  middle: NaN,
-  atFrom: unknown,
-  atMiddle: unknown,
-  atTo: unknown,
-  bend: unknown,
-};
 
 interface Trapezoid {
   readonly piece: number;
@@ -112,7 +102,13 @@ export function guideOf(envelope: Envelope): Guide {
   let start = 0;
   used.forEach(({ from, width, slant, area }, i) => {
     const share = area / total;
-    segments.set([start, 1 / share, from, width, slant, slant * slant], i * STRIDE);
+    const at = i * STRIDE;
+    segments[at + START] = start;
+    segments[at + INVERSE_SHARE] = 1 / share;
+    segments[at + LEFT] = from;
+    segments[at + WIDTH] = width;
+    segments[at + SLANT] = slant;
+    segments[at + SLANT_SQUARED] = slant * slant;
     start += share;
   });
   segments[used.length * STRIDE] = 1;
@@ -138,18 +134,17 @@ function cellsOf(segments: Float64Array, n: number): Int32Array {
 function linesOf({ pieces }: Envelope): Float64Array {
   const lines = new Float64Array(pieces.length * LINES_STRIDE);
   pieces.forEach((p, i) => {
+    const at = i * LINES_STRIDE;
     const gapLeft = p.upperLeft - p.lowerLeft;
-    const gapRight = p.upperRight - p.lowerRight;
-    const { middle, atFrom, atMiddle, atTo, bend } = p.inside ?? NOTHING_INSIDE;
-    lines.set(
-      [
-        ...[p.from, 1 / (p.to - p.from)],
-        ...[p.lowerLeft, p.lowerRight - p.lowerLeft, gapLeft, gapRight - gapLeft],
-        ...[middle, p.to],
-        ...[atFrom, atMiddle, atTo, bend].flatMap(({ lo, hi }) => [lo, hi]),
-      ],
-      i * LINES_STRIDE,
-    );
+    lines[at] = p.from;
+    lines[at + 1] = 1 / (p.to - p.from);
+    lines[at + 2] = p.lowerLeft;
+    lines[at + 3] = p.lowerRight - p.lowerLeft;
+    lines[at + 4] = gapLeft;
+    lines[at + 5] = p.upperRight - p.lowerRight - gapLeft;
+    lines[at + 6] = p.to;
+    // Where nothing is known inside, NaN settles nothing.
+    for (let k = 0; k < N_INSIDE; k++) lines[at + 7 + k] = p.inside ? p.inside[k]! : NaN;
   });
   return lines;
 }

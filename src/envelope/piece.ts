@@ -27,14 +27,13 @@ export interface Piece {
   readonly inside: Inside | null;
 }
 
-/** Bounds of the density at three points of a piece, and of f″ between them. */
-export interface Inside {
-  readonly middle: number;
-  readonly atFrom: Interval;
-  readonly atMiddle: Interval;
-  readonly atTo: Interval;
-  readonly bend: Interval;
-}
+/**
+ * What bounds the density more closely than its lines: the middle, then lower and upper bounds of
+ * the density at from, middle and to, and of f″ between them. An array, since every examined piece
+ * makes one.
+ */
+export type Inside = readonly number[];
+export const N_INSIDE = 9;
 
 /** Lines are evaluated in doubles when drawing: their ends leave room for that rounding. */
 const LINE_ROOM = 4e-16;
@@ -139,13 +138,17 @@ export function provePiece(
     areaLo: areaLo > lowerArea ? areaLo : lowerArea,
     areaHi: areaHi < upperArea && areaHi >= 0 ? areaHi : upperArea,
     least: Math.max(floor, Math.min(addDown(atFrom.lo, -sag), addDown(atTo.lo, -sag))),
-    inside: {
-      middle: middle(from, to),
-      atFrom: { ...atFrom },
-      atMiddle: { ...atMiddle },
-      atTo: { ...atTo },
-      bend: { ...f.h },
-    },
+    inside: [
+      middle(from, to),
+      atFrom.lo,
+      atFrom.hi,
+      atMiddle.lo,
+      atMiddle.hi,
+      atTo.lo,
+      atTo.hi,
+      f.h.lo,
+      f.h.hi,
+    ],
   };
 }
 

@@ -178,7 +178,7 @@ class Checker {
     );
   }
 
-  /** Nothing may lie beyond the pieces of a side that is unbounded and has no hat. */
+  /** Nothing that doubles can hold may lie beyond the pieces of an unbounded side without a hat. */
   private checkBeyond(): void {
     const [from, to] = withoutHats(this.envelope);
     const { pieces } = this.envelope;
@@ -190,8 +190,10 @@ class Checker {
       if (Number.isFinite(limit)) continue;
       for (let k = -40; k < 300; k++) {
         const x = end + direction * Math.pow(2, k) * (1 + this.options.random());
-        if (Number.isFinite(x) && this.reference.plain(x) > 0)
-          this.fault(`x = ${x} lies beyond the pieces and has height ${this.reference.plain(x)}`);
+        if (!Number.isFinite(x) || this.reference.plain(x) === 0) continue;
+        const height = this.reference.precise(x).times(this.scale);
+        if (height.gt(5e-324))
+          this.fault(`x = ${x} lies beyond the pieces and has height ${height.toPrecision(17)}`);
       }
     }
   }

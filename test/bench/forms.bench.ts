@@ -1,0 +1,93 @@
+/**
+ * The forms of test/forms: pieces, the acceptance that is certified, draws a second, and the
+ * time of a build (text to proof to guide table) as a multiple of the time of one draw: "cold" in
+ * a process of its own that has proved nothing before, "warm" the median of many. Fails where
+ * the median form's warm build is more than 25,000 draws' worth.
+ */
+import { spawnSync } from 'node:child_process';
+import { Drawer } from '../../src/draw/column';
+import { promisedAcceptance } from '../../src/envelope/envelope';
+import { proveEnvelope } from '../../src/envelope/prove';
+import type { Envelope } from '../../src/envelope/envelope';
+import { compile } from '../../src/formula/compile';
+import { parse } from '../../src/formula/parse';
+import { keyOf } from '../../src/random/key';
+import type { Form } from '../forms/forms';
+import { drawnForms, limitsOf } from '../forms/forms';
+import { inTurn, median, printTable, seconds } from './timing';
+
+const ROWS = 1_000_000;
+const MOST_DRAWS = 25_000;
+
+function build(form: Form): { envelope: Envelope; drawer: Drawer } {
+  const { density } = form;
+  const source = { text: density, where: 'Formula', tree: parse(density, 'Formula') };
+  const tape = compile([source], ['x'], new Map());
+  const envelope = proveEnvelope(tape, ...limitsOf(form));
+  return { envelope, drawer: new Drawer(envelope) };
+}
+
+/** Seconds of the first build of a process. */
+function coldBuild({ number }: Form): number {
+  const run = spawnSync(process.execPath, [__filename, `cold ${number}`], { encoding: 'utf8' });
+  return Number(run.stdout);
+}
+
+function measure(form: Form): readonly (string | number)[] {
+  const cold = median([1, 2, 3].map(() => coldBuild(form)));
+  const { envelope, drawer } = build(form);
+  for (let i = 0; i < 30; i++) build(form);
+  const key = keyOf('plan-2027', `form ${form.number}`);
+  const [builds, draws] = inTurn(
+    [
+      () => {
+        for (let i = 0; i < 10; i++) build(form);
+      },
+      () => drawer.column(key, 1, ROWS),
+    ],
+    9,
+  );
+  const [warm, draw] = [median(builds!) / 10, median(draws!) / ROWS];
+  multiples.push(warm / draw);
+  coldMultiples.push(cold / draw);
+  return [
+    form.number,
+    form.density,
+    envelope.pieces.length,
+    promisedAcceptance(envelope).toFixed(4),
+    Math.round(warm / draw),
+    Math.round(cold / draw),
+    (warm * 1000).toFixed(2),
+    (cold * 1000).toFixed(1),
+    (1e-6 / draw).toFixed(1),
+  ];
+}
+
+const multiples: number[] = [];
+const coldMultiples: number[] = [];
+const cold = /^cold (\d+)$/.exec(process.argv[2] ?? '');
+if (cold) {
+  const form = drawnForms.find(({ number }) => number === Number(cold[1]))!;
+  console.log(seconds(() => build(form)));
+} else {
+  printTable([
+    [
+      '#',
+      'density',
+      'pieces',
+      'certified',
+      'warm build, draws',
+      'cold build, draws',
+      'warm, ms',
+      'cold, ms',
+      'million a second',
+    ],
+    ...drawnForms.map(measure),
+  ]);
+  const isFast = median(multiples) <= MOST_DRAWS;
+  console.log(
+    `\nMedian build: ${Math.round(median(multiples))} draws' worth warm, ${Math.round(median(coldMultiples))} cold. ` +
+      `Promised: ${MOST_DRAWS} warm: ${isFast ? 'kept' : 'NOT KEPT'}`,
+  );
+  if (!isFast) process.exitCode = 1;
+}
