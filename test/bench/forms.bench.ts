@@ -2,7 +2,7 @@
  * The forms of test/forms: pieces, the acceptance that is certified, draws a second, and the
  * time of a build (text to proof to guide table) as a multiple of the time of one draw: "cold" in
  * a process of its own that has proved nothing before, "warm" the median of many. Fails where
- * the median form's warm build is more than 25,000 draws' worth.
+ * the median warm build of a form on finite limits is more than 25,000 draws' worth.
  */
 import { spawnSync } from 'node:child_process';
 import { Drawer } from '../../src/draw/column';
@@ -18,6 +18,8 @@ import { inTurn, median, printTable, seconds } from './timing';
 
 const ROWS = 1_000_000;
 const MOST_DRAWS = 25_000;
+/** Later forms have an unbounded side or a pole. */
+const LAST_FINITE = 36;
 
 function build(form: Form): { envelope: Envelope; drawer: Drawer } {
   const { density } = form;
@@ -48,8 +50,8 @@ function measure(form: Form): readonly (string | number)[] {
     9,
   );
   const [warm, draw] = [median(builds!) / 10, median(draws!) / ROWS];
-  multiples.push(warm / draw);
-  coldMultiples.push(cold / draw);
+  const isFinite = form.number <= LAST_FINITE;
+  multiples.push({ isFinite, warm: warm / draw, cold: cold / draw });
   return [
     form.number,
     form.density,
@@ -63,8 +65,15 @@ function measure(form: Form): readonly (string | number)[] {
   ];
 }
 
-const multiples: number[] = [];
-const coldMultiples: number[] = [];
+const multiples: { readonly isFinite: boolean; readonly warm: number; readonly cold: number }[] =
+  [];
+
+/** The median of both, as a sentence. */
+function medians(of: typeof multiples): string {
+  const [warm, first] = [median(of.map((m) => m.warm)), median(of.map((m) => m.cold))];
+  return `${Math.round(warm)} draws' worth warm, ${Math.round(first)} cold`;
+}
+
 const cold = /^cold (\d+)$/.exec(process.argv[2] ?? '');
 if (cold) {
   const form = drawnForms.find(({ number }) => number === Number(cold[1]))!;
@@ -84,10 +93,10 @@ if (cold) {
     ],
     ...drawnForms.map(measure),
   ]);
-  const isFast = median(multiples) <= MOST_DRAWS;
-  console.log(
-    `\nMedian build: ${Math.round(median(multiples))} draws' worth warm, ${Math.round(median(coldMultiples))} cold. ` +
-      `Promised: ${MOST_DRAWS} warm: ${isFast ? 'kept' : 'NOT KEPT'}`,
-  );
+  const finite = multiples.filter(({ isFinite }) => isFinite);
+  const isFast = median(finite.map(({ warm }) => warm)) <= MOST_DRAWS;
+  console.log(`\nMedian build on finite limits: ${medians(finite)}`);
+  console.log(`Median build of all: ${medians(multiples)}`);
+  console.log(`Promised on finite limits: ${MOST_DRAWS} warm: ${isFast ? 'kept' : 'NOT KEPT'}`);
   if (!isFast) process.exitCode = 1;
 }
