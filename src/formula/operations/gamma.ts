@@ -116,8 +116,11 @@ type Rounding = (a: number, b: number) => number;
 function choose(n: number, k: number, times: Rounding, by: Rounding): number {
   const least = Math.min(k, n - k);
   let result = 1;
-  for (let i = 1; i <= least && result < Infinity; i++) {
-    result = by(times(result, n - least + i), i);
+  for (let i = 1; i <= least; i++) {
+    const product = times(result, n - least + i);
+    result = by(product, i);
+    // Every further factor is above 1, so what has overflowed is a bound already.
+    if (product >= Number.MAX_VALUE) break;
   }
   return result;
 }
