@@ -262,7 +262,12 @@ export function logarithm(out: Interval, a: Interval): void {
   set(out, Math.min(lo, 710), hi);
 }
 
-/** a^p for real p in the enclosure p, over the part of a that is ≥ 0; p keeps one sign and is not 0. */
+/** 0^q as the limit from the right; 0^0 is 1, as x^0 is for every x above 0. */
+function powerOfZero(q: number): number {
+  return q > 0 ? 0 : q < 0 ? Infinity : 1;
+}
+
+/** a^p for real p in the enclosure p, over the part of a that is ≥ 0. */
 export function realPower(out: Interval, a: Interval, p: Interval): void {
   const lo = Math.max(0, a.lo);
   const hi = Math.max(0, a.hi);
@@ -271,8 +276,8 @@ export function realPower(out: Interval, a: Interval, p: Interval): void {
   // x^p is monotone in x and in p on each side of x = 1, so its extremes are at corners.
   for (const x of [lo, hi]) {
     for (const q of [p.lo, p.hi]) {
-      const exact = x === 1 || x === 0 || x === Infinity;
-      const y = x === 1 ? 1 : x === 0 ? (q > 0 ? 0 : Infinity) : elementary.pow(x, q);
+      const exact = x === 1 || x === 0 || x === Infinity || q === 0;
+      const y = x === 1 ? 1 : x === 0 ? powerOfZero(q) : elementary.pow(x, q);
       const step = Math.abs(q) > elementary.LARGE_POWER ? LARGE_POWER_STEP : STEP;
       least = Math.min(least, exact ? y : Math.max(0, below(y, step)));
       most = Math.max(most, exact ? y : above(y, step));

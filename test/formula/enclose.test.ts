@@ -181,6 +181,21 @@ describe('Encloser', () => {
     expect(turn !== null).toBe(turns);
   });
 
+  it('x^FALSE is 1, whose truth is known only to the enclosures [law]', () => {
+    const { density } = new Encloser(tapeOf('x^(0.5<>0.5)')).over(0, 1, null, null);
+    expect(density.v).toEqual({ lo: 1, hi: 1 });
+  });
+
+  it('a binomial coefficient of huge numbers is bounded at once [law]', () => {
+    const encloser = new Encloser(tapeOf('COMBIN(x,x/2)'));
+    const start = performance.now();
+    const { density } = encloser.over(1e18, 1e18, null, null);
+    expect(density.v.lo).toBeGreaterThan(1e290);
+    expect(density.v.hi).toBe(Infinity);
+    // A few thousand factors at most; one by one up to x/2 they would take years.
+    expect(performance.now() - start).toBeLessThan(1000);
+  });
+
   it('undefinedReason() names the innermost step that is undefined [law]', () => {
     const encloser = new Encloser(tapeOf('1+EXP(2*LN(x-5))'));
     encloser.over(0, 1, null, null);

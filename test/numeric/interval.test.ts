@@ -235,6 +235,15 @@ describe('known results', () => {
     expect(out.hi >= hi && (out.hi === hi || out.hi <= hi * (1 + 1e-15))).toBe(true);
   });
 
+  it('realPower takes 0^0 for 1, as x^0 is for every x above 0 [law]', () => {
+    const out = I.interval(0, 4);
+    I.realPower(out, out, I.interval(0));
+    expect(out).toEqual({ lo: 1, hi: 1 });
+    I.set(out, 0, 4);
+    I.realPower(out, out, I.interval(-0.5, 0.5));
+    expect(out).toEqual({ lo: 0, hi: Infinity });
+  });
+
   it('setPi encloses π between neighbouring doubles [published]', () => {
     // π to 30 digits, Abramowitz & Stegun table 1.1, from memory.
     const out = I.interval();
