@@ -49,6 +49,8 @@ const MAX_ATTEMPTS = 1_000_000;
 const LINE_ROUNDING = 4e-15;
 /** Room for the rounding of what the bounds inside a piece say. */
 const INSIDE_ROUNDING = 1e-14;
+/** Among smaller numbers rounding is no longer relative. */
+const LEAST_EXACT = 1e-290;
 /** The same for a hat, whose place and height are rounded over several steps. */
 const HAT_ROUNDING = 1e-11;
 /** 2^-54: the far end of a hat is never proposed, and its steepest place (2^-54)^-16 is still a double. */
@@ -234,6 +236,7 @@ export class Drawer {
     const [atA, atB] = [lines[ends + 1]!, lines[ends + 3]!];
     const t = (x - a) / (b - a);
     const arc = ((x - a) * (b - x)) / 2;
+    if (!(arc > LEAST_EXACT && height > LEAST_EXACT)) return 0;
     const most = atA * (1 - t) + atB * t - bendLo * arc;
     const least = lines[ends]! * (1 - t) + lines[ends + 2]! * t - bendHi * arc;
     const bend = Math.abs(bendLo) + Math.abs(bendHi);

@@ -2,7 +2,18 @@
  * One piece of an envelope: an upper and a lower straight line over [from, to],
  * both proved by the bounds on f″ (src/METHOD.md, "A piece").
  */
-import { addDown, addUp, down, middle, mulDown, mulUp, ulp, up } from '../numeric/float';
+import {
+  addDown,
+  addUp,
+  divDown,
+  divUp,
+  down,
+  middle,
+  mulDown,
+  mulUp,
+  ulp,
+  up,
+} from '../numeric/float';
 import type { Interval } from '../numeric/interval';
 import type { Jet } from '../numeric/jet';
 
@@ -116,8 +127,9 @@ export function provePiece(
   );
   const upperArea = areaUp(upper[0], upper[1], width);
   const lowerArea = areaDown(lower[0], lower[1], widthLo);
-  const cube = mulUp(mulUp(width, width), width) / 12;
-  const cubeLo = mulDown(mulDown(widthLo, widthLo), widthLo) / 12;
+  // Never 0, which would cancel an infinite f″.
+  const cube = divUp(mulUp(mulUp(width, width), width), 12);
+  const cubeLo = divDown(mulDown(mulDown(widthLo, widthLo), widthLo), 12);
   const areaHi = addUp(
     areaUp(atFrom.hi, atTo.hi, width),
     -mulDown(f.h.lo, f.h.lo > 0 ? cubeLo : cube),

@@ -213,7 +213,14 @@ class Checker {
       this.decided++;
       const precise = this.reference.veryPrecise(at.x).times(this.scale);
       // What doubles make of the place and of the height there is rounded.
-      if (precise.isFinite() && precise.gt(preciseOf(at.height).times(1 + HAT_ROUNDING)))
+      if (
+        precise.isFinite() &&
+        precise.gt(
+          preciseOf(at.height)
+            .times(1 + HAT_ROUNDING)
+            .plus(5e-324),
+        )
+      )
         this.fault(`x = ${at.x} under a hat: ${precise.toPrecision(17)} above ${at.height}`);
     }
   }

@@ -23,3 +23,22 @@ describe('provePiece', () => {
     },
   );
 });
+
+describe('provePiece among the smallest and largest numbers', () => {
+  // Found by fuzzing: the cube of the width underflowed to 0 and cancelled an infinite f″.
+  test('encloses the area where the width is 10^-302 and f″ overflows [law]', () => {
+    const { areaLo, areaHi } = envelopeOf('EXP(-((1E300*x)^2))', 0, 9);
+    const area = Math.sqrt(Math.PI) / 2e300;
+    expect(areaLo).toBeLessThanOrEqual(area);
+    expect(areaHi).toBeGreaterThanOrEqual(area);
+    // An enclosure whose pieces had lost their f″ was 10^-13 wide.
+    expect(areaHi - areaLo).toBeGreaterThan(1e-3 * area);
+  });
+
+  // Found by fuzzing: slope times height underflowed, and the bound by slopes fell to 0.
+  test('keeps the upper line above a plateau whose slope is below all doubles [law]', () => {
+    const plateau = 1.755143854900032e-6;
+    const { pieces } = envelopeOf(`${plateau}+EXP(-(x^2))*1E-3`, 30, 200);
+    expect(pieces.every((p) => p.upperLeft >= plateau && p.upperRight >= plateau)).toBe(true);
+  });
+});
