@@ -1,3 +1,4 @@
+import { provePiece } from '../../src/envelope/piece';
 import { proveEnvelope } from '../../src/envelope/prove';
 import { compile } from '../../src/formula/compile';
 import { parse } from '../../src/formula/parse';
@@ -36,9 +37,17 @@ describe('provePiece among the smallest and largest numbers', () => {
   });
 
   // Found by fuzzing: slope times height underflowed, and the bound by slopes fell to 0.
-  test('keeps the upper line above a plateau whose slope is below all doubles [law]', () => {
+  test('keeps the upper line above a plateau whose slopes are below all doubles [law]', () => {
     const plateau = 1.755143854900032e-6;
-    const { pieces } = envelopeOf(`${plateau}+EXP(-(x^2))*1E-3`, 30, 200);
-    expect(pieces.every((p) => p.upperLeft >= plateau && p.upperRight >= plateau)).toBe(true);
+    const slopes = {
+      v: { lo: plateau, hi: plateau * 1.01 },
+      d: { lo: -2.485e-321, hi: 1e-322 },
+      h: { lo: -Infinity, hi: Infinity },
+    };
+    const height = { lo: plateau, hi: plateau };
+    const ends = { atFrom: height, atTo: height, atMiddle: height };
+    const { upperLeft, upperRight } = provePiece(37, 125, slopes, ends);
+    expect(upperLeft).toBeGreaterThanOrEqual(plateau);
+    expect(upperRight).toBeGreaterThanOrEqual(plateau);
   });
 });
