@@ -3,6 +3,7 @@ export type { Cell, ErrorCell, Range } from './density/cells';
 export { CellErrorPassed, InputError } from './errors';
 export { acceptance } from './worksheet/acceptance';
 export { blend } from './worksheet/blend';
+export { cases } from './worksheet/cases';
 export { draw } from './worksheet/draw';
 export { envelope } from './worksheet/envelope';
 export { expect } from './worksheet/expect';

@@ -8,6 +8,7 @@ import {
   acceptance,
   below,
   blend,
+  cases,
   draw,
   envelope,
   expect,
@@ -68,6 +69,10 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
   FROMPERCENTILES: ([levels = null, values = null, lowest = null, highest = null]) =>
     fromPercentiles(levels, values, lowest, highest),
   FROMDATA: ([values = null, lowest = null, highest = null]) => fromData(values, lowest, highest),
+  CASES: (
+    [density = null, limits = null, rows = null, seed = null, label = null, table = null],
+    givens,
+  ) => cases(density, limits, rows, seed, label, table, givens),
   BLEND: ([shares = null], shapes) => blend(shares, shapes),
 };
 

@@ -214,3 +214,26 @@ export function fromData(values: any[][], lowest?: any[][], highest?: any[][]): 
 export function blend(shares: any[][], shapes?: any[][][]): any[][] {
   return answer('BLEND', [shares], shapes);
 }
+
+/**
+ * Draws one quantity under several cases, such as three numbers of presses: one column a case, every column with the random numbers of the same row, so that differences between cases are not noise. Each column is what DRAW gives with that case's values. A heading row of case names, then values in the unit of x.
+ * @customfunction CASES
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to, rows, seed, label and constants.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param rows How many values a case, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
+ * @param seed Any text or number except blank and 0. Needed unless a block has it.
+ * @param label Name of the quantity, the same for all cases. Needed unless a block has it.
+ * @param cases A heading row, any word and then the case names; below it one row for each name that differs: the name of a given, or from or to for the limits, then its value in each case.
+ * @param givens Values for the names in the formula that are the same in all cases: two columns, name and value.
+ */
+export function cases(
+  density: any[][],
+  limits?: any[][],
+  rows?: any[][],
+  seed?: any[][],
+  label?: any[][],
+  cases?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('CASES', [density, limits, rows, seed, label, cases], givens);
+}

@@ -48,6 +48,24 @@ export class Givens {
     this.map.set(name, isNamed ? value : numberIn(value, at));
   }
 
+  /** As `add`, but in place of a constant of that name if there is one. */
+  replace(named: NamedValue): void {
+    const name = named.name.trim();
+    const written = this.keys.get(nameKey(name));
+    if (written === undefined) return this.add(named);
+    const at = `${named.where}, ${quoted(name)}`;
+    const old = this.map.get(written)!;
+    const { value } = named;
+    if (typeof old !== 'number' || (typeof value === 'object' && value !== null)) {
+      throw new InputError(
+        at,
+        'it is the name of a list or a function',
+        'give other values to constants only',
+      );
+    }
+    this.map.set(written, numberIn(value, at));
+  }
+
   private claim(name: string, at: string): void {
     const key = nameKey(name);
     if (this.variables.some((variable) => nameKey(variable) === key)) {

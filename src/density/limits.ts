@@ -20,6 +20,30 @@ export interface LimitCells {
   readonly from: Cell;
   readonly to: Cell;
   readonly where: string;
+  /** The places of ends that do not come from the limits themselves. */
+  readonly fromWhere?: string;
+  readonly toWhere?: string;
+}
+
+/** Ends from elsewhere, each with its place. */
+export interface OtherEnds {
+  readonly from?: { readonly cell: Cell; readonly where: string };
+  readonly to?: { readonly cell: Cell; readonly where: string };
+}
+
+/** The limits with other ends; what has no limits is unbounded where none is given. */
+export function withEnds(
+  cells: LimitCells | null,
+  { from, to }: OtherEnds,
+  where: string,
+): LimitCells | null {
+  if (from === undefined && to === undefined) return cells;
+  const own = cells ?? { variable: DEFAULT_VARIABLE, from: UNBOUNDED, to: UNBOUNDED, where };
+  return {
+    ...own,
+    ...(from && { from: from.cell, fromWhere: from.where }),
+    ...(to && { to: to.cell, toWhere: to.where }),
+  };
 }
 
 export interface Limits {
@@ -76,10 +100,11 @@ export function checkStep(step: Cell, where: string): void {
  * The ends as numbers.
  * @throws {InputError} when an end is no number and no given, when from ≥ to, or when an end is too far out.
  */
-export function readEnds({ from, to, where }: LimitCells, givens: Givens): Limits {
+export function readEnds(cells: LimitCells, givens: Givens): Limits {
+  const { from, to, where, fromWhere = `${where}, from`, toWhere = `${where}, to` } = cells;
   const limits = {
-    from: readEnd(from, `${where}, from`, givens, -Infinity),
-    to: readEnd(to, `${where}, to`, givens, Infinity),
+    from: readEnd(from, fromWhere, givens, -Infinity),
+    to: readEnd(to, toWhere, givens, Infinity),
   };
   if (!(limits.from < limits.to)) {
     throw new InputError(

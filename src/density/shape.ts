@@ -6,17 +6,19 @@
  */
 import { InputError } from '../errors';
 import type { Source } from '../formula/compile';
+import { nameKey } from '../formula/compile';
 import type { GivenMap } from '../formula/given';
+import { namesIn } from '../formula/rename';
 import type { Block } from './block';
 import { isBlock, readBlock } from './block';
 import type { Range } from './cells';
-import { given, givenUnlessZero, isBlankOrZero, passErrors } from './cells';
+import { given, givenUnlessZero, isBlankOrZero, isText, passErrors } from './cells';
 import { readFormula, readLines } from './formulas';
 import type { GivenRanges, NamedValue } from './givens';
 import { checkMethod, Givens, readGivens } from './givens';
 import type { Limits } from './limits';
-import { checkStep, DEFAULT_VARIABLE, readEnds, readLimitCells } from './limits';
-import type { LimitCells } from './limits';
+import { checkStep, DEFAULT_VARIABLE, readEnds, readLimitCells, withEnds } from './limits';
+import type { LimitCells, OtherEnds } from './limits';
 import type { ListLine } from './shapelist';
 import { isShapeList, readShapeList } from './shapelist';
 import type { Polyline, PointTable } from './table';
@@ -63,6 +65,29 @@ export interface Places {
   readonly givens: number;
 }
 
+/** Values in place of a shape's own: of its constants, and of the ends of its limits. */
+export interface Overrides {
+  readonly values: readonly NamedValue[];
+  readonly ends: OtherEnds;
+}
+
+const AS_GIVEN: Overrides = { values: [], ends: {} };
+
+/** What the three arguments of a shape say, open to other values of its constants and limits. */
+export interface Family {
+  readonly block: Block | null;
+  readonly lines: readonly ListLine[] | null;
+  readonly notes: readonly string[];
+  /** The headings of a table's columns of heights. */
+  readonly headings: readonly string[];
+  /** Names that it uses: its givens, and what stands in formulas and limits. Compared by nameKey. */
+  readonly names: () => ReadonlySet<string>;
+  /** Its givens as written, for messages. */
+  readonly givens: readonly string[];
+  /** @throws {InputError} for values and ends that do not fit. */
+  readonly shapes: (overrides: Overrides) => readonly Shape[];
+}
+
 /**
  * Reads the three arguments of a shape.
  * @throws {InputError} with the place, for everything that cannot be read.
@@ -74,6 +99,21 @@ export function readShapes(
   givens: readonly Range[],
   places: Places,
 ): Shapes {
+  const { block, lines, notes, shapes } = readFamily(density, limits, givens, places);
+  return { shapes: shapes(AS_GIVEN), block, lines, notes };
+}
+
+/**
+ * Reads the three arguments of a shape once, for many shapes that differ in values.
+ * @throws {InputError} with the place, for everything that cannot be read whatever the values.
+ * @throws {CellErrorPassed} when a cell holds an error value.
+ */
+export function readFamily(
+  density: Range | null,
+  limits: Range | null,
+  givens: readonly Range[],
+  places: Places,
+): Family {
   const range = given(density);
   if (range === null || range.every((row) => row.every(isBlankOrZero))) {
     throw new InputError(
@@ -86,26 +126,77 @@ export function readShapes(
   const limitsRange = givenUnlessZero(limits);
   const own = limitsRange ? readLimitCells(limitsRange, places.limits) : null;
   const shared = readGivens(givens, places.givens);
+  const common = { block: null, lines: null, headings: [], notes: shared.notes };
+  const sharedNames = shared.values.map(({ name }) => name);
+  const known = (more: readonly string[], sources: () => readonly Source[]) => ({
+    givens: [...more, ...sharedNames],
+    names: () => namesOf([...more, ...sharedNames], own, sources()),
+  });
   if (isShapeList(range)) {
     const lines = readShapeList(range, places.density);
-    const shapes = lines.map(({ block, where }) =>
-      inLine(where, () => ({ ...blockShape(block, where, own, shared, true), line: where })),
-    );
-    return { shapes, block: null, lines, notes: shared.notes };
+    const members = lines.map(({ block, where }) => ({
+      where,
+      member: blockMember(block, where, own, shared, true),
+    }));
+    return {
+      ...common,
+      ...known([], () => []),
+      lines,
+      shapes: (overrides) =>
+        members.map(({ where, member }) =>
+          inLine(where, () => ({ ...member.shape(overrides), line: where })),
+        ),
+    };
   }
   if (isBlock(range)) {
     const block = readBlock(range, places.density);
-    const shape = blockShape(block, places.density, own, shared);
-    return { shapes: [shape], block, lines: null, notes: shared.notes };
+    const { shape, sources } = blockMember(block, places.density, own, shared);
+    const names = block.givens.map(({ name }) => name);
+    return {
+      ...common,
+      ...known(names, sources),
+      block,
+      shapes: (overrides) => [shape(overrides)],
+    };
   }
-  const named = namedGivens(own, [], shared);
   if (isPointTable(range)) {
     const table = readTable(range, places.density);
-    const shapes = tableShapes(table, own, named, places);
-    return { shapes, block: null, lines: null, notes: [...table.notes, ...shared.notes] };
+    return {
+      ...common,
+      ...known([], () => []),
+      headings: table.columns.map(({ heading }) => heading),
+      notes: [...table.notes, ...shared.notes],
+      shapes: (overrides) => {
+        const cells = withEnds(own, overrides.ends, places.limits);
+        return tableShapes(table, cells, namedGivens(cells, [], shared, overrides), places);
+      },
+    };
   }
-  const shape = formulaShape(readLines(range, places.density), own, named);
-  return { shapes: [shape], block: null, lines: null, notes: shared.notes };
+  const sources = once(() => readLines(range, places.density));
+  return {
+    ...common,
+    ...known([], sources),
+    shapes: (overrides) => {
+      const cells = withEnds(own, overrides.ends, places.limits);
+      const named = namedGivens(cells, [], shared, overrides);
+      return [formulaShape(sources(), cells, named)];
+    },
+  };
+}
+
+function namesOf(
+  givens: readonly string[],
+  limits: LimitCells | null,
+  sources: readonly Source[],
+): ReadonlySet<string> {
+  const ends = limits ? [limits.from, limits.to].filter(isText) : [];
+  const written = [...givens, ...ends].map((name) => nameKey(name.trim()));
+  return new Set([...written, ...sources.flatMap(({ text }) => namesIn(text))]);
+}
+
+function once<T extends object>(make: () => T): () => T {
+  let made: T | undefined;
+  return () => (made ??= make());
 }
 
 /** Names the line of a list in a complaint that does not name it yet. */
@@ -123,30 +214,40 @@ function namedGivens(
   cells: LimitCells | null,
   own: readonly NamedValue[],
   shared: GivenRanges,
+  overrides: Overrides,
 ): Givens {
   const named = new Givens([cells?.variable ?? DEFAULT_VARIABLE]);
   for (const value of [...own, ...shared.values]) named.add(value);
+  for (const value of overrides.values) named.replace(value);
   return named;
 }
 
-/** The shape of a block, or of a line of a list, whose place is `where`. */
-function blockShape(
+interface Member {
+  readonly sources: () => readonly Source[];
+  readonly shape: (overrides: Overrides) => FormulaShape;
+}
+
+/** The shapes of a block, or of a line of a list, whose place is `where`. */
+function blockMember(
   block: Block,
   where: string,
   limits: LimitCells | null,
   shared: GivenRanges,
   isLine = false,
-): FormulaShape {
-  const cells = limits ?? blockLimits(block, where, isLine);
-  const named = namedGivens(
-    cells,
-    block.givens.map(({ name, value }) => ({ name, value, where })),
-    shared,
-  );
-  const method = block.words.get('method');
-  if (method !== undefined) checkMethod(method, `${where}, method`);
-  const formula = block.words.get('density') ?? null;
-  return formulaShape([readFormula(formula, 'Formula', `${where}, density`)], cells, named);
+): Member {
+  const sources = once(() => {
+    const formula = block.words.get('density') ?? null;
+    return [readFormula(formula, 'Formula', `${where}, density`)];
+  });
+  const own = block.givens.map(({ name, value }) => ({ name, value, where }));
+  const shape = (overrides: Overrides): FormulaShape => {
+    const cells = withEnds(limits ?? blockLimits(block, where, isLine), overrides.ends, where);
+    const named = namedGivens(cells, own, shared, overrides);
+    const method = block.words.get('method');
+    if (method !== undefined) checkMethod(method, `${where}, method`);
+    return formulaShape(sources(), cells, named);
+  };
+  return { sources, shape };
 }
 
 function formulaShape(

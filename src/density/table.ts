@@ -6,6 +6,7 @@ import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
 import { isBlankOrZero, isText, numberIn, quoted } from './cells';
 import type { Limits } from './limits';
+import { endCell } from './limits';
 
 export interface HeightColumn {
   /** The column's heading, empty without one. */
@@ -151,7 +152,7 @@ export function truncate(
   if (!cut.heights.some((h) => h > 0)) {
     throw new InputError(
       where,
-      `the table has no area between ${limits.from} and ${limits.to}`,
+      `the table has no area between ${quoted(endCell(limits.from))} and ${quoted(endCell(limits.to))}`,
       `give limits that meet its points, which go from ${x[0]} to ${x.at(-1)}`,
     );
   }

@@ -2,22 +2,16 @@
  * What the arguments of DRAW and its companions ask for: shapes, rows, seed and one
  * label a column. Arguments given outright win over a block's words.
  */
-import type { Cell, Range } from '../density/cells';
-import {
-  given,
-  givenUnlessZero,
-  isBlank,
-  lineOfCells,
-  passErrors,
-  quoted,
-  singleCell,
-} from '../density/cells';
+import type { Range } from '../density/cells';
+import { given, isBlank, quoted } from '../density/cells';
 import type { Shape, Shapes } from '../density/shape';
 import type { ListLine } from '../density/shapelist';
 import { readShapes } from '../density/shape';
 import { InputError } from '../errors';
-import type { Key, KeyPart } from '../random/key';
-import { keyOf, keyText } from '../random/key';
+import type { Key } from '../random/key';
+import { keyText } from '../random/key';
+import type { Part } from './keys';
+import { argumentOr, keyFrom, keyPart, readLabels, readSeed, textOf } from './keys';
 import type { Placed } from './rows';
 import { readRows } from './rows';
 
@@ -56,31 +50,16 @@ export function readDrawRequest(
 ): DrawRequest {
   const shapes = readShapes(density, limits, givens, DRAW_PLACES);
   const { firstRow, nRows } = readRows(
-    argumentOr(rows, shapes, 'rows') ??
+    argumentOr(rows, shapes, 'rows', DRAW_PLACES) ??
       rowsOfLines(shapes.lines) ?? { range: given(rows), where: DRAW_PLACES.rows },
   );
-  const seedCells = argumentOr(seed, shapes, 'seed');
-  const labels = readLabels(argumentOr(label, shapes, 'label'));
+  const seedCells = argumentOr(seed, shapes, 'seed', DRAW_PLACES);
+  const labels = readLabels(argumentOr(label, shapes, 'label', DRAW_PLACES));
   const columns = shapes.lines
     ? lineColumns(shapes, shapes.lines, seedCells, labels)
-    : plainColumns(shapes.shapes, readSeed(seedCells), labels);
+    : plainColumns(shapes.shapes, readSeed(seedCells, DRAW_PLACES), labels);
   refuseEqualLabels(columns, shapes.lines);
   return { columns, firstRow, nRows, notes: shapes.notes };
-}
-
-/** The argument, else the block's word. */
-function argumentOr(
-  argument: Range | null,
-  { block }: Shapes,
-  name: 'rows' | 'seed' | 'label',
-): Placed<Range> | null {
-  const own = givenUnlessZero(argument);
-  if (own !== null) {
-    passErrors(own);
-    return { range: own, where: DRAW_PLACES[name] };
-  }
-  const cell = block?.words.get(name);
-  return cell === undefined ? null : { range: [[cell]], where: `${DRAW_PLACES.density}, ${name}` };
 }
 
 function plainColumns(
@@ -91,26 +70,8 @@ function plainColumns(
   return assignLabels(shapes, labels).map(({ shape, label }) => columnOf(shape, seed, label));
 }
 
-/** What a cell says of a seed or label, and where it stands. */
-interface Part {
-  readonly value: KeyPart;
-  readonly where: string;
-}
-
-function readSeed(cells: Placed<Range> | null): Part {
-  const { range, where } = cells ?? { range: [[null]], where: DRAW_PLACES.seed };
-  return keyPart(singleCell(range, where), where);
-}
-
 function columnOf(shape: Shape, seed: Part, label: Part): ColumnRequest {
-  const key = placed(label.where, 'label', () =>
-    placed(seed.where, 'seed', () => keyOf(seed.value, label.value)),
-  );
-  return { shape, seed: textOf(seed), label: textOf(label), key };
-}
-
-function textOf({ value }: Part): string {
-  return String(value).trim();
+  return { shape, seed: textOf(seed), label: textOf(label), key: keyFrom(seed, label) };
 }
 
 /** One column per line of a list: its own label, after the argument's if there is one, and its own seed unless one is given. */
@@ -133,7 +94,7 @@ function lineColumns(
       throw new InputError(where, 'it has no label', 'give every line a label of its own');
     const own = block.words.get('seed');
     const ownSeed = own === undefined ? null : { range: [[own]], where: `${where}, seed` };
-    return columnOf(shapes[i]!, readSeed(seedCells ?? ownSeed), behind(labels, part));
+    return columnOf(shapes[i]!, readSeed(seedCells ?? ownSeed, DRAW_PLACES), behind(labels, part));
   });
 }
 
@@ -158,21 +119,6 @@ function rowsOfLines(lines: readonly ListLine[] | null): Placed<Range> | null {
     );
   }
   return { range: [[rows]], where: `${first.where}, rows` };
-}
-
-function keyPart(cell: Cell, where: string): Part {
-  if (cell !== null && typeof cell === 'object')
-    throw new InputError(where, quoted(cell), 'give a text or a number');
-  return { value: cell ?? '', where };
-}
-
-function readLabels(cells: Placed<Range> | null): readonly Part[] {
-  if (cells === null) return [];
-  const { range, where } = cells;
-  const line = lineOfCells(range, where);
-  return line.map((cell, i) =>
-    keyPart(cell, line.length === 1 ? where : `${where}, cell ${i + 1}`),
-  );
 }
 
 /**
@@ -226,18 +172,5 @@ function refuseEqualLabels(
       );
     }
     seen.add(text);
-  }
-}
-
-/** Names the argument in a complaint about the seed or the label. */
-function placed<T>(where: string, what: string, read: () => T): T {
-  try {
-    return read();
-  } catch (error) {
-    if (error instanceof InputError && error.where === what) {
-      const found = /^"\s*" counts/.test(error.found) ? 'it is blank' : error.found;
-      throw new InputError(where, found, error.expected);
-    }
-    throw error;
   }
 }
