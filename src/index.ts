@@ -8,6 +8,8 @@ export { draw } from './worksheet/draw';
 export { envelope } from './worksheet/envelope';
 export { expect } from './worksheet/expect';
 export { fromBins, fromData, fromPercentiles } from './worksheet/histogram';
+export { pick } from './worksheet/pick';
 export { profile } from './worksheet/profile';
 export { proposals } from './worksheet/proposals';
 export { above, below, quantile } from './worksheet/shares';
+export { thin } from './worksheet/thin';

@@ -16,9 +16,11 @@ import {
   fromData,
   fromPercentiles,
   InputError,
+  pick,
   profile,
   proposals,
   quantile,
+  thin,
 } from '../../src/index';
 import type { Range } from '../../src/index';
 import metadata from './functions.json';
@@ -73,6 +75,10 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     [density = null, limits = null, rows = null, seed = null, label = null, table = null],
     givens,
   ) => cases(density, limits, rows, seed, label, table, givens),
+  PICK: ([table = null, weights = null, rows = null, seed = null, label = null]) =>
+    pick(table, weights, rows, seed, label),
+  THIN: ([table = null, weights = null, seed = null, label = null, bound = null]) =>
+    thin(table, weights, seed, label, bound),
   BLEND: ([shares = null], shapes) => blend(shares, shapes),
 };
 

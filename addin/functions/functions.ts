@@ -237,3 +237,41 @@ export function cases(
 ): any[][] {
   return answer('CASES', [density, limits, rows, seed, label, cases], givens);
 }
+
+/**
+ * Picks whole rows of a table at random, such as past seasons, each with a chance in proportion to its weight; a row can come more than once. The table's heading row if it has one, then the picked rows with their texts and numbers as they stand.
+ * @customfunction PICK
+ * @param table The rows to pick from, with or without a heading row. A blank counts as 0.
+ * @param weights One number of 0 or more for each row, in any unit: only proportions count. A row of weight 0 is never picked.
+ * @param rows How many picks, 1 to 1048575, or two cells: first row and last row.
+ * @param seed Any text or number except blank and 0. The same seed gives the same picks.
+ * @param label Name of the picks. Each label has its own random numbers.
+ */
+export function pick(
+  table: any[][],
+  weights: any[][],
+  rows: any[][],
+  seed: any[][],
+  label: any[][],
+): any[][] {
+  return answer('PICK', [table, weights, rows, seed, label], null);
+}
+
+/**
+ * Keeps each row of a table with the chance weight divided by bound, which turns draws of one view into draws of another. A heading row, then the rows that survive, the number of the row in the table before them. With a bound given, new rows at the end never change which earlier rows survive; without one the survivors depend on the largest weight.
+ * @customfunction THIN
+ * @param table The rows to thin, with or without a heading row. A blank counts as 0.
+ * @param weights One number of 0 or more for each row, in any unit. A row of weight 0 never survives, a row whose weight is the bound always does.
+ * @param seed Any text or number except blank and 0. The same seed keeps the same rows.
+ * @param label Name of the thinning. Each label has its own random numbers, apart from those of draws.
+ * @param bound A number that no weight exceeds, in the unit of the weights. Left out: the largest weight.
+ */
+export function thin(
+  table: any[][],
+  weights: any[][],
+  seed: any[][],
+  label: any[][],
+  bound?: any[][],
+): any[][] {
+  return answer('THIN', [table, weights, seed, label, bound], null);
+}

@@ -7,8 +7,11 @@
  * |------|------------------------------|--------------------------|
  * | 0    | row pair, floor(row / 2)     | row                      |
  * | 1    | 0                            | attempt                  |
- * | 2    | 0, "first"                   | 1, "further"             |
+ * | 2    | purpose 0, "first"           | purpose 1, "further"     |
  * | 3    | method number                | method number            |
+ *
+ * Purposes 2, "pick", and 3, "thin", hold one number a row, laid out as the first one: rows that
+ * are picked or thinned do not share the numbers of draws under the same seed and label.
  *
  * A first block serves two rows: its words 0, 1 the even row, its words 2, 3 the odd one. A
  * further block gives the pair u (words 0, 1) and v (words 2, 3) of one attempt: attempt k ≥ 1
@@ -20,10 +23,10 @@
 import type { Key } from './key';
 import { fillFractions, fraction, philox4x32 } from './philox';
 
-const FIRST = 0;
-const FURTHER = 1;
+/** What the numbers serve: word 2 of the counter. */
+export const PURPOSE = { first: 0, further: 1, pick: 2, thin: 3 } as const;
 
-/** The numbers of one key; holds no position, so calls may come in any order. */
+/** The numbers of one key, first ones for one purpose; holds no position, so calls may come in any order. */
 export class RowStream {
   private readonly k0: number;
   private readonly k1: number;
@@ -33,6 +36,7 @@ export class RowStream {
   constructor(
     key: Key,
     private readonly method = 0,
+    private readonly purpose: number = PURPOSE.first,
   ) {
     [this.k0, this.k1] = key;
   }
@@ -46,7 +50,7 @@ export class RowStream {
     if (count > 0 && firstRow & 1) out[filled++] = this.first(firstRow);
     const pairs = (count - filled) >>> 1;
     const pair = (firstRow + filled) >>> 1;
-    fillFractions(pair, FIRST, this.method, this.k0, this.k1, out, filled, pairs);
+    fillFractions(pair, this.purpose, this.method, this.k0, this.k1, out, filled, pairs);
     filled += 2 * pairs;
     if (filled < count) out[filled] = this.first(firstRow + filled);
   }
@@ -57,7 +61,7 @@ export class RowStream {
    */
   further(row: number, attempt: number, out: Float64Array): void {
     const { block } = this;
-    philox4x32(row, attempt, FURTHER, this.method, this.k0, this.k1, block);
+    philox4x32(row, attempt, PURPOSE.further, this.method, this.k0, this.k1, block);
     out[0] = fraction(block[0]!, block[1]!);
     out[1] = fraction(block[2]!, block[3]!);
   }
@@ -67,7 +71,7 @@ export class RowStream {
    * is moved there by minimizers, as a new one for each call, which engines optimize badly.)
    */
   private first(row: number): number {
-    fillFractions(row >>> 1, FIRST, this.method, this.k0, this.k1, this.pair, 0, 1);
+    fillFractions(row >>> 1, this.purpose, this.method, this.k0, this.k1, this.pair, 0, 1);
     return this.pair[row & 1]!;
   }
 }

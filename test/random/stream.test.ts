@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { keyOf } from '../../src/random/key';
 import type { Key } from '../../src/random/key';
 import { fraction, philox4x32 } from '../../src/random/philox';
-import { RowStream } from '../../src/random/stream';
+import { PURPOSE, RowStream } from '../../src/random/stream';
 
 const LAST_ROW = 1048575;
 const KEY = keyOf('plan-2027', 'harvest');
@@ -48,6 +48,17 @@ describe('RowStream.fillFirst', () => {
       }),
       { seed: 11, numRuns: 1000 },
     );
+  });
+
+  it('fillFirst(row, …) for a purpose is block (floor(row / 2), 0, purpose, method) [law]', () => {
+    expect(new Set(Object.values(PURPOSE)).size).toBe(Object.values(PURPOSE).length);
+    for (const purpose of [PURPOSE.first, PURPOSE.pick, PURPOSE.thin]) {
+      const out = new Float64Array(9);
+      new RowStream(KEY, 3, purpose).fillFirst(6, out, 9);
+      out.forEach((value, i) => {
+        expect(value).toBe(fractions([(6 + i) >> 1, 0, purpose, 3], KEY)[i % 2]);
+      });
+    }
   });
 
   it('fillFirst(1, n) equals its pieces, whatever their sizes [law]', () => {

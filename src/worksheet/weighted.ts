@@ -1,0 +1,59 @@
+/** A table whose rows have weights: what PICK and THIN take. */
+import type { Cell, Range } from '../density/cells';
+import { given, passErrors } from '../density/cells';
+import { InputError } from '../errors';
+import { numberLine } from './numbers';
+
+export const TABLE = 'table (argument 1)';
+export const WEIGHTS = 'weights (argument 2)';
+
+export interface WeightedTable {
+  /** The row above the rows with weights; null without one. */
+  readonly heading: readonly Cell[] | null;
+  readonly rows: Range;
+  readonly weights: readonly number[];
+  /** The place of the i-th weight, for messages. */
+  readonly placeOf: (i: number) => string;
+}
+
+/**
+ * Reads the two; the table has a heading row if it has one row more than there are weights.
+ * @throws {InputError} when they do not fit, for text or a negative number among the weights, and
+ * when all are 0.
+ */
+export function readWeighted(table: Range | null, weights: Range | null): WeightedTable {
+  const own = given(table);
+  if (own === null) throw new InputError(TABLE, 'it is missing', 'give a range of rows');
+  passErrors(own);
+  const { numbers, placeOf } = numberLine(weights, WEIGHTS, 'give one weight for each row');
+  const nHeadings = own.length - numbers.length;
+  if (nHeadings !== 0 && nHeadings !== 1) {
+    throw new InputError(
+      WEIGHTS,
+      `${counted(numbers.length, 'weight')} for a table of ${counted(own.length, 'row')}`,
+      'give one weight for each row, or for each row below its heading',
+    );
+  }
+  const negative = numbers.findIndex((weight) => weight < 0);
+  if (negative >= 0) {
+    throw new InputError(
+      placeOf(negative),
+      `${numbers[negative]} is negative`,
+      'give weights of 0 or more',
+    );
+  }
+  if (!numbers.some((weight) => weight > 0))
+    throw new InputError(WEIGHTS, 'all of them are 0', 'give at least one weight above 0');
+  // A blank is 0, as everywhere: some hosts hand it over as 0.
+  const rows = own.map((row) => row.map((cell) => (cell === null || cell === '' ? 0 : cell)));
+  return {
+    heading: nHeadings === 1 ? own[0]! : null,
+    rows: rows.slice(nHeadings),
+    weights: numbers,
+    placeOf,
+  };
+}
+
+function counted(n: number, noun: string): string {
+  return `${n} ${noun}${n === 1 ? '' : 's'}`;
+}
