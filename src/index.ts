@@ -5,6 +5,7 @@ export { acceptance } from './worksheet/acceptance';
 export { blend } from './worksheet/blend';
 export { cases } from './worksheet/cases';
 export { draw } from './worksheet/draw';
+export { each } from './worksheet/each';
 export { envelope } from './worksheet/envelope';
 export { expect } from './worksheet/expect';
 export { fromBins, fromData, fromPercentiles } from './worksheet/histogram';

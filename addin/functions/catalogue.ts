@@ -10,6 +10,7 @@ import {
   blend,
   cases,
   draw,
+  each,
   envelope,
   expect,
   fromBins,
@@ -75,6 +76,8 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     [density = null, limits = null, rows = null, seed = null, label = null, table = null],
     givens,
   ) => cases(density, limits, rows, seed, label, table, givens),
+  EACH: ([density = null, limits = null, seed = null, label = null, lines = null], givens) =>
+    each(density, limits, seed, label, lines, givens),
   PICK: ([table = null, weights = null, rows = null, seed = null, label = null]) =>
     pick(table, weights, rows, seed, label),
   THIN: ([table = null, weights = null, seed = null, label = null, bound = null]) =>

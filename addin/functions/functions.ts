@@ -239,6 +239,27 @@ export function cases(
 }
 
 /**
+ * Draws one value for each line of conditions, such as days in cold store given the harvest of the same row. Line i is row i of DRAW with that line's values, so columns that are drawn from one another stay paired row by row. In the unit of x.
+ * @customfunction EACH
+ * @param density What is likely under given conditions: a formula in x and names, a table of points (x and height), or a block of two columns that names density, from, to, seed, label and constants.
+ * @param limits Two cells, from and to, in the unit of x, or names of givens. A table has its own ends, a block may name from and to.
+ * @param seed Any text or number except blank and 0. Needed unless a block has it.
+ * @param label Name of the quantity. Each label has its own random numbers. Needed unless a block has it.
+ * @param lines A heading row of names (of givens, or from and to for the limits), then one line of values for each draw. At most 20000 different lines; equal ones count once.
+ * @param givens Values for the names in the formula that are the same in all lines: two columns, name and value.
+ */
+export function each(
+  density: any[][],
+  limits?: any[][],
+  seed?: any[][],
+  label?: any[][],
+  lines?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('EACH', [density, limits, seed, label, lines], givens);
+}
+
+/**
  * Picks whole rows of a table at random, such as past seasons, each with a chance in proportion to its weight; a row can come more than once. The table's heading row if it has one, then the picked rows with their texts and numbers as they stand.
  * @customfunction PICK
  * @param table The rows to pick from, with or without a heading row. A blank counts as 0.

@@ -152,6 +152,7 @@ export function readFamily(
     const block = readBlock(range, places.density);
     const { shape, sources } = blockMember(block, places.density, own, shared);
     const names = block.givens.map(({ name }) => name);
+    namedGivens(own, blockValues(block, places.density), shared, AS_GIVEN);
     return {
       ...common,
       ...known(names, sources),
@@ -160,6 +161,7 @@ export function readFamily(
     };
   }
   if (isPointTable(range)) {
+    namedGivens(own, [], shared, AS_GIVEN);
     const table = readTable(range, places.density);
     return {
       ...common,
@@ -172,6 +174,7 @@ export function readFamily(
       },
     };
   }
+  namedGivens(own, [], shared, AS_GIVEN);
   const sources = once(() => readLines(range, places.density));
   return {
     ...common,
@@ -227,6 +230,10 @@ interface Member {
   readonly shape: (overrides: Overrides) => FormulaShape;
 }
 
+function blockValues({ givens }: Block, where: string): readonly NamedValue[] {
+  return givens.map(({ name, value }) => ({ name, value, where }));
+}
+
 /** The shapes of a block, or of a line of a list, whose place is `where`. */
 function blockMember(
   block: Block,
@@ -239,7 +246,7 @@ function blockMember(
     const formula = block.words.get('density') ?? null;
     return [readFormula(formula, 'Formula', `${where}, density`)];
   });
-  const own = block.givens.map(({ name, value }) => ({ name, value, where }));
+  const own = blockValues(block, where);
   const shape = (overrides: Overrides): FormulaShape => {
     const cells = withEnds(limits ?? blockLimits(block, where, isLine), overrides.ends, where);
     const named = namedGivens(cells, own, shared, overrides);

@@ -42,6 +42,14 @@ export interface Proposal {
   readonly isKept: boolean;
 }
 
+/** Where the numbers of draws 0, 1, 2 … come from; multiples of 2^-53 in [0, 1), as of random/stream.ts. */
+export interface NumberSource {
+  /** Writes the first numbers of draws from … from + count − 1 to out[0 … count − 1]. */
+  fillFirst(from: number, out: Float64Array, count: number): void;
+  /** Writes u and v of an attempt of draw i to out[0] and out[1]. */
+  further(i: number, attempt: number, out: Float64Array): void;
+}
+
 const CHUNK = 4096;
 /** At an acceptance of 0.01 a row needs this many with a chance far below 10^-1000. */
 const MAX_ATTEMPTS = 1_000_000;
@@ -74,21 +82,33 @@ export class Drawer {
   /** Rows `first` … `first + n − 1` under a key. @throws {Error} on a breach, which no proof allows. */
   column(key: Key, first: number, n: number, method = 0): Column {
     const stream = new RowStream(key, method);
+    return this.draws(
+      {
+        fillFirst: (from, out, count) => stream.fillFirst(first + from, out, count),
+        further: (i, attempt, out) => stream.further(first + i, attempt, out),
+      },
+      n,
+    );
+  }
+
+  /** n draws by numbers of the caller's, each draw by its own. @throws {Error} on a breach. */
+  draws(source: NumberSource, n: number): Column {
     const values = new Float64Array(n);
-    const numbers = new Float64Array(CHUNK);
-    const open = new Int32Array(CHUNK);
+    const chunk = Math.min(CHUNK, n);
+    const numbers = new Float64Array(chunk);
+    const open = new Int32Array(chunk);
     this.nearTies = 0;
     let proposals = n;
     let settledAtOnce = 0;
     let longestWait = n > 0 ? 1 : 0;
     for (let done = 0; done < n; done += CHUNK) {
       const size = Math.min(CHUNK, n - done);
-      stream.fillFirst(first + done, numbers, size);
+      source.fillFirst(done, numbers, size);
       const nOpen = this.settleFirst(numbers, size, values, done, open);
       settledAtOnce += size - nOpen;
       for (let k = 0; k < nOpen; k++) {
         const at = open[k]!;
-        const wait = this.finish(stream, first + done + at, numbers[at]!, values, done + at);
+        const wait = this.finish(source, done + at, numbers[at]!, values);
         proposals += wait - 1;
         if (wait > longestWait) longestWait = wait;
       }
@@ -147,26 +167,20 @@ export class Drawer {
     return made;
   }
 
-  /** Finishes a row whose first number u fell into a gap or a hat; returns the proposals it took. */
-  private finish(
-    stream: RowStream,
-    row: number,
-    u: number,
-    values: Float64Array,
-    at: number,
-  ): number {
+  /** Finishes draw i, whose first number u fell into a gap or a hat; returns the proposals it took. */
+  private finish(source: NumberSource, i: number, u: number, values: Float64Array): number {
     const proposal = this.proposal;
-    stream.further(row, 0, this.pair);
+    source.further(i, 0, this.pair);
     this.propose(u);
     for (let attempt = 0; attempt < MAX_ATTEMPTS; attempt++) {
       if (this.isAccepted(this.pair[1]!)) {
-        values[at] = proposal.x;
+        values[i] = proposal.x;
         return attempt + 1;
       }
-      stream.further(row, attempt + 1, this.pair);
+      source.further(i, attempt + 1, this.pair);
       this.propose(this.pair[0]!);
     }
-    throw bug(`row ${row} found no draw in ${MAX_ATTEMPTS} attempts`);
+    throw bug(`draw ${i} found no place in ${MAX_ATTEMPTS} attempts`);
   }
 
   /** The proposal at hand: its place, and the gap or hat that decides on it (−1: none has to). */

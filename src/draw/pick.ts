@@ -29,9 +29,9 @@ export class Picker {
 
   /** Weights of 0 or more, one of them above 0. */
   constructor(private readonly weights: readonly number[]) {
-    this.rows = Int32Array.from(weights.flatMap((weight, i) => (weight > 0 ? [i] : [])));
+    this.rows = positive(weights);
     if (this.rows.length === 0) throw bug('no weight is above 0');
-    this.starts = startsOf(Array.from(this.rows, (i) => weights[i]!));
+    this.starts = startsOf(this.rows, weights);
     this.cells = cellsOf(this.starts);
   }
 
@@ -62,22 +62,33 @@ export class Picker {
   }
 }
 
-/** Where the running shares of positive weights start, on the grid. */
-function startsOf(weights: readonly number[]): Float64Array {
+function positive(weights: readonly number[]): Int32Array {
+  const rows = new Int32Array(weights.length);
+  let n = 0;
+  weights.forEach((weight, i) => {
+    if (weight > 0) rows[n++] = i;
+  });
+  return rows.slice(0, n);
+}
+
+/** Where the running shares of rows with positive weights start, on the grid. */
+function startsOf(rows: Int32Array, weights: readonly number[]): Float64Array {
+  const n = rows.length;
   const largest = weights.reduce((a, b) => Math.max(a, b));
   const scale = largest > MAX_UNSCALED ? powerOfTwo(-30) : 1;
-  const sums = new Float64Array(weights.length + 1);
+  const starts = new Float64Array(n + 1);
   let [sum, lost] = [0, 0];
-  weights.forEach((weight, i) => {
-    const term = weight * scale;
+  for (let i = 0; i < n; i++) {
+    const term = weights[rows[i]!]! * scale;
     const next = sum + term;
     lost += sum >= term ? sum - next + term : term - next + sum;
     sum = next;
     // What was lost is itself rounded; the running sum must not fall for it.
-    sums[i + 1] = Math.max(sums[i]!, sum + lost);
-  });
-  const total = sums[weights.length]!;
-  return sums.map((below) => Math.round((below / total) * GRID) / GRID);
+    starts[i + 1] = Math.max(starts[i]!, sum + lost);
+  }
+  const total = starts[n]!;
+  for (let i = 1; i <= n; i++) starts[i] = Math.round((starts[i]! / total) * GRID) / GRID;
+  return starts;
 }
 
 function cellsOf(starts: Float64Array): Int32Array {

@@ -16,5 +16,9 @@ export function survivors(
 ): readonly number[] {
   const numbers = new Float64Array(weights.length);
   new RowStream(key, method, PURPOSE.thin).fillFirst(1, numbers, weights.length);
-  return weights.flatMap((weight, i) => (numbers[i]! < weight / bound ? [i] : []));
+  const kept: number[] = [];
+  weights.forEach((weight, i) => {
+    if (numbers[i]! < weight / bound) kept.push(i);
+  });
+  return kept;
 }

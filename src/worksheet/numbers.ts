@@ -19,7 +19,13 @@ export function numberLine(range: Range | null, where: string, expected: string)
   const unit = own.length === 1 ? 'column' : 'row';
   const placeOf = (i: number): string =>
     cells.length === 1 ? where : `${where}, ${unit} ${i + first + 1}`;
-  const numbers = cells.slice(first).map((cell, i) => numberIn(cell, placeOf(i)));
+  const numbers: number[] = [];
+  for (let i = first; i < cells.length; i++) {
+    const cell = cells[i]!;
+    // A place is a new text: for long lines it is made only where it is needed.
+    const isPlain = typeof cell === 'number' && cell !== 0;
+    numbers.push(isPlain ? cell : numberIn(cell, placeOf(i - first)));
+  }
   return { numbers, placeOf };
 }
 

@@ -1,5 +1,5 @@
 /** PICK: whole rows of a table, picked with given weights. */
-import type { Range } from '../density/cells';
+import type { Cell, Range } from '../density/cells';
 import { givenUnlessZero, passErrors } from '../density/cells';
 import { Picker } from '../draw/pick';
 import { readKey } from './keys';
@@ -28,6 +28,9 @@ export function pick(
   if (wanted !== null) passErrors(wanted);
   const { firstRow, nRows } = readRows({ range: wanted, where: ROWS });
   const picks = new Picker(own).picks(readKey(seed, label, PLACES), firstRow, nRows);
-  const picked = Array.from(picks, (i) => from[i]!);
-  return heading === null ? picked : [heading, ...picked];
+  const nHeadings = heading === null ? 0 : 1;
+  const spilled = new Array<readonly Cell[]>(nHeadings + nRows);
+  if (heading !== null) spilled[0] = heading;
+  for (let k = 0; k < nRows; k++) spilled[nHeadings + k] = from[picks[k]!]!;
+  return spilled;
 }

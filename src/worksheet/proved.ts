@@ -58,6 +58,11 @@ function remember<T extends Proved | Column>(
   return made.value;
 }
 
+/** A drawer that is not kept, for one of so many shapes that they would crowd out all others. @throws {InputError} as prove. */
+export function drawerOf(shape: Shape): Drawer {
+  return new Drawer(envelopeOf(shape).envelope);
+}
+
 /** The proof of a shape. @throws {InputError} when it cannot be proved. */
 export function prove(shape: Shape): Proved {
   const key = canonical(shape);

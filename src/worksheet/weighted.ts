@@ -44,14 +44,19 @@ export function readWeighted(table: Range | null, weights: Range | null): Weight
   }
   if (!numbers.some((weight) => weight > 0))
     throw new InputError(WEIGHTS, 'all of them are 0', 'give at least one weight above 0');
-  // A blank is 0, as everywhere: some hosts hand it over as 0.
-  const rows = own.map((row) => row.map((cell) => (cell === null || cell === '' ? 0 : cell)));
   return {
     heading: nHeadings === 1 ? own[0]! : null,
-    rows: rows.slice(nHeadings),
+    rows: own.slice(nHeadings).map(withoutBlanks),
     weights: numbers,
     placeOf,
   };
+}
+
+/** A blank is 0, as everywhere: some hosts hand it over as 0. */
+function withoutBlanks(row: readonly Cell[]): readonly Cell[] {
+  return row.includes(null) || row.includes('')
+    ? row.map((cell) => (cell === null || cell === '' ? 0 : cell))
+    : row;
 }
 
 function counted(n: number, noun: string): string {
