@@ -13,4 +13,5 @@ export { pick } from './worksheet/pick';
 export { profile } from './worksheet/profile';
 export { proposals } from './worksheet/proposals';
 export { above, below, quantile } from './worksheet/shares';
+export { stratified } from './worksheet/stratified';
 export { thin } from './worksheet/thin';

@@ -21,6 +21,7 @@ import {
   profile,
   proposals,
   quantile,
+  stratified,
   thin,
 } from '../../src/index';
 import type { Range } from '../../src/index';
@@ -78,6 +79,8 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
   ) => cases(density, limits, rows, seed, label, table, givens),
   EACH: ([density = null, limits = null, seed = null, label = null, lines = null], givens) =>
     each(density, limits, seed, label, lines, givens),
+  STRATIFIED: ([density = null, limits = null, rows = null, seed = null, label = null], givens) =>
+    stratified(density, limits, rows, seed, label, givens),
   PICK: ([table = null, weights = null, rows = null, seed = null, label = null]) =>
     pick(table, weights, rows, seed, label),
   THIN: ([table = null, weights = null, seed = null, label = null, bound = null]) =>

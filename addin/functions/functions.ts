@@ -260,6 +260,27 @@ export function each(
 }
 
 /**
+ * Draws values as DRAW does, but spread evenly over the density, so that averages need far fewer rows. Each row alone is exactly distributed; rows are not independent, so intervals worked out from them are too wide, and the column as a whole changes with the number of rows. In the unit of x.
+ * @customfunction STRATIFIED
+ * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to, rows, seed, label and constants.
+ * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param rows How many values, 1 to 1048575. Another number gives another column. Needed unless a block has it.
+ * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
+ * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
+ * @param givens Values for the names in the formula: two columns, name and value.
+ */
+export function stratified(
+  density: any[][],
+  limits?: any[][],
+  rows?: any[][],
+  seed?: any[][],
+  label?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('STRATIFIED', [density, limits, rows, seed, label], givens);
+}
+
+/**
  * Picks whole rows of a table at random, such as past seasons, each with a chance in proportion to its weight; a row can come more than once. The table's heading row if it has one, then the picked rows with their texts and numbers as they stand.
  * @customfunction PICK
  * @param table The rows to pick from, with or without a heading row. A blank counts as 0.

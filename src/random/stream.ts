@@ -11,7 +11,8 @@
  * | 3    | method number                | method number            |
  *
  * Purposes 2, "pick", and 3, "thin", hold one number a row, laid out as the first one: rows that
- * are picked or thinned do not share the numbers of draws under the same seed and label.
+ * are picked or thinned do not share the numbers of draws under the same seed and label. So do
+ * purposes 4, "shuffle", and 5, "shift", for the strata of a stratified column.
  *
  * A first block serves two rows: its words 0, 1 the even row, its words 2, 3 the odd one. A
  * further block gives the pair u (words 0, 1) and v (words 2, 3) of one attempt: attempt k ≥ 1
@@ -24,7 +25,7 @@ import type { Key } from './key';
 import { fillFractions, fraction, philox4x32 } from './philox';
 
 /** What the numbers serve: word 2 of the counter. */
-export const PURPOSE = { first: 0, further: 1, pick: 2, thin: 3 } as const;
+export const PURPOSE = { first: 0, further: 1, pick: 2, thin: 3, shuffle: 4, shift: 5 } as const;
 
 /** The numbers of one key, first ones for one purpose; holds no position, so calls may come in any order. */
 export class RowStream {

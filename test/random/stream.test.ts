@@ -52,7 +52,7 @@ describe('RowStream.fillFirst', () => {
 
   it('fillFirst(row, …) for a purpose is block (floor(row / 2), 0, purpose, method) [law]', () => {
     expect(new Set(Object.values(PURPOSE)).size).toBe(Object.values(PURPOSE).length);
-    for (const purpose of [PURPOSE.first, PURPOSE.pick, PURPOSE.thin]) {
+    for (const purpose of [0, 2, 3, 4, 5]) {
       const out = new Float64Array(9);
       new RowStream(KEY, 3, purpose).fillFirst(6, out, 9);
       out.forEach((value, i) => {
