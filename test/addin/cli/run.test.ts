@@ -73,6 +73,20 @@ describe('undercurve call', () => {
     FROMPERCENTILES: [[[0.1, 0.9]], [[2, 5]], 0, 9],
     FROMDATA: [[[1], [2], [4], [4.5], [7]]],
     BLEND: [[[0.9, 0.1]], BLOCK, BLOCK],
+    CASES: [
+      BLOCK,
+      null,
+      null,
+      null,
+      null,
+      [
+        ['presses', 'two', 'three'],
+        ['m', 5, 4],
+      ],
+    ],
+    EACH: [BLOCK, null, null, null, [['m'], [3], [4]]],
+    PICK: [[['early'], ['late'], ['none']], [[2], [1], [0]], 5, 'plan-2027', 'harvest'],
+    THIN: [[['early'], ['late'], ['none']], [[1], [1], [0]], 'plan-2027', 'harvest', 1],
   };
 
   test.each(catalogue.map(({ name }) => name))('answers for UNDERCURVE.%s [law]', (name) => {
