@@ -8,6 +8,7 @@
 import { InputError } from '../errors';
 import * as I from '../numeric/interval';
 import { cited, decimalComma, isDecimalComma, place } from './check';
+import { collectSums } from './collect';
 import type { Given, GivenMap } from './given';
 import type { Value } from './names';
 import { callsItself, nameKey, Scope } from './names';
@@ -83,7 +84,10 @@ class Compiler {
       return this.step(this.body(source.tree), this.outermost);
     });
     const multiply = VOCABULARY.get('*')!.operation!;
-    const root = factors.reduce((a, b) => this.steps.apply(multiply, [a, b]));
+    const root = collectSums(
+      this.steps,
+      factors.reduce((a, b) => this.steps.apply(multiply, [a, b])),
+    );
     const tape = this.steps.tape(root, this.variablePlaces);
     this.checkLength(tape, sources);
     return tape;

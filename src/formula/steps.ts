@@ -13,6 +13,8 @@ export class Steps {
   private readonly all: Step[] = [];
   private readonly known = new Map<string, number>();
   private readonly truths = new Set<number>();
+  /** One operation a name: steps of the same rule then share its code, which is what makes them fast. */
+  private readonly operations = new Map<string, Operation>();
 
   get length(): number {
     return this.all.length;
@@ -40,12 +42,14 @@ export class Steps {
     return this.known.get(key) ?? this.push(NUMBER, [], key, true, value, enclosure);
   }
 
-  apply(operation: Operation, args: readonly number[]): number {
+  apply(wanted: Operation, args: readonly number[]): number {
     const [a = 0, b = a, c = a] = args;
-    if (operation === SUBTRACT && a === b) return this.number(0);
-    const key = `${operation.name}(${args.join()})`;
+    if (wanted === SUBTRACT && a === b) return this.number(0);
+    const key = `${wanted.name}(${args.join()})`;
     const known = this.known.get(key);
     if (known !== undefined) return known;
+    const operation = this.operations.get(wanted.name) ?? wanted;
+    this.operations.set(wanted.name, operation);
     const isConstant = args.every((arg) => this.all[arg]!.isConstant);
     const step =
       (isConstant ? this.fold(operation, a, b, c) : undefined) ??

@@ -18,7 +18,7 @@ const t = I.interval();
 const one = I.interval(1);
 
 /** x^n for a fixed whole n ≠ 0. */
-function wholePower(n: number): Operation {
+export function wholePower(n: number): Operation {
   const raise = (out: Interval, u: Interval, k: number): void => {
     I.power(out, u, Math.abs(k));
     if (k < 0) I.reciprocal(out, out);
