@@ -92,7 +92,7 @@ describe('a list in a formula', () => {
         ],
       ],
     );
-    expect(items.filter(([item]) => String(item).startsWith('given'))).toEqual([
+    expect(items.filter(([item]) => `${item as string}`.startsWith('given'))).toEqual([
       ['given obs', 'list of 3 values from 0 to 6, 1 of them 0 or blank'],
       ['given base', 'function through 2 points'],
     ]);

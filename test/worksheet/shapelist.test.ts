@@ -46,7 +46,7 @@ describe('DRAW of a shape list', () => {
     const order = [3, 1, 5, 0, 2, 4];
     const shuffled = LIST.map((row) => [...order.map((j) => row[j]!), null]);
     const spaced: Range = [
-      shuffled[0]!.map((cell) => (cell === null ? null : ` ${String(cell).toUpperCase()} `)),
+      shuffled[0]!.map((cell) => (cell === null ? null : ` ${(cell as string).toUpperCase()} `)),
       shuffled[1]!,
       shuffled[1]!.map(() => 0),
       ...shuffled.slice(2),
