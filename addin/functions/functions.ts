@@ -9,12 +9,12 @@ import { answer } from './host';
 /**
  * Draws random values that follow the density exactly: one column for each label, the same values until an input changes. In the unit of x.
  * @customfunction DRAW
- * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), a table of points (x and height, straight lines between), or a block of two columns that names density, from, to, rows, seed, label and constants. Heights need no particular unit.
+ * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), a table of points (x and height, straight lines between), a block of two columns that names density, from, to, rows, seed, label and constants, or a list with a heading row (label, density, from, to and so on) and one input a line. Heights need no particular unit.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
  * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
  * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function draw(
   density: any[][],
@@ -32,7 +32,7 @@ export function draw(
  * @customfunction ENVELOPE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function envelope(density: any[][], limits?: any[][], givens?: any[][][]): any[][] {
   return answer('ENVELOPE', [density, limits], givens);
@@ -41,12 +41,12 @@ export function envelope(density: any[][], limits?: any[][], givens?: any[][][])
 /**
  * Tells how the draws were made and whether that went as proved: inputs as read, proof, proposals, acceptance, test of the count, notes. Two columns: item and value.
  * @customfunction ACCEPTANCE
- * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
+ * @param density What is likely: a formula in x, a table of points (x and height), a block of two columns, or a list of one input a line. Give the same cells as to DRAW.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Give the same as to DRAW.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function acceptance(
   density: any[][],
@@ -65,7 +65,7 @@ export function acceptance(
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param count How many points, 2 to 100000. Left out: 201.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function profile(
   density: any[][],
@@ -82,7 +82,7 @@ export function profile(
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param x A number or a range of numbers, in the unit of the density's x.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function below(
   density: any[][],
@@ -99,7 +99,7 @@ export function below(
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param x A number or a range of numbers, in the unit of the density's x.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function above(
   density: any[][],
@@ -117,7 +117,7 @@ export function above(
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param share A fraction from 0 to 1 or a range of them. 0 and 1 give the limits.
  * @param side below or above: on which side of x the share lies. Left out: below.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function quantile(
   density: any[][],
@@ -135,7 +135,7 @@ export function quantile(
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param quantity A formula in x, such as x, x^2, MAX(0,x-60), or x>80 for a chance.
- * @param givens Values for the names in the formula: two columns, name and value.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
 export function expect(
   density: any[][],
