@@ -6,7 +6,7 @@
 import FlatQueue from 'flatqueue';
 import type { Encloser } from '../formula/enclose';
 import * as elementary from '../numeric/elementary';
-import { middle } from '../numeric/float';
+import { looseProductUp, looseSumUp, middle, up } from '../numeric/float';
 
 /** While ln f and ln(f · width) at the peak stay within ± this, doubles serve as they are. */
 const PLAIN = 500;
@@ -32,12 +32,14 @@ export function findExponent(encloser: Encloser, from: number, to: number): numb
 function enclosePeak(encloser: Encloser, from: number, to: number): number | null {
   const queue = new FlatQueue<Stretch>();
   let reached = -Infinity;
-  const reach = (x: number): void => {
-    reached = Math.max(reached, encloser.over(x, x, null, null).logarithm.lo);
+  const reach = (x: number): number => {
+    const { lo, hi } = encloser.over(x, x, null, null).logarithm;
+    reached = Math.max(reached, lo);
+    return hi;
   };
   const consider = (a: number, b: number): void => {
-    reach(middle(a, b));
-    queue.push({ a, b }, -encloser.over(a, b, null, null).logarithm.hi);
+    const m = middle(a, b);
+    queue.push({ a, b }, -boundLogarithm(encloser, a, m, b, reach(m)));
   };
   reach(from);
   reach(to);
@@ -53,4 +55,13 @@ function enclosePeak(encloser: Encloser, from: number, to: number): number | nul
     consider(m, b);
   }
   return reached === -Infinity ? null : reached;
+}
+
+/** An upper bound of ln f over [a, b]: its enclosure, or a bound at the point m inside and its slope. */
+function boundLogarithm(encloser: Encloser, a: number, m: number, b: number, atM: number): number {
+  const { logarithm, logarithmSlope } = encloser.over(a, b, null, null);
+  const steepest = Math.max(Math.abs(logarithmSlope.lo), Math.abs(logarithmSlope.hi));
+  if (!(steepest < Infinity)) return logarithm.hi;
+  const farthest = up(Math.max(m - a, b - m));
+  return Math.min(logarithm.hi, looseSumUp(atM, looseProductUp(steepest, farthest)));
 }

@@ -12,9 +12,10 @@ import type { Interval } from '../numeric/interval';
 import * as I from '../numeric/interval';
 import type { Jet } from '../numeric/jet';
 import * as J from '../numeric/jet';
-import { powerOfTwo } from '../numeric/float';
+import { looseProductUp, looseSumDown, looseSumUp, powerOfTwo, up } from '../numeric/float';
 import { Defined, turningLevel } from './operation';
 import type { Step, Tape } from './tape';
+import { ADD } from './operations/arithmetic';
 import { CHOOSE_BY, EXP } from './vocabulary';
 
 /** ln 2, enclosed. */
@@ -29,6 +30,8 @@ export interface PointValues {
   readonly defined: Uint8Array;
   /** The scaled density at x; entire where it is undefined. */
   readonly density: Interval;
+  /** ln of the unscaled density where it had to be asked; entire otherwise. */
+  readonly logarithm: Interval;
 }
 
 /** A step of the tape that brings a kink, a jump or a domain's end where it passes a level. */
@@ -42,6 +45,8 @@ export interface Enclosure {
   readonly density: Jet;
   /** ln of the unscaled density. */
   readonly logarithm: Interval;
+  /** The slope of that. */
+  readonly logarithmSlope: Interval;
   defined: Defined;
   /** A step that passes its level once inside; null: none is known. */
   turn: Turn | null;
@@ -49,6 +54,7 @@ export interface Enclosure {
 
 const scratch = I.interval();
 const scaled = J.jet();
+const plainLog = J.jet();
 const term = I.interval();
 
 /** Sets out to the jet of ln|u| from the jet of u. */
@@ -93,6 +99,7 @@ export class Encloser {
   private readonly result: Enclosure = {
     density: J.jet(),
     logarithm: I.interval(),
+    logarithmSlope: I.interval(),
     defined: Defined.Everywhere,
     turn: null,
   };
@@ -133,6 +140,7 @@ export class Encloser {
       ),
       defined: new Uint8Array(this.tape.steps.length),
       density: I.interval(),
+      logarithm: I.interval(),
     };
   }
 
@@ -163,6 +171,7 @@ export class Encloser {
   private finishPoint(out: PointValues): void {
     const { root } = this.tape;
     const { density } = out;
+    I.setEntire(out.logarithm);
     if (out.defined[root] !== Defined.Everywhere) {
       I.setEntire(density);
       return;
@@ -170,7 +179,9 @@ export class Encloser {
     I.copy(density, out.values[root]!);
     // Where the direct value overflows or is lost to underflow, the logarithm may still know it.
     if (this.exponent !== 0 || density.hi === Infinity || (density.lo === 0 && density.hi > 0)) {
-      I.copy(density, this.over(out.x, out.x, null, null).density.v);
+      const there = this.over(out.x, out.x, null, null);
+      I.copy(density, there.density.v);
+      I.copy(out.logarithm, there.logarithm);
     }
   }
 
@@ -216,6 +227,9 @@ export class Encloser {
       this.logOf(place, operation.logarithm, p, q, r);
       if (atA && atB && state === Defined.Everywhere) tightenMonotone(out, place, atA, atB);
     }
+    const log = this.logs[this.tape.root]!;
+    if (atA && atB && this.defined[this.tape.root] === Defined.Everywhere)
+      tightenByEnds(log, atA.logarithm, atB.logarithm, b - a);
     return this.finish(mayTurn);
   }
 
@@ -240,9 +254,15 @@ export class Encloser {
       [logs[p] ?? fallback, logs[q] ?? fallback, logs[r] ?? fallback],
       [jets[p]!, jets[q]!, jets[r]!],
     );
-    // A sum with a negative term has no structure to use; its own enclosure still may have a logarithm.
-    if (log.v.hi === Infinity) logarithmOf(log, out);
-    else if (out.v.lo >= 0 && structural !== EXP.logarithm) meetExponential(out, log);
+    if (structural === ADD.logarithm && !I.holds(out.v, 0)) {
+      // 1 + t² is smooth where the logarithm of t² is steep; and a sum with a negative term has no structure to use.
+      logarithmOf(plainLog, out);
+      J.meetJet(log, plainLog);
+    } else if (log.v.hi === Infinity) {
+      logarithmOf(log, out);
+      return;
+    }
+    if (out.v.lo >= 0 && structural !== EXP.logarithm) meetExponential(out, log);
   }
 
   private finish(mayTurn: boolean): Enclosure {
@@ -253,6 +273,7 @@ export class Encloser {
     if (this.exponent === 0) J.copyJet(result.density, this.jets[root]!);
     else this.scaleRoot(result.density, this.jets[root]!, log);
     I.copy(result.logarithm, log.v);
+    I.copy(result.logarithmSlope, log.d);
     result.turn = mayTurn ? this.findTurn() : null;
     return result;
   }
@@ -345,6 +366,21 @@ function tightenMonotone(out: Jet, place: number, atA: PointValues, atB: PointVa
   if (lo >= 0) I.set(term, first.lo, last.hi);
   else I.set(term, last.lo, first.hi);
   I.meet(out.v, term);
+}
+
+/**
+ * Tightens a logarithm of bounded slope by its values at both ends of a stretch: that of
+ * a product of many factors is the sum of theirs, each taken at its own worst otherwise.
+ */
+function tightenByEnds(log: Jet, atA: Interval, atB: Interval, width: number): void {
+  const { lo, hi } = log.d;
+  if (!(lo > -Infinity && hi < Infinity)) return;
+  const climb = looseProductUp(Math.max(0, hi), up(width));
+  const fall = looseProductUp(Math.max(0, -lo), up(width));
+  const most = Math.min(looseSumUp(atA.hi, climb), looseSumUp(atB.hi, fall));
+  const least = Math.max(looseSumDown(atA.lo, -fall), looseSumDown(atB.lo, -climb));
+  I.set(term, least, most);
+  I.meet(log.v, term);
 }
 
 /** The steps whose logarithms the root's logarithm is built from. */

@@ -58,7 +58,7 @@ export class Steps {
     return step;
   }
 
-  /** The number that a step on numbers comes to; nothing where it is undefined or infinite. */
+  /** The number that a step on numbers comes to; nothing where it is undefined, infinite or lost to underflow. */
   private fold(operation: Operation, a: number, b: number, c: number): number | undefined {
     const [u, v, w] = [this.all[a]!, this.all[b]!, this.all[c]!];
     if (!u.enclosure || !v.enclosure || !w.enclosure || operation.isTruth) return undefined;
@@ -67,6 +67,8 @@ export class Steps {
     const out = I.interval();
     operation.enclose(out, u.enclosure, v.enclosure, w.enclosure);
     if (!Number.isFinite(out.lo) || !Number.isFinite(out.hi)) return undefined;
+    // A number lost to underflow keeps its logarithm as a step.
+    if (out.lo !== out.hi && (out.lo === 0 || out.hi === 0)) return undefined;
     const value = out.lo === out.hi ? out.lo : operation.point(u.value, v.value, w.value);
     return this.constant(value, out);
   }

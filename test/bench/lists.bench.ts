@@ -35,7 +35,7 @@ const constants: Range = [
 function table(n: number): Range {
   const rows = Array.from({ length: n }, (_, i): Cell[] => {
     const x = (100 * i) / (n - 1);
-    return [x, 1 + Math.sin(x / 7) + 0.2 * Math.sin(x * 1.7)];
+    return [x, 1.3 + Math.sin(x / 7) + 0.2 * Math.sin(x * 1.7)];
   });
   return [['x', 'base'], ...rows];
 }

@@ -187,6 +187,21 @@ describe('the likelihood of 1,000 values', () => {
   });
 });
 
+describe('a likelihood with heavy tails, too small for doubles', () => {
+  // e^-3000 leaves only the logarithm: its slope must not suffer from values near x, where ln|obs − x| is steep.
+  test('is proved in as few pieces as its logarithm needs [law]', () => {
+    const text = 'EXP(-3000)*PRODUCT((1+((obs-x)/s)^2)^-2)';
+    const { pieces, upperArea, lowerArea, exponent } = proveEnvelope(
+      tapeOf(text, givensOf(60, { s: 1.3 })),
+      0,
+      12,
+    );
+    expect(exponent).toBeLessThan(-4000);
+    expect(lowerArea / upperArea).toBeGreaterThanOrEqual(0.99);
+    expect(pieces.length).toBeLessThan(100);
+  });
+});
+
 describe('what is too much', () => {
   test('says how many operations a list comes to [law]', () => {
     const text = 'PRODUCT(1+1/(1+(obs-x)^2))';
