@@ -109,7 +109,7 @@ describe('a list in a formula', () => {
     ],
     [
       'SUM(obs*{1;2})',
-      'Formula, character 5: arrays of different sizes; use arrays with the same number of elements.',
+      'Formula, character 8: arrays of different sizes; use arrays with the same number of elements.',
     ],
   ])('refuses %s [law]', (text, message) => {
     expect(messageOf(() => tapeOf(text, givensOf(3)))).toBe(message);
