@@ -40,6 +40,11 @@ interface Form {
   readonly rest: Interval;
 }
 
+interface Term {
+  readonly step: number;
+  readonly sign: 1 | -1;
+}
+
 /** Rewrites the long sums that the root needs; returns the new root. */
 export function collectSums(steps: Steps, root: number): number {
   return new Collector(steps, root).collect();
@@ -84,7 +89,8 @@ class Collector {
 
   private countUsers(i: number): void {
     const { a, b, c, nOperands } = this.steps.at(i);
-    for (const operand of new Set([a, b, c].slice(0, nOperands))) {
+    // Both sides of a + a count: a sum that is used twice is not taken apart twice.
+    for (const operand of [a, b, c].slice(0, nOperands)) {
       this.nUsers[operand]!++;
       if (!this.isSum(i)) this.isSummand[operand] = 0;
     }
@@ -100,31 +106,42 @@ class Collector {
     return this.isSum(i) && this.nUsers[i] === 1 && this.isSummand[i] === 1;
   }
 
-  /** A step on its operands as they now stand, sums inside sums included. */
+  /** A step on its operands as they now stand, the sums inside it first. */
   private rebuilt(i: number): number {
-    const { operation, a, b, c, nOperands } = this.steps.at(i);
-    const args = [a, b, c].slice(0, nOperands);
-    return this.steps.apply(
-      operation,
-      args.map((arg) => (this.isInner(arg) ? this.rebuilt(arg) : this.moved[arg]!)),
-    );
+    for (const inner of this.taken(i).inner.sort((a, b) => a - b)) this.rebuild(inner);
+    return this.rebuild(i);
   }
 
-  /** The terms of a sum with their signs. */
-  private terms(i: number, sign: 1 | -1, out: { step: number; sign: 1 | -1 }[]): void {
-    const { operation, a, b } = this.steps.at(i);
-    for (const [operand, s] of [
-      [a, sign],
-      [b, operation === ADD ? sign : sign === 1 ? -1 : 1],
-    ] as const) {
-      if (this.isInner(operand)) this.terms(operand, s, out);
-      else out.push({ step: operand, sign: s });
+  private rebuild(i: number): number {
+    const { operation, a, b, c, nOperands } = this.steps.at(i);
+    const args = [a, b, c].slice(0, nOperands);
+    return (this.moved[i] = this.steps.apply(
+      operation,
+      args.map((arg) => this.moved[arg]!),
+    ));
+  }
+
+  /** A sum taken apart: its terms with their signs, and the sums inside it. Without recursion. */
+  private taken(sum: number): { terms: Term[]; inner: number[] } {
+    const terms: Term[] = [];
+    const inner: number[] = [];
+    const waiting: Term[] = [{ step: sum, sign: 1 }];
+    for (let next = waiting.pop(); next; next = waiting.pop()) {
+      const { step, sign } = next;
+      if (step !== sum && !this.isInner(step)) {
+        terms.push(next);
+        continue;
+      }
+      if (step !== sum) inner.push(step);
+      const { operation, a, b } = this.steps.at(step);
+      waiting.push({ step: b, sign: operation === ADD ? sign : sign === 1 ? -1 : 1 });
+      waiting.push({ step: a, sign });
     }
+    return { terms, inner };
   }
 
   private collected(i: number): number | undefined {
-    const terms: { step: number; sign: 1 | -1 }[] = [];
-    this.terms(i, 1, terms);
+    const { terms } = this.taken(i);
     if (terms.length < LONG) return undefined;
     this.restart(new Map());
     const first = this.added(terms);
@@ -141,9 +158,10 @@ class Collector {
   private readonly rests: Interval[] = [];
 
   /** The sum of all terms' parts, one a base; the constants go to `rests`. */
-  private added(terms: readonly { step: number; sign: 1 | -1 }[]): Part[] {
+  private added(terms: readonly Term[]): Part[] {
     const byBase = new Map<number, { squares: Interval[]; slopes: Interval[] }>();
     this.rests.length = 0;
+    this.findForms(terms);
     for (const { step, sign } of terms) {
       const { parts, rest } = times(this.form(step), I.interval(sign));
       this.rests.push(rest);
@@ -199,12 +217,22 @@ class Collector {
     return this.steps.constant(lo === hi ? lo : lo / 2 + hi / 2, enclosure);
   }
 
+  /** Finds the forms of terms and of what they are made of, the innermost first. */
+  private findForms(terms: readonly Term[]): void {
+    const last = terms.reduce((most, { step }) => Math.max(most, step), 0);
+    const isPart = new Uint8Array(last + 1);
+    for (const { step } of terms) isPart[step] = 1;
+    for (let i = last; i >= 0; i--) {
+      const { a, b, c, nOperands } = this.steps.at(i);
+      if (isPart[i]) for (const operand of [a, b, c].slice(0, nOperands)) isPart[operand] = 1;
+    }
+    for (let i = 0; i <= last; i++)
+      if (isPart[i] && !this.forms.has(i))
+        this.forms.set(i, this.findForm(i) ?? this.itself(this.moved[i]!));
+  }
+
   private form(i: number): Form {
-    const known = this.forms.get(i);
-    if (known) return known;
-    const found = this.findForm(i) ?? this.itself(this.moved[i]!);
-    this.forms.set(i, found);
-    return found;
+    return this.forms.get(i)!;
   }
 
   /** u is itself one part: u = (u − centre) + centre. */

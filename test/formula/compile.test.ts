@@ -203,8 +203,8 @@ describe('limits of the work', () => {
   };
 
   it('2^13 steps are compiled and 2^14 refused [law]', () => {
-    expect(nSteps(doubling(13, 'v+x'))).toBe(8192);
-    expect(refusalOf(doubling(14, 'v+x'))).toBe(
+    expect(nSteps(doubling(13, 'v*x'))).toBe(8192);
+    expect(refusalOf(doubling(14, 'v*x'))).toBe(
       'Formula: 16384 operations on x, each element of a list counted; use at most 10000: shorten the formula or the lists, or work out beforehand what does not depend on x.',
     );
   });

@@ -75,7 +75,7 @@ const REFUSED: Record<string, readonly (readonly [Given, string])[]> = {
     ],
     [
       { density: 'x+1', limits: null },
-      'Density: it is negative at x = -4.61169e+18 (-4.61169e+18); heights must be 0 or more; give limits, or use MAX(0, …) if that is meant.',
+      'Density: it is negative at x = -3.22818e+19 (-3.22818e+19); heights must be 0 or more; give limits, or use MAX(0, …) if that is meant.',
     ],
     [
       { density: 'x-x' },

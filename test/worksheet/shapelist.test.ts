@@ -273,7 +273,7 @@ describe('a mistake in a shape list names its line', () => {
     [
       'a seed nowhere',
       small(['to', 'from', 'rows'], ['a', '1', 1, 0, 5]),
-      'seed (argument 4): "" counts as blank; give a text or a number other than 0, so that the draws can be rebuilt.',
+      'seed (argument 4): it is blank; give a text or a number other than 0, so that the draws can be rebuilt.',
     ],
   ] as [string, Range, string][])('%s [law]', (_, list, message) => {
     const seed = message.startsWith('seed') ? null : SEED;
