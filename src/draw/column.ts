@@ -10,8 +10,9 @@
  */
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
-import { heightOn, placeOn } from '../envelope/hat';
+import { placeOn } from '../envelope/hat';
 import { bug } from '../errors';
+import { Encloser } from '../formula/enclose';
 import { next, prev } from '../numeric/float';
 import * as I from '../numeric/interval';
 import { RowStream } from '../random/stream';
@@ -71,12 +72,16 @@ const LINES_STRIDE = 16;
 /** Draws columns from one envelope. */
 export class Drawer {
   private readonly guide: Guide;
+  /** For each hat at a pole the density by the distance from it. */
+  private readonly near: readonly (Encloser | null)[];
   private readonly density = I.interval();
   private readonly pair = new Float64Array(2);
   private nearTies = 0;
 
   constructor(private readonly envelope: Envelope) {
     this.guide = guideOf(envelope);
+    const { hats, exponent } = envelope;
+    this.near = hats.map(({ near }) => near && new Encloser(near, exponent));
   }
 
   /** Rows `first` … `first + n − 1` under a key. @throws {Error} on a breach, which no proof allows. */
@@ -184,7 +189,7 @@ export class Drawer {
   }
 
   /** The proposal at hand: its place, and the gap or hat that decides on it (−1: none has to). */
-  private readonly proposal = { x: NaN, height: NaN, gap: -1 };
+  private readonly proposal = { x: NaN, t: NaN, height: NaN, gap: -1 };
   private readonly one = new Float64Array(1);
   private readonly oneValue = new Float64Array(1);
   private readonly oneOpen = new Int32Array(1);
@@ -212,16 +217,18 @@ export class Drawer {
       // Nearer to the pole than doubles are to each other: the nearest one stands for it.
       this.proposal.x = hat.direction > 0 ? next(hat.origin) : prev(hat.origin);
     }
-    // Near a pole the rounding of x is no small part of the distance: the hat is taken where the density is.
-    this.proposal.height = heightOn(hat, this.proposal.x);
   }
 
   private isAccepted(v: number): boolean {
-    const { x, gap, height } = this.proposal;
+    const { x, t, gap, height } = this.proposal;
     if (gap < 0) return true;
-    return gap < this.envelope.pieces.length
-      ? this.isUnderGap(x, gap, v)
-      : this.isUnder(x, v * height, height * (1 + HAT_ROUNDING));
+    const { pieces, densityAt } = this.envelope;
+    if (gap < pieces.length) return this.isUnderGap(x, gap, v);
+    const near = this.near[gap - pieces.length]!;
+    // Near a pole the rounding of x is no small part of the distance, which therefore decides.
+    if (near) near.densityAt(t, this.density);
+    else densityAt!(x, this.density);
+    return this.isUnder(x, v * height, height * (1 + HAT_ROUNDING), near !== null);
   }
 
   /** Whether the height at share v of the gap lies under the density at x. */
@@ -230,7 +237,8 @@ export class Drawer {
     const height = lower + v * gap;
     const settled = this.settleInside(x, piece, height);
     if (settled !== 0) return settled > 0;
-    return this.isUnder(x, height, (lower + gap) * (1 + LINE_ROUNDING));
+    this.envelope.densityAt!(x, this.density);
+    return this.isUnder(x, height, lower + gap + LINE_ROUNDING * this.sizeOf(piece));
   }
 
   /**
@@ -269,6 +277,13 @@ export class Drawer {
     };
   }
 
+  /** A bound of what goes into a line's value: its rounding is relative to that. */
+  private sizeOf(piece: number): number {
+    const { lines } = this.guide;
+    const at = piece * LINES_STRIDE;
+    return lines[at + 2]! + Math.abs(lines[at + 3]!) + lines[at + 4]! + Math.abs(lines[at + 5]!);
+  }
+
   /** The height that share v stands for at the proposal at hand; NaN under the lower line. */
   private heightAtShare(v: number): number {
     const { x, gap, height } = this.proposal;
@@ -278,13 +293,13 @@ export class Drawer {
     return lines.lower + v * lines.gap;
   }
 
-  private isUnder(x: number, height: number, upper: number): boolean {
-    this.envelope.densityAt!(x, this.density);
+  /** Whether a height lies under the density, which is enclosed already. */
+  private isUnder(x: number, height: number, upper: number, isByDistance = false): boolean {
     const { lo, hi } = this.density;
     if (lo > upper) throw bug(`breach: the density at x = ${x} lies above the envelope`);
     if (lo >= height) return true;
     if (hi < height) return false;
     this.nearTies++;
-    return this.envelope.heightAt(x) >= height;
+    return (isByDistance ? lo / 2 + hi / 2 : this.envelope.heightAt(x)) >= height;
   }
 }

@@ -13,6 +13,7 @@
  */
 import type { Envelope } from '../envelope/envelope';
 import { N_INSIDE } from '../envelope/piece';
+import { prev } from '../numeric/float';
 
 /** Numbers of one segment in `Guide.segments`, in this order. */
 export const STRIDE = 6;
@@ -92,7 +93,7 @@ export function guideOf(envelope: Envelope): Guide {
   const inside = trapezoids.map((t): Segment => {
     const { from, to } = pieces[t.piece]!;
     const slant = (2 * (t.left / tallest)) / (t.left / tallest + t.right / tallest);
-    return { from, width: to - from, slant, area: areaOf(t), gapOf: t.isGap ? t.piece : -1 };
+    return { from, width: widthOf(from, to), slant, area: areaOf(t), gapOf: t.isGap ? t.piece : -1 };
   });
   const used = [...segmentsOf('before'), ...inside, ...segmentsOf('after')].filter(
     ({ area }) => area > 0,
@@ -118,6 +119,12 @@ export function guideOf(envelope: Envelope): Guide {
     cells: cellsOf(segments, used.length),
     lines: linesOf(envelope),
   };
+}
+
+/** The widest that does not lead beyond the end: from + (to − from) may round to more than `to`. */
+function widthOf(from: number, to: number): number {
+  const width = to - from;
+  return from + width > to ? prev(width) : width;
 }
 
 function cellsOf(segments: Float64Array, n: number): Int32Array {

@@ -13,6 +13,7 @@
  * Source: src/METHOD.md, "Unbounded sides" and "Poles".
  */
 import type { Factor, Side } from '../formula/side';
+import type { Tape } from '../formula/tape';
 import { mulUp, powerOfTwo } from '../numeric/float';
 
 export interface Hat extends Side {
@@ -24,11 +25,15 @@ export interface Hat extends Side {
   /** k for powers and poles, λ for exponentials. */
   readonly rate: number;
   readonly area: number;
+  /** At a pole the density by the distance t, which x cannot tell; null beyond the pieces. */
+  readonly near: Tape | null;
 }
 
 /** One place on a hat. */
 export interface HatPoint {
   x: number;
+  /** Its distance from the origin. */
+  t: number;
   height: number;
 }
 
@@ -53,7 +58,7 @@ export function hatOver(
   scale: number,
 ): Verdict {
   if (factors.some(({ growth, power }) => power === 1 && growth.v.lo === 0 && growth.v.hi === 0)) {
-    return { hat: { ...side, kind: 'nothing', c, height: 0, rate: 0, area: 0 } };
+    return { hat: { ...side, kind: 'nothing', c, height: 0, rate: 0, area: 0, near: null } };
   }
   const whole = growthOf(factors);
   const hats = [
@@ -127,16 +132,15 @@ function hatFrom(side: Side, c: number, { eLo, eHi, dHi }: Bounds, atC: number):
   if (!(atC < Infinity)) return null;
   const height = atC * (1 + ROOM);
   const hats: Hat[] = [];
+  const begin = { ...side, c, height, near: null };
   if (side.isBeyond) {
     const k = largestExponent(-eHi - 1);
     if (k !== null)
-      hats.push({ ...side, kind: 'power', c, height, rate: k, area: (height * c) / powerOfTwo(k) });
+      hats.push({ ...begin, kind: 'power', rate: k, area: (height * c) / powerOfTwo(k) });
     if (dHi < 0 && dHi > -Infinity) {
       hats.push({
-        ...side,
+        ...begin,
         kind: 'exponential',
-        c,
-        height,
         rate: -dHi,
         area: (height * 9) / (8 * -dHi),
       });
@@ -144,7 +148,7 @@ function hatFrom(side: Side, c: number, { eLo, eHi, dHi }: Bounds, atC: number):
   } else {
     const k = largestExponent(eLo + 1);
     if (k !== null)
-      hats.push({ ...side, kind: 'pole', c, height, rate: k, area: (height * c) / powerOfTwo(k) });
+      hats.push({ ...begin, kind: 'pole', rate: k, area: (height * c) / powerOfTwo(k) });
   }
   return hats.length === 0 ? null : hats.reduce((a, b) => (b.area < a.area ? b : a));
 }
@@ -177,6 +181,7 @@ export function placeOn(hat: Hat, s: number, out: HatPoint): void {
     t = c * ratio;
     out.height = (height * s) / ratio;
   }
+  out.t = t;
   out.x = origin + direction * t;
 }
 

@@ -12,6 +12,7 @@
 import FlatQueue from 'flatqueue';
 import type { InputError } from '../errors';
 import type { Enclosure, PointValues, Turn } from '../formula/enclose';
+import { byDistance } from '../formula/distance';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
@@ -39,8 +40,10 @@ import {
   undefinedOn,
   unproved,
   unsettledSign,
+  untold,
   zeroEverywhere,
 } from './refusal';
+import { untoldArea } from './resolution';
 import { findExponent } from './scale';
 import { undefinedStretch } from './stretch';
 
@@ -136,7 +139,7 @@ class Prover {
       factors && hatOver(side, c, factors, this.atCentre.hi, twoTo(-this.encloser.exponent));
     // Scales beyond the doubles' own leave some hats without a height.
     if (!verdict || typeof verdict === 'string') throw unproved(side, false);
-    return verdict.hat;
+    return side.isBeyond ? verdict.hat : { ...verdict.hat, near: byDistance(this.tape, side) };
   }
 
   prove(): Envelope {
@@ -156,6 +159,7 @@ class Prover {
         `the proof promises an acceptance of ${shortNumber(promised)} after ${parts.length} pieces; the draws are exact all the same`,
       );
     }
+    this.settleHats(areas.lowerArea);
     const { exponent } = this.encloser;
     return {
       from: this.from,
@@ -168,6 +172,14 @@ class Prover {
       ...areas,
       notes: this.notes,
     };
+  }
+
+  /** Refuses a hat under which the density's digits give out. */
+  private settleHats(lowerArea: number): void {
+    const densityAt = (x: number, out: I.Interval): void => this.encloser.densityAt(x, out);
+    for (const hat of this.hats)
+      if (untoldArea(hat, this.encloser.exponent, densityAt) > NEGLIGIBLE * lowerArea)
+        throw untold(hat);
   }
 
   private refine(): void {

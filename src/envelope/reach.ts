@@ -10,7 +10,7 @@ import type { Side } from '../formula/side';
 import { SideEncloser } from '../formula/side';
 import type { Tape } from '../formula/tape';
 import * as elementary from '../numeric/elementary';
-import { powerOfTwo } from '../numeric/float';
+import { powerOfTwo, ulp } from '../numeric/float';
 import { hatOver } from './hat';
 import { negativeAt, undefinedSide, unproved } from './refusal';
 import type { Survey } from './survey';
@@ -20,6 +20,9 @@ import { survey } from './survey';
 const WANTED_SHARE = 4e-4;
 /** Distances tried: from the width of the density by factors of 1.5 and 4/3, up to this many doublings. */
 const MAX_DOUBLINGS = 120;
+
+/** Nearer to a pole than this many units of its last place x tells the distance too badly for pieces; 2^28. */
+const UNITS_TOLD = 268435456;
 
 /** A side that needs a hat, and the distance from its origin at which the hat begins. */
 export interface Reach {
@@ -115,7 +118,11 @@ class Finder {
   pole(origin: number, direction: 1 | -1): Reach {
     const side: Side = { origin, direction, isBeyond: false };
     const room = Math.min(1, this.to - this.from) / 4;
-    const candidates = Array.from({ length: MAX_DOUBLINGS }, (_, k) => room * powerOfTwo(-k));
+    const least = origin === 0 ? 0 : UNITS_TOLD * ulp(origin);
+    const candidates = Array.from(
+      { length: MAX_DOUBLINGS },
+      (_, k) => room * powerOfTwo(-k),
+    ).filter((c, k) => k === 0 || c >= least);
     return this.choose(side, candidates);
   }
 

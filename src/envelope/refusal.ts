@@ -73,7 +73,7 @@ export function unboundedNear(x: number): InputError {
   return new InputError(
     WHERE,
     `it cannot be bounded near x = ${shortNumber(x)}`,
-    'keep the limits away from there or, where the formula is only 0/0, give its height with IF, as in IF(ABS(x)<1E-9, 1, SIN(x)/x)',
+    'end or begin the limits there if it grows without limit, keep them away from there or, where the formula is only 0/0, give its height with IF, as in IF(ABS(x)<1E-9, 1, SIN(x)/x)',
   );
 }
 
@@ -81,7 +81,7 @@ export function unboundedNear(x: number): InputError {
 export function unproved({ origin, direction, isBeyond }: Side, isInfinite: boolean): InputError {
   const limit = isBeyond === direction > 0 ? 'upper' : 'lower';
   if (isBeyond) {
-    const towards = direction > 0 ? 'upwards' : 'downwards';
+    const towards = `towards ${direction > 0 ? 'larger' : 'smaller'} x`;
     const found = isInfinite
       ? `its area is infinite ${towards}: it does not fall fast enough`
       : `that its area is finite ${towards} cannot be proved`;
@@ -95,6 +95,28 @@ export function unproved({ origin, direction, isBeyond }: Side, isInfinite: bool
     WHERE,
     found,
     `${limit === 'lower' ? 'start the limits above' : 'end the limits below'} ${at}`,
+  );
+}
+
+/** A side on which a hat lies over a density whose digits cancel. */
+export function untold({ origin, direction, isBeyond }: Side): InputError {
+  const limit = isBeyond === direction > 0 ? 'upper' : 'lower';
+  if (isBeyond) {
+    return new InputError(
+      WHERE,
+      `its digits cancel towards ${direction > 0 ? 'larger' : 'smaller'} x, so that heights there cannot be told`,
+      `give a number as the ${limit} limit instead of unbounded, or write it so that nothing cancels there`,
+    );
+  }
+  const at = shortNumber(origin);
+  const distance =
+    direction > 0 ? (origin < 0 ? `x+${shortNumber(-origin)}` : `x-${at}`) : `${at}-x`;
+  return new InputError(
+    WHERE,
+    `its digits cancel near x = ${at}, where it grows without limit`,
+    origin === 0
+      ? 'write it so that nothing cancels there, or move the limit away from there'
+      : `write the distance from there as (${distance}), or measure x from there`,
   );
 }
 

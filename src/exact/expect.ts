@@ -132,7 +132,7 @@ class Expecter {
       refinedIntegral(
         (x) => weight(x) * this.height(x),
         stretches.map(({ from, to }) => [from, to] as const),
-      ) + hats.reduce((sum, hat) => sum + hatIntegral(hat, this.height, weight), 0);
+      ) + hats.reduce((sum, hat) => sum + hatIntegral(hat, this.envelope, this.height, weight), 0);
     const { isConstant, value: constant } = this.quantity.steps[this.quantity.root]!;
     this.centre =
       isConstant && constant - constant === 0

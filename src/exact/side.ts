@@ -7,21 +7,21 @@
  *      s = 0 ─────────────────── s = 1
  *
  * Areas from the outer end on keep their digits however small.
- * Near a pole at another place than 0 doubles stand too wide apart to tell the distance
- * from it: there the density goes on with the power of the distance that it has a
- * little further off.
+ * Near a pole the density is taken by its distance, which x cannot tell.
  */
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
 import { placeOn } from '../envelope/hat';
+import { Encloser } from '../formula/enclose';
+import { evaluator } from '../formula/evaluate';
+import type { Tape } from '../formula/tape';
 import * as elementary from '../numeric/elementary';
-import { powerOfTwo, ulp } from '../numeric/float';
+import { powerOfTwo } from '../numeric/float';
 import type { Cell } from './cells';
+import { heightOf } from './height';
 import { endpointIntegral } from './quadrature';
 
 const PRECISE = 1e-15;
-/** Distances from a pole below this many units in its last place are not told by doubles. */
-const UNITS_TOLD = 4096;
 
 /** True for a hat below the pieces. */
 export function isLowerHat({ origin, direction, c }: Hat, { pieces }: Envelope): boolean {
@@ -35,8 +35,8 @@ export function hatCell(hat: Hat, envelope: Envelope, height: (x: number) => num
   const { origin, direction, c } = hat;
   const inner = origin + direction * c;
   const outer = hat.isBeyond ? direction * Infinity : origin;
-  const at = { x: 0, height: 0 };
-  const perUniform = areaPerUniform(hat, height);
+  const at = { x: 0, t: 0, height: 0 };
+  const perUniform = areaPerUniform(hat, envelope.exponent, height);
   const slope = (s: number): number => perUniform(s).area;
   const areaOver = (a: number, b: number): number => {
     const [from, to] = isLower ? [a, b] : [-b, -a];
@@ -64,10 +64,11 @@ export function hatCell(hat: Hat, envelope: Envelope, height: (x: number) => num
 /** The integral of weight · density over what lies under a hat. */
 export function hatIntegral(
   hat: Hat,
+  { exponent }: Pick<Envelope, 'exponent'>,
   height: (x: number) => number,
   weight: (x: number) => number,
 ): number {
-  const perUniform = areaPerUniform(hat, height);
+  const perUniform = areaPerUniform(hat, exponent, height);
   const { origin, direction } = hat;
   const slope = (s: number): number => {
     const { distance, area } = perUniform(s);
@@ -79,19 +80,19 @@ export function hatIntegral(
 /** The area for one unit of s, which is density over hat times the hat's area, and the distance at which it lies. */
 function areaPerUniform(
   hat: Hat,
+  exponent: number,
   height: (x: number) => number,
 ): (s: number) => { readonly distance: number; readonly area: number } {
-  const { origin, direction } = hat;
-  const density = hat.isBeyond
-    ? (t: number): number => height(origin + direction * t)
-    : nearPole(hat, height);
-  const distances: Hat = { ...hat, origin: 0, direction: 1 };
-  const at = { x: 0, height: 0 };
+  const { origin, direction, near, c } = hat;
+  const density = near
+    ? nearPole(near, exponent, c)
+    : (t: number): number => height(origin + direction * t);
+  const at = { x: 0, t: 0, height: 0 };
   return (s) => {
-    placeOn(distances, s, at);
-    const isTold = at.x < Infinity && at.height > 0;
-    const share = isTold ? density(at.x) / at.height : 0;
-    return { distance: at.x, area: share > 0 ? hat.area * Math.min(1, share) : 0 };
+    placeOn(hat, s, at);
+    const isTold = at.t < Infinity && at.height > 0;
+    const share = isTold ? density(at.t) / at.height : 0;
+    return { distance: at.t, area: share > 0 ? hat.area * Math.min(1, share) : 0 };
   };
 }
 
@@ -108,22 +109,13 @@ function shareBeyond({ kind, c, rate }: Hat, t: number): number {
 }
 
 /** The density by its distance from a pole. */
-function nearPole(
-  { origin, direction, c }: Hat,
-  height: (x: number) => number,
-): (t: number) => number {
-  if (origin === 0) return (t) => height(direction * t);
-  const told = Math.min(c / 4, UNITS_TOLD * ulp(origin));
-  const at = (t: number): number => origin + direction * t;
-  const distance = (x: number): number => (x - origin) * direction;
-  const [near, far] = [at(told), at(2 * told)];
-  const [atNear, atFar] = [height(near), height(far)];
-  const power =
-    (elementary.ln(atFar) - elementary.ln(atNear)) /
-    (elementary.ln(distance(far)) - elementary.ln(distance(near)));
-  return (t) => {
-    const isTold = t >= told;
-    const x = isTold ? at(t) : near;
-    return (isTold ? height(x) : atNear) * elementary.pow(t / distance(x), power);
-  };
+function nearPole(near: Tape, exponent: number, c: number): (t: number) => number {
+  const encloser = new Encloser(near, exponent);
+  return heightOf({
+    // Not a number sends who asks to the enclosure.
+    heightAt: exponent === 0 ? evaluator(near) : () => NaN,
+    densityAt: (t, out) => encloser.densityAt(t, out),
+    from: 0,
+    to: c,
+  });
 }

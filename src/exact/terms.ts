@@ -33,7 +33,7 @@ export function sharesOfTerms(envelope: Envelope, terms: readonly Tape[]): numbe
     };
     return (
       refinedIntegral(finite, stretches) +
-      hats.reduce((sum, hat) => sum + hatIntegral(hat, height, part), 0)
+      hats.reduce((sum, hat) => sum + hatIntegral(hat, envelope, height, part), 0)
     );
   });
   const total = areas.reduce((sum, area) => sum + area, 0);

@@ -1,6 +1,7 @@
 import { goodnessOfFit, FALSE_ALARM } from './statistics';
 import {
   binsOf,
+  blendTarget,
   countsOf,
   EMPTY_STRETCH,
   drawInParts,
@@ -14,7 +15,7 @@ const ROWS = 200_000;
 const BINS = 500;
 
 describe('Drawer.column', () => {
-  test.each([...targets, ...sideTargets])(
+  test.each([...targets, ...sideTargets, blendTarget])(
     'draws of $name follow the exact bin shares [law]',
     (target) => {
       const bins = binsOf(target, BINS);

@@ -7,7 +7,10 @@ import erf from '@stdlib/math-base-special-erf';
 import type { Column } from '../../src/draw/column';
 import { Drawer } from '../../src/draw/column';
 import type { Envelope } from '../../src/envelope/envelope';
+import { readShapes } from '../../src/density/shape';
+import { blend } from '../../src/index';
 import { keyOf } from '../../src/random/key';
+import { prove } from '../../src/worksheet/proved';
 import { proved, tableEnvelope } from '../envelope/proved';
 import { forms } from '../forms/forms';
 
@@ -131,6 +134,41 @@ export const sideTargets: readonly Target[] = [
     bounds: [],
   },
 ];
+
+/** Days of picking: 0.7 of a falling curve, 0.3 evenly from 2 to 5, blended by shares of area. */
+function blended(): Envelope {
+  const pool = blend(
+    [[0.7], [0.3]],
+    [
+      [
+        ['density', 'EXP(-x/3)'],
+        ['from', 0],
+        ['to', 12],
+      ],
+      [
+        [2, 1],
+        [5, 1],
+      ],
+    ],
+  );
+  const { shapes } = readShapes(pool, null, [], {
+    density: 'density',
+    limits: 'limits',
+    givens: 3,
+  });
+  return prove(shapes[0]!).envelope;
+}
+
+/** A linear pool with two jumps; its cumulative area is elementary. */
+export const blendTarget: Target = {
+  name: 'a BLEND with jumps',
+  from: 0,
+  to: 12,
+  envelope: blended,
+  areaBelow: (x) =>
+    (0.7 * Math.expm1(-x / 3)) / Math.expm1(-4) + 0.1 * (Math.min(5, Math.max(2, x)) - 2),
+  bounds: [2, 5],
+};
 
 export interface Bins {
   /** One more than there are bins. */

@@ -201,7 +201,7 @@ class Checker {
   /** Evenly by the hat's own area, and far out. */
   private checkHat(hat: Hat): void {
     const { nPoints, random } = this.options;
-    const at = { x: 0, height: 0 };
+    const at = { x: 0, t: 0, height: 0 };
     for (let i = 0; i < nPoints / 10; i++) {
       placeOn(hat, i % 2 === 0 ? random() : Math.pow(2, -60 * random()), at);
       if (at.x === hat.origin || !Number.isFinite(at.x)) continue;

@@ -47,7 +47,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
   test.each(AREAS)('%s from %d to %d lies under its hats [law]', (text, from, to) => {
     const { hats, heightAt } = prove(text, from, to);
     expect(hats.length).toBeGreaterThan(0);
-    const place = { x: 0, height: 0 };
+    const place = { x: 0, t: 0, height: 0 };
     for (const hat of hats) {
       for (let k = 1; k <= 4000; k++) {
         // Half of the places spread evenly over the hat, half towards its far end.
@@ -62,7 +62,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
   test('a hat lowered by a hundredth is caught by the check above [law]', () => {
     const { hats, heightAt } = prove('EXP(-x)', 0, U);
     const hat = hats[0]!;
-    const place = { x: 0, height: 0 };
+    const place = { x: 0, t: 0, height: 0 };
     placeOn({ ...hat, height: hat.height * 0.99 }, 1, place);
     expect(heightAt(place.x)).toBeGreaterThan(place.height);
   });
@@ -97,32 +97,32 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
       '1/x',
       1,
       U,
-      'Density: its area is infinite upwards: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
+      'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
     [
       '1/(1+ABS(x))',
       -U,
       U,
-      'Density: its area is infinite downwards: it does not fall fast enough; give a number as the lower limit instead of unbounded.',
+      'Density: its area is infinite towards smaller x: it does not fall fast enough; give a number as the lower limit instead of unbounded.',
     ],
     [
       '1',
       0,
       U,
-      'Density: its area is infinite upwards: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
+      'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
     [
       'EXP(x)',
       0,
       U,
-      'Density: its area is infinite upwards: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
+      'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
     ['x^-1', 0, 1, 'Density: its area is infinite at x = 0; start the limits above 0.'],
     [
       '1/(x*LN(x)^2)',
       2,
       U,
-      'Density: that its area is finite upwards cannot be proved; give a number as the upper limit instead of unbounded.',
+      'Density: that its area is finite towards larger x cannot be proved; give a number as the upper limit instead of unbounded.',
     ],
   ])('%s from %d to %d is refused with its own message [law]', (text, from, to, message) => {
     expect(() => prove(text, from, to)).toThrow(message);
@@ -130,7 +130,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
 });
 
 describe('placeOn(hat, s, out)', () => {
-  const side = { origin: 0, direction: 1, isBeyond: true } as const;
+  const side = { origin: 0, direction: 1, isBeyond: true, near: null } as const;
   const HATS: readonly Hat[] = [
     { ...side, kind: 'power', c: 3, height: 2, rate: 1, area: 3 },
     { ...side, kind: 'power', c: 3, height: 2, rate: -2, area: 24 },
@@ -140,7 +140,7 @@ describe('placeOn(hat, s, out)', () => {
   ];
 
   test.each(HATS)('$kind with rate $rate agrees with heightOn at its own places [law]', (hat) => {
-    const place = { x: 0, height: 0 };
+    const place = { x: 0, t: 0, height: 0 };
     for (let s = 1 / 64; s <= 1; s += 1 / 64) {
       placeOn(hat, s, place);
       expect(heightOn(hat, place.x) / place.height).toBeCloseTo(1, 12);
@@ -150,8 +150,8 @@ describe('placeOn(hat, s, out)', () => {
   test.each(HATS)('$kind with rate $rate has the area it states beyond each place [law]', (hat) => {
     // The area from the place of s to the far end is s times the whole: its slope there is the height.
     const [a, b] = [
-      { x: 0, height: 0 },
-      { x: 0, height: 0 },
+      { x: 0, t: 0, height: 0 },
+      { x: 0, t: 0, height: 0 },
     ];
     for (let s = 0.05; s < 1; s += 0.1) {
       placeOn(hat, s - 1e-5, a);

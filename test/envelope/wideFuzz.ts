@@ -83,7 +83,7 @@ export function checkPoints(
       if (height < lower - slack) fault(`${height} below the lower line ${lower} at ${x}`);
     }
   }
-  const place = { x: 0, height: 0 };
+  const place = { x: 0, t: 0, height: 0 };
   for (const hat of hats) {
     for (let k = 0; k < each; k++) {
       placeOn(hat, k % 2 === 0 ? 1 - random() : Math.pow(2, -40 * random()), place);

@@ -1,10 +1,11 @@
-/** The draws against exact bin shares, 10^8 of each of five densities (npm run check:long). */
+/** The draws against exact bin shares, 10^8 of each density (npm run check:long). */
 import { keyOf } from '../../src/random/key';
 import { RowStream } from '../../src/random/stream';
 import { FALSE_ALARM, goodnessOfFit } from '../draw/statistics';
 import type { Target } from '../draw/targets';
 import {
   binsOf,
+  blendTarget,
   count,
   drawInParts,
   placeOf,
@@ -33,7 +34,7 @@ function tableDraws(target: Target, nPoints: number, n: number): Float64Array {
 }
 
 describe('Drawer.column over 10^8 rows', () => {
-  test.each([...targets, ...sideTargets])(
+  test.each([...targets, ...sideTargets, blendTarget])(
     'draws of $name follow the exact bin shares [law]',
     (target) => {
       const bins = binsOf(target, BINS);

@@ -39,7 +39,7 @@ const LABEL =
 const DEFINED = 'keep the limits where it is defined, or give it a height there with IF.';
 const POSITIVE = 'heights must be 0 or more; use MAX(0, …) if that is meant.';
 const NARROW_OR_IF =
-  'keep the limits away from there or, where the formula is only 0/0, give its height with IF, as in IF(ABS(x)<1E-9, 1, SIN(x)/x).';
+  'end or begin the limits there if it grows without limit, keep them away from there or, where the formula is only 0/0, give its height with IF, as in IF(ABS(x)<1E-9, 1, SIN(x)/x).';
 
 const BLOCK: Range = [
   ['density', 'm*EXP(-x)'],
@@ -104,19 +104,19 @@ const REFUSED: Record<string, readonly (readonly [Given, string])[]> = {
     ],
     [
       { density: '1/x', limits: [[1, U]] },
-      'Density: its area is infinite upwards: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
+      'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
     [
       { density: '1/(1+ABS(x))', limits: [[U, U]] },
-      'Density: its area is infinite downwards: it does not fall fast enough; give a number as the lower limit instead of unbounded.',
+      'Density: its area is infinite towards smaller x: it does not fall fast enough; give a number as the lower limit instead of unbounded.',
     ],
     [
       { density: '1', limits: [[0, U]] },
-      'Density: its area is infinite upwards: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
+      'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
     [
       { density: 'EXP(x)', limits: [[0, U]] },
-      'Density: its area is infinite upwards: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
+      'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
     [
       { density: 'SQRT(x-1)', limits: [[0, 3]] },
