@@ -93,7 +93,13 @@ export function guideOf(envelope: Envelope): Guide {
   const inside = trapezoids.map((t): Segment => {
     const { from, to } = pieces[t.piece]!;
     const slant = (2 * (t.left / tallest)) / (t.left / tallest + t.right / tallest);
-    return { from, width: widthOf(from, to), slant, area: areaOf(t), gapOf: t.isGap ? t.piece : -1 };
+    return {
+      from,
+      width: widthOf(from, to),
+      slant,
+      area: areaOf(t),
+      gapOf: t.isGap ? t.piece : -1,
+    };
   });
   const used = [...segmentsOf('before'), ...inside, ...segmentsOf('after')].filter(
     ({ area }) => area > 0,
