@@ -64,7 +64,11 @@ async function addin() {
   const made = { 'functions.json': functionsJson, 'manifest.xml': manifest };
   return bundle('addin', {
     ...forBrowser,
-    entry: { functions: './addin/functions/register.ts', pane: './addin/pane/pane.ts' },
+    entry: {
+      functions: './addin/functions/register.ts',
+      pane: './addin/pane/pane.ts',
+      worker: './addin/functions/worker.ts',
+    },
     plugins: [
       panePage(['functions', 'pane'], {
         officeAddress: OFFICE_ADDRESS,
@@ -120,7 +124,7 @@ function ownBundle(name, test) {
 function page() {
   return bundle('page', {
     ...forBrowser,
-    entry: { page: './addin/page/index.ts' },
+    entry: { page: './addin/page/index.ts', worker: './addin/functions/worker.ts' },
     // Served from this machine: not minimizing saves half the build and keeps the library readable.
     optimization: {
       minimize: false,
@@ -134,7 +138,12 @@ function page() {
       ],
     },
     plugins: [
-      new HtmlPlugin({ template: 'addin/page/index.html', inject: 'body', minify: false }),
+      new HtmlPlugin({
+        template: 'addin/page/index.html',
+        inject: 'body',
+        minify: false,
+        excludeChunks: ['worker'],
+      }),
       new CopyPlugin({
         patterns: ['o-spreadsheet', 'owl'].map((name) => ({
           from: `node_modules/@odoo/${name}/LICENSE`,

@@ -6,5 +6,9 @@ declare namespace CustomFunctions {
     readonly code: string;
     readonly message: string;
   }
+  /** Passed after the arguments of a cancelable function. */
+  interface CancelableInvocation {
+    onCanceled: () => void;
+  }
   function associate(id: string, run: (...args: never[]) => unknown): void;
 }

@@ -4,17 +4,19 @@
  * so types and comments keep to what that generator reads. The bodies only hand
  * over; conversion of cells and errors is in host.ts, the work in src/.
  */
-import { answer } from './host';
+import { answer, answerLater } from './host';
 
 /**
  * Draws random values that follow the density exactly: one column for each label, the same values until an input changes. In the unit of x.
  * @customfunction DRAW
+ * @cancelable
  * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), a table of points (x and height, straight lines between), a block of two columns that names density, from, to, rows, seed, label and constants, or a list with a heading row (label, density, from, to and so on) and one input a line. Heights need no particular unit.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
  * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
  * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
 export function draw(
   density: any[][],
@@ -23,30 +25,40 @@ export function draw(
   seed?: any[][],
   label?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('DRAW', [density, limits, rows, seed, label], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('DRAW', [density, limits, rows, seed, label], givens, invocation);
 }
 
 /**
  * Lists the pieces of the proved envelope: in each piece the density lies on or below the upper line and on or above the lower line. A heading row, then one row a piece: from and to in the unit of x, four heights, share of proposals and acceptance as fractions of 1.
  * @customfunction ENVELOPE
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
-export function envelope(density: any[][], limits?: any[][], givens?: any[][][]): any[][] {
-  return answer('ENVELOPE', [density, limits], givens);
+export function envelope(
+  density: any[][],
+  limits?: any[][],
+  givens?: any[][][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('ENVELOPE', [density, limits], givens, invocation);
 }
 
 /**
  * Tells how the draws were made and whether that went as proved: inputs as read, proof, proposals, acceptance, test of the count, notes. Two columns: item and value.
  * @customfunction ACCEPTANCE
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), a block of two columns, or a list of one input a line. Give the same cells as to DRAW.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Give the same as to DRAW.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
 export function acceptance(
   density: any[][],
@@ -55,8 +67,9 @@ export function acceptance(
   seed?: any[][],
   label?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('ACCEPTANCE', [density, limits, rows, seed, label], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('ACCEPTANCE', [density, limits, rows, seed, label], givens, invocation);
 }
 
 /**
@@ -132,29 +145,34 @@ export function quantile(
 /**
  * Gives the exact mean of a quantity under the density, with proved bounds: the mean that many draws tend to. A heading row, then value, at least and at most in the unit of the quantity.
  * @customfunction EXPECT
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param quantity A formula in x, such as x, x^2, MAX(0,x-60), or x>80 for a chance.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
 export function expect(
   density: any[][],
   limits?: any[][],
   quantity?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('EXPECT', [density, limits, quantity], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('EXPECT', [density, limits, quantity], givens, invocation);
 }
 
 /**
  * Lists every proposal behind the draws of DRAW with the same cells, kept or not. A heading row, then one row a proposal: row, attempt, value in the unit of x, height drawn (none is needed under the lower line), density there, kept as TRUE or FALSE.
  * @customfunction PROPOSALS
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
  * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 100000, or two cells: first row and last row.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
  * @param givens Values for the names in the formula: two columns, name and value.
+ * @param invocation The call itself.
  */
 export function proposals(
   density: any[][],
@@ -163,8 +181,9 @@ export function proposals(
   seed?: any[][],
   label?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('PROPOSALS', [density, limits, rows, seed, label], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('PROPOSALS', [density, limits, rows, seed, label], givens, invocation);
 }
 
 /**

@@ -3,11 +3,15 @@
  * becomes a cell of ours, the answer's cells become what the host can show, and
  * every failure becomes a cell error with the message in it.
  *
- * Not handled: cancellation and streaming; an answer is computed in one go.
+ * Calls that may take long are answered by a Worker where there is one, and dropped when
+ * the host says that they are no longer needed. Not handled: streaming.
  */
 import { CellErrorPassed, InputError } from '../../src/index';
 import type { Cell, Range } from '../../src/index';
-import { catalogue } from './catalogue';
+import { Background } from './background';
+import { takesLong } from './long';
+import { cellsOf, replyOf } from './reply';
+import type { Reply } from './reply';
 
 /** On the web a request or response holds 5 MB, about this many cells of random numbers. */
 const MOST_CELLS_ON_WEB = 200_000;
@@ -15,16 +19,39 @@ const MOST_CELLS_ON_WEB = 200_000;
 /** Ranges as the host passes them; an omitted argument is null or undefined. */
 type HostRange = readonly (readonly unknown[])[] | null | undefined;
 
+/** How the host tells that an answer is no longer needed. */
+type Invocation = Pick<CustomFunctions.CancelableInvocation, 'onCanceled'> | null | undefined;
+
+/** Holds no results: only the Worker and the calls that wait for it. */
+const background =
+  typeof Worker === 'undefined' ? null : new Background(() => new Worker('worker.js'));
+
 /** The named function's answer in the host's terms, or the host's error for what went wrong. */
 export function answer(
   name: string,
   fixed: readonly HostRange[],
   repeated: readonly HostRange[] | null | undefined,
 ): unknown[][] {
+  return toHost(replyOf(name, [...fixed, ...(repeated ?? [])].map(rangeFromHost)));
+}
+
+/** As `answer`, for functions whose calls may take long. */
+export async function answerLater(
+  name: string,
+  fixed: readonly HostRange[],
+  repeated: readonly HostRange[] | null | undefined,
+  invocation: Invocation,
+): Promise<unknown[][]> {
+  const args = [...fixed, ...(repeated ?? [])].map(rangeFromHost);
+  if (background === null || !takesLong(name, args)) return toHost(replyOf(name, args));
+  const call = background.call(name, args);
+  if (invocation) invocation.onCanceled = () => call.cancel();
+  return toHost(await call.reply);
+}
+
+function toHost(reply: Reply): unknown[][] {
   try {
-    const entry = catalogue.find((candidate) => candidate.name === name);
-    if (entry === undefined) throw new Error(`bug: ${name} is not in the catalogue`);
-    const result = entry.call([...fixed, ...(repeated ?? [])].map(rangeFromHost));
+    const result = cellsOf(reply);
     refuseTooManyCells(result);
     return result.map((row) => row.map(cellToHost));
   } catch (failure) {

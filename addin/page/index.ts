@@ -5,12 +5,15 @@ import { Model } from '@odoo/o-spreadsheet';
 import gridTemplates from '@odoo/o-spreadsheet/dist/o_spreadsheet.xml';
 import '@odoo/o-spreadsheet/dist/o_spreadsheet.css';
 import { App } from '@odoo/owl';
+import { Background } from '../functions/background';
 import { loadCharts } from './charts';
 import { hookFor, type WorkbookHook } from './hook';
 import { prepareLibrary } from './library';
+import { LongCalls } from './long';
 import { leaveKeysToBrowser, trimMenus } from './menus';
 import { moveBetweenRegions } from './regions';
 import { sampleWorkbook } from './sample/workbook';
+import type { CallPlace } from './register';
 import { forget, keepEdits, kept, parsed, saveFile } from './saved';
 import './style/layout.css';
 import './style/page.css';
@@ -24,7 +27,11 @@ declare global {
   }
 }
 
-const log = prepareLibrary();
+const long =
+  typeof Worker === 'undefined'
+    ? null
+    : new LongCalls(new Background(() => new Worker('worker.js')), recalculate);
+const log = prepareLibrary(long);
 loadCharts();
 trimMenus();
 leaveKeysToBrowser();
@@ -37,6 +44,7 @@ let model: Model | undefined;
 /** Puts a workbook in the place of the one shown; throws what the library throws at data it cannot read. */
 async function show(data: object): Promise<void> {
   log.clear();
+  long?.clear();
   const next = new Model(data);
   app?.destroy();
   model = next;
@@ -48,6 +56,12 @@ async function show(data: object): Promise<void> {
   window.undercurveWorkbook = hookFor(model, log);
   await app.mount(place);
   keepEdits(model);
+}
+
+/** Calculates these cells again, and what depends on them. */
+function recalculate(places: readonly CallPlace[]): void {
+  const cells = places.flatMap((place) => model?.getters.getCell(place)?.id ?? []);
+  if (cells.length > 0) model?.dispatch('EVALUATE_CELLS', { cellIds: cells });
 }
 
 async function showKeptOrSample(): Promise<void> {

@@ -4,15 +4,19 @@
  */
 import { catalogue } from '../functions/catalogue';
 import { CallLog } from './calls';
+import type { LongCalls } from './long';
 import { registerFunctions } from './register';
 import { correctSpillReferences } from './spill';
 import { sayInOurWords } from './wording';
 
-/** @returns the log of all calls of our functions from now on. */
-export function prepareLibrary(): CallLog {
+/**
+ * Without `long` every call is answered at once.
+ * @returns the log of all calls of our functions from now on.
+ */
+export function prepareLibrary(long: LongCalls | null = null): CallLog {
   const log = new CallLog();
   sayInOurWords();
   correctSpillReferences();
-  registerFunctions(catalogue, log.note);
+  registerFunctions(catalogue, log.note, long);
   return log;
 }

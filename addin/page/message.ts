@@ -3,6 +3,7 @@
  * the cell shows. Reads a model of the grid library; changes nothing.
  */
 import { helpers, type Model } from '@odoo/o-spreadsheet';
+import { WORKING } from './long';
 
 export type Position = Parameters<Model['getters']['getEvaluatedCell']>[0];
 
@@ -29,7 +30,8 @@ export function messageOf({ getters }: Model, position: Position): Message {
   if (helpers.isEvaluationError(cell.value)) {
     const origin = cell.errorOriginPosition ?? position;
     const from = samePlace(origin, position) ? '' : ` (from ${sheetAddressOf(getters, origin)})`;
-    return { where, text: `${cell.value} ${cell.message ?? ''}${from}`, problem: true };
+    const problem = cell.value !== WORKING;
+    return { where, text: `${cell.value} ${cell.message ?? ''}${from}`, problem };
   }
   const source = getters.getArrayFormulaSpreadingOn(position) ?? position;
   const spilled = samePlace(source, position) ? '' : ` (spills from ${addressOf(source)})`;
@@ -46,7 +48,8 @@ export function problemsIn({ getters }: Model): readonly Position[] {
     .filter((position) => {
       const { value, errorOriginPosition: origin = position }: Shown =
         getters.getEvaluatedCell(position);
-      return helpers.isEvaluationError(value) && samePlace(origin, position);
+      const isFailing = helpers.isEvaluationError(value) && value !== WORKING;
+      return isFailing && samePlace(origin, position);
     });
 }
 

@@ -8,6 +8,9 @@
 import { addFunction, helpers, registries } from '@odoo/o-spreadsheet';
 import { CellErrorPassed, InputError } from '../../src/index';
 import { type CatalogueEntry, namespace } from '../functions/catalogue';
+import { takesLong } from '../functions/long';
+import { type Arguments, cellsOf, type Reply } from '../functions/reply';
+import { type LongCalls, WORKING } from './long';
 import { findErrorCell, type GridArgument, type GridCell, toColumns, toRange } from './translate';
 
 /** The grid declares no repeating argument after optional ones, so givens are numbered. */
@@ -23,9 +26,20 @@ export interface CallPlace {
 /** Is told of every call, with its time in milliseconds. */
 export type OnCall = (name: string, place: CallPlace | undefined, milliseconds: number) => void;
 
-/** Adds every function of the catalogue to the grid library, once per program. */
-export function registerFunctions(catalogue: readonly CatalogueEntry[], onCall: OnCall): void {
+/** The reply to a call that may take long: null while it is on its way, undefined when the call is no such call. */
+type ReplyLater = (args: Arguments) => Reply | null | undefined;
+
+/**
+ * Adds every function of the catalogue to the grid library, once per program. Without
+ * `long` every call is answered at once.
+ */
+export function registerFunctions(
+  catalogue: readonly CatalogueEntry[],
+  onCall: OnCall,
+  long: LongCalls | null = null,
+): void {
   registries.errorTypes.add(VALUE_ERROR);
+  registries.errorTypes.add(WORKING);
   for (const entry of catalogue) {
     const name = `${namespace}.${entry.name}`;
     addFunction(name, {
@@ -34,8 +48,13 @@ export function registerFunctions(catalogue: readonly CatalogueEntry[], onCall: 
       args: declareArguments(entry),
       compute(...args: readonly unknown[]) {
         const started = performance.now();
-        const result = answer(entry, args as readonly GridArgument[]);
-        onCall(entry.name, this.__originCellPosition, performance.now() - started);
+        const place = this.__originCellPosition;
+        const later: ReplyLater = (ranges) =>
+          long && place && takesLong(entry.name, ranges)
+            ? long.replyFor(entry.name, ranges, place)
+            : undefined;
+        const result = answer(entry, args as readonly GridArgument[], later);
+        onCall(entry.name, place, performance.now() - started);
         return result;
       },
     });
@@ -46,10 +65,13 @@ export function registerFunctions(catalogue: readonly CatalogueEntry[], onCall: 
 export function answer(
   entry: Pick<CatalogueEntry, 'call'>,
   args: readonly GridArgument[],
+  later: ReplyLater = () => undefined,
 ): GridCell | GridCell[][] {
   try {
     const ranges = args.map((argument) => toRange(argument, helpers.isEvaluationError));
-    return toColumns(entry.call(ranges));
+    const reply = later(ranges);
+    if (reply === null) return { value: WORKING, message: 'The proof is being worked out.' };
+    return toColumns(reply ? cellsOf(reply) : entry.call(ranges));
   } catch (problem) {
     if (problem instanceof CellErrorPassed) {
       return findErrorCell(args, problem.code) ?? { value: problem.code, message: problem.code };

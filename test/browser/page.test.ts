@@ -183,6 +183,26 @@ describe('the local workbook', () => {
   });
 });
 
+describe('a call that may take long', () => {
+  /** 100 waves, more than 1,000 characters. */
+  const LONG = `2+SIN(${Array.from({ length: 100 }, (_, i) => `${i + 1}*x)`).join('/100+SIN(')}/100`;
+  const ARGUMENTS = [[[LONG]], [[0, 3]], [[50]], [['plan-2027']], [['waves']]] as const;
+
+  test('a long formula is proved aside, and then shows what Node gives for it [law]', async () => {
+    const page = await opened();
+    await page.evaluate((text) => {
+      const workbook = window.undercurveWorkbook;
+      workbook.write('Draws', 'H1', text);
+      workbook.write('Draws', 'I1', '=UNDERCURVE.DRAW(H1,{0,3},50,"plan-2027","waves")');
+    }, LONG);
+    expect(await read(page, 'Draws', 'I1')).toBe('#WORKING!');
+    await page.waitForFunction(() => window.undercurveWorkbook.read('Draws', 'I1') !== '#WORKING!');
+    expect(await spill(page, 'Draws', 'I1')).toEqual(
+      catalogue.find(({ name }) => name === 'DRAW')!.call(ARGUMENTS),
+    );
+  });
+});
+
 describe('what was edited', () => {
   const keptEdit = async (page: Page) => {
     await type(page, 'Shapes!E14', '6.5');
