@@ -1,12 +1,14 @@
 /**
- * The limits of one variable: two cells from | to in either direction, or one row
- * name | from | to [| step] with an optional heading. An end is a number, the name of
- * a given, or `unbounded` (held as −∞ or ∞).
- * Not handled yet: steps, several variables (each is refused).
+ * The limits: two cells from | to in either direction, or a row name | from | to [| step]
+ * for each variable, with an optional heading. An end is a number, the name of a given, or
+ * `unbounded` (held as −∞ or ∞). A step makes a counted quantity: from, from + step, …;
+ * 0 or none means continuous.
+ * Not handled yet: steps of a single variable (refused where it is drawn).
  */
 import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
 import { isBlankOrZero, isText, numberIn, passErrors, quoted, sizeOf, word } from './cells';
+import { nameKey } from '../formula/compile';
 import type { Givens } from './givens';
 
 /** Ends beyond this are refused: their areas could not be told in doubles. */
@@ -19,6 +21,8 @@ export interface LimitCells {
   readonly variable: string;
   readonly from: Cell;
   readonly to: Cell;
+  /** Blank for a continuous variable. */
+  readonly step: Cell;
   readonly where: string;
   /** The places of ends that do not come from the limits themselves. */
   readonly fromWhere?: string;
@@ -38,7 +42,13 @@ export function withEnds(
   where: string,
 ): LimitCells | null {
   if (from === undefined && to === undefined) return cells;
-  const own = cells ?? { variable: DEFAULT_VARIABLE, from: UNBOUNDED, to: UNBOUNDED, where };
+  const own = cells ?? {
+    variable: DEFAULT_VARIABLE,
+    from: UNBOUNDED,
+    to: UNBOUNDED,
+    step: null,
+    where,
+  };
   return {
     ...own,
     ...(from && { from: from.cell, fromWhere: from.where }),
@@ -51,12 +61,15 @@ export interface Limits {
   readonly to: number;
 }
 
-/** Finds the cells of the ends. @throws {InputError} for a range of another form. */
-export function readLimitCells(range: Range, where: string): LimitCells {
+/** Most variables of one shape: the work of a proof grows with every one. */
+export const MOST_VARIABLES = 6;
+
+/** The cells of the ends, one entry a variable. @throws {InputError} for a range of another form. */
+export function readLimitCells(range: Range, where: string): readonly LimitCells[] {
   passErrors(range);
   const cells = range.flat();
   if (cells.length === 2)
-    return { variable: DEFAULT_VARIABLE, from: cells[0]!, to: cells[1]!, where };
+    return [{ variable: DEFAULT_VARIABLE, from: cells[0]!, to: cells[1]!, step: null, where }];
   const rows = range.filter((row) => !row.every(isBlankOrZero));
   const body = word(rows[0]?.[1] ?? null) === 'from' ? rows.slice(1) : rows;
   const width = range[0]!.length;
@@ -64,25 +77,47 @@ export function readLimitCells(range: Range, where: string): LimitCells {
     throw new InputError(
       where,
       sizeOf(range),
-      'give two cells, from and to, or a row name, from, to',
+      body.length > 1 && width === 2
+        ? 'give several variables a row name, from, to each'
+        : 'give two cells, from and to, or a row name, from, to',
     );
   }
-  if (body.length > 1) {
+  if (body.length > MOST_VARIABLES) {
     throw new InputError(
       where,
       `${body.length} variables`,
-      'give one row: only shapes of one variable can be drawn so far',
+      `give at most ${MOST_VARIABLES}, or draw some of them apart`,
     );
   }
-  const [name, from, to, step = null] = body[0]!;
-  if (!isText(name!))
+  const variables = body.map((row) => readRow(row, where, body.length > 1));
+  variables.forEach(({ variable }, i) => {
+    if (variables.findIndex((other) => nameKey(other.variable) === nameKey(variable)) < i) {
+      throw new InputError(where, `"${variable}" stands twice`, 'give each variable its own name');
+    }
+  });
+  return variables;
+}
+
+function readRow(
+  [name, from, to, step = null]: readonly Cell[],
+  where: string,
+  isOneOfMany: boolean,
+): LimitCells {
+  if (!isText(name!)) {
     throw new InputError(
       where,
       `${quoted(name!)} is not a variable's name`,
       'give a row name, from, to',
     );
-  checkStep(step, where);
-  return { variable: name.trim(), from: from!, to: to!, where };
+  }
+  const variable = name.trim();
+  return {
+    variable,
+    from: from!,
+    to: to!,
+    step,
+    where: isOneOfMany ? `${where}, ${variable}` : where,
+  };
 }
 
 /** @throws {InputError} for a step other than 0. */
@@ -114,6 +149,56 @@ export function readEnds(cells: LimitCells, givens: Givens): Limits {
     );
   }
   return limits;
+}
+
+/** One of several variables, continuous for a step of 0, else counted: from, from + step, … to. */
+export interface Axis {
+  readonly name: string;
+  readonly from: number;
+  readonly to: number;
+  readonly step: number;
+}
+
+/** Most values of one counted variable. */
+const MOST_VALUES = 2147483647;
+
+/**
+ * The variables of a shape of several. A step that does not lead to `to` ends at the last value before it.
+ * @throws {InputError} as readEnds, for limits that are unbounded and for a step below 0.
+ */
+export function readAxes(variables: readonly LimitCells[], givens: Givens): readonly Axis[] {
+  return variables.map((cells) => {
+    const { variable: name, where } = cells;
+    const at = `${where}, step`;
+    const step = numberIn(cells.step, at);
+    if (!(step >= 0 && step < Infinity))
+      throw new InputError(at, `${step} is below 0`, 'give 0 for a continuous variable, or 1');
+    const { from, to } = readEnds(cells, givens);
+    if (from === -Infinity || to === Infinity) {
+      throw new InputError(
+        where,
+        'a limit is unbounded',
+        'give numbers as limits to each of several variables',
+      );
+    }
+    if (step === 0) return { name, from, to, step };
+    const nSteps = wholeSteps(from, to, step);
+    if (nSteps > MOST_VALUES) {
+      throw new InputError(
+        at,
+        `${step} makes more than ${MOST_VALUES} values`,
+        'give a larger step, or 0 for a continuous variable',
+      );
+    }
+    return { name, from, to: from + nSteps * step, step };
+  });
+}
+
+/** How many steps lead from `from` to the last value that is not beyond `to` but for rounding. */
+function wholeSteps(from: number, to: number, step: number): number {
+  const steps = (to - from) / step;
+  const nearest = Math.round(steps);
+  return Math.abs(steps - nearest) <= 1e-9 * Math.max(1, nearest) ? nearest : Math.floor(steps);
 }
 
 function readEnd(cell: Cell, where: string, givens: Givens, unbounded: number): number {

@@ -1,8 +1,7 @@
 /**
  * A shape: what the arguments `density`, `limits` and `givens…` come to. Either a
- * formula with its limits and givens, or a table's straight lines; one per column of
- * heights or line of a list.
- * Not handled yet: several variables.
+ * formula with its limits and givens, in one variable or several, or a table's straight
+ * lines; one per column of heights or line of a list.
  */
 import { InputError } from '../errors';
 import type { Source } from '../formula/compile';
@@ -16,9 +15,15 @@ import { given, givenUnlessZero, isBlankOrZero, isText, passErrors } from './cel
 import { readFormula, readLines } from './formulas';
 import type { GivenRanges, NamedValue } from './givens';
 import { checkMethod, Givens, readGivens } from './givens';
-import type { Limits } from './limits';
-import { checkStep, DEFAULT_VARIABLE, readEnds, readLimitCells, withEnds } from './limits';
-import type { LimitCells, OtherEnds } from './limits';
+import type { Axis, LimitCells, Limits, OtherEnds } from './limits';
+import {
+  checkStep,
+  DEFAULT_VARIABLE,
+  readAxes,
+  readEnds,
+  readLimitCells,
+  withEnds,
+} from './limits';
 import type { ListLine } from './shapelist';
 import { isShapeList, readShapeList } from './shapelist';
 import type { Polyline, PointTable } from './table';
@@ -45,11 +50,21 @@ export interface TableShape {
   readonly limits: Limits;
 }
 
-export type Shape = FormulaShape | TableShape;
+/** A formula in two variables or more. */
+export interface SeveralShape {
+  readonly kind: 'several';
+  readonly sources: readonly Source[];
+  readonly axes: readonly Axis[];
+  readonly givens: GivenMap;
+}
+
+/** A shape of one variable. */
+export type PlainShape = FormulaShape | TableShape;
+export type Shape = PlainShape | SeveralShape;
 
 /** What the arguments say: one shape, or one per column of heights or line of a list. */
-export interface Shapes {
-  readonly shapes: readonly Shape[];
+export interface Shapes<S extends Shape = PlainShape> {
+  readonly shapes: readonly S[];
   /** The block they came from, for its rows, seed and label. */
   readonly block: Block | null;
   /** The lines of a list they came from, one a shape. */
@@ -74,7 +89,7 @@ export interface Overrides {
 const AS_GIVEN: Overrides = { values: [], ends: {} };
 
 /** What the three arguments of a shape say, open to other values of its constants and limits. */
-export interface Family {
+export interface Family<S extends Shape = PlainShape> {
   readonly block: Block | null;
   readonly lines: readonly ListLine[] | null;
   readonly notes: readonly string[];
@@ -85,12 +100,12 @@ export interface Family {
   /** Its givens as written, for messages. */
   readonly givens: readonly string[];
   /** @throws {InputError} for values and ends that do not fit. */
-  readonly shapes: (overrides: Overrides) => readonly Shape[];
+  readonly shapes: (overrides: Overrides) => readonly S[];
 }
 
 /**
- * Reads the three arguments of a shape.
- * @throws {InputError} with the place, for everything that cannot be read.
+ * Reads the three arguments of a shape of one variable.
+ * @throws {InputError} with the place, for everything that cannot be read, several variables included.
  * @throws {CellErrorPassed} when a cell holds an error value.
  */
 export function readShapes(
@@ -99,7 +114,20 @@ export function readShapes(
   givens: readonly Range[],
   places: Places,
 ): Shapes {
-  const { block, lines, notes, shapes } = readFamily(density, limits, givens, places);
+  return asGiven(readFamily(density, limits, givens, places));
+}
+
+/** As `readShapes`, for functions that take several variables too. */
+export function readAnyShapes(
+  density: Range | null,
+  limits: Range | null,
+  givens: readonly Range[],
+  places: Places,
+): Shapes<Shape> {
+  return asGiven(readAnyFamily(density, limits, givens, places));
+}
+
+function asGiven<S extends Shape>({ block, lines, notes, shapes }: Family<S>): Shapes<S> {
   return { shapes: shapes(AS_GIVEN), block, lines, notes };
 }
 
@@ -114,6 +142,28 @@ export function readFamily(
   givens: readonly Range[],
   places: Places,
 ): Family {
+  const nVariables = limitCellsOf(limits, places).length;
+  if (nVariables > 1) {
+    throw new InputError(
+      places.limits,
+      `${nVariables} variables`,
+      'give one: only DRAW, ENVELOPE, ACCEPTANCE, PROPOSALS and EXPECT take several',
+    );
+  }
+  return readAnyFamily(density, limits, givens, places) as Family;
+}
+
+function limitCellsOf(limits: Range | null, places: Places): readonly LimitCells[] {
+  const range = givenUnlessZero(limits);
+  return range ? readLimitCells(range, places.limits) : [];
+}
+
+function readAnyFamily(
+  density: Range | null,
+  limits: Range | null,
+  givens: readonly Range[],
+  places: Places,
+): Family<Shape> {
   const range = given(density);
   if (range === null || range.every((row) => row.every(isBlankOrZero))) {
     throw new InputError(
@@ -123,20 +173,29 @@ export function readFamily(
     );
   }
   passErrors(range);
-  const limitsRange = givenUnlessZero(limits);
-  const own = limitsRange ? readLimitCells(limitsRange, places.limits) : null;
+  const variables = limitCellsOf(limits, places);
+  const isSeveral = variables.length > 1;
   const shared = readGivens(givens, places.givens);
   const common = { block: null, lines: null, headings: [], notes: shared.notes };
   const sharedNames = shared.values.map(({ name }) => name);
   const known = (more: readonly string[], sources: () => readonly Source[]) => ({
     givens: [...more, ...sharedNames],
-    names: () => namesOf([...more, ...sharedNames], own, sources()),
+    names: () => namesOf([...more, ...sharedNames], variables, sources()),
   });
+  if (isSeveral && (isShapeList(range) || (isPointTable(range) && !isBlock(range)))) {
+    throw new InputError(
+      places.limits,
+      `${variables.length} variables for a ${isShapeList(range) ? 'list of inputs' : 'table of points'}`,
+      isShapeList(range)
+        ? 'give one variable, or one density alone'
+        : 'give the table among the givens, and a formula that uses it, such as base(early)*base(late)',
+    );
+  }
   if (isShapeList(range)) {
     const lines = readShapeList(range, places.density);
     const members = lines.map(({ block, where }) => ({
       where,
-      member: blockMember(block, where, own, shared, true),
+      member: blockMember(block, where, variables, shared, true),
     }));
     return {
       ...common,
@@ -150,9 +209,9 @@ export function readFamily(
   }
   if (isBlock(range)) {
     const block = readBlock(range, places.density);
-    const { shape, sources } = blockMember(block, places.density, own, shared);
+    const { shape, sources } = blockMember(block, places.density, variables, shared);
     const names = block.givens.map(({ name }) => name);
-    namedGivens(own, blockValues(block, places.density), shared, AS_GIVEN);
+    namedGivens(variables, blockValues(block, places.density), shared, AS_GIVEN);
     return {
       ...common,
       ...known(names, sources),
@@ -161,7 +220,7 @@ export function readFamily(
     };
   }
   if (isPointTable(range)) {
-    namedGivens(own, [], shared, AS_GIVEN);
+    namedGivens(variables, [], shared, AS_GIVEN);
     const table = readTable(range, places.density);
     return {
       ...common,
@@ -169,18 +228,18 @@ export function readFamily(
       headings: table.columns.map(({ heading }) => heading),
       notes: [...table.notes, ...shared.notes],
       shapes: (overrides) => {
-        const cells = withEnds(own, overrides.ends, places.limits);
+        const cells = ended(variables, overrides, places.limits);
         return tableShapes(table, cells, namedGivens(cells, [], shared, overrides), places);
       },
     };
   }
-  namedGivens(own, [], shared, AS_GIVEN);
+  namedGivens(variables, [], shared, AS_GIVEN);
   const sources = once(() => readLines(range, places.density));
   return {
     ...common,
     ...known([], sources),
     shapes: (overrides) => {
-      const cells = withEnds(own, overrides.ends, places.limits);
+      const cells = ended(variables, overrides, places.limits);
       const named = namedGivens(cells, [], shared, overrides);
       return [formulaShape(sources(), cells, named)];
     },
@@ -189,10 +248,10 @@ export function readFamily(
 
 function namesOf(
   givens: readonly string[],
-  limits: LimitCells | null,
+  variables: readonly LimitCells[],
   sources: readonly Source[],
 ): ReadonlySet<string> {
-  const ends = limits ? [limits.from, limits.to].filter(isText) : [];
+  const ends = variables.flatMap(({ from, to }) => [from, to].filter(isText));
   const written = [...givens, ...ends].map((name) => nameKey(name.trim()));
   return new Set([...written, ...sources.flatMap(({ text }) => namesIn(text))]);
 }
@@ -213,13 +272,26 @@ export function inLine<T>(line: string | undefined, work: () => T): T {
   }
 }
 
+/** The limits of one variable with other ends; those of several stay as they are. */
+function ended(
+  variables: readonly LimitCells[],
+  { ends }: Overrides,
+  where: string,
+): readonly LimitCells[] {
+  if (variables.length > 1) return variables;
+  const cells = withEnds(variables[0] ?? null, ends, where);
+  return cells ? [cells] : [];
+}
+
 function namedGivens(
-  cells: LimitCells | null,
+  cells: readonly LimitCells[],
   own: readonly NamedValue[],
   shared: GivenRanges,
   overrides: Overrides,
 ): Givens {
-  const named = new Givens([cells?.variable ?? DEFAULT_VARIABLE]);
+  const named = new Givens(
+    cells.length > 0 ? cells.map(({ variable }) => variable) : [DEFAULT_VARIABLE],
+  );
   for (const value of [...own, ...shared.values]) named.add(value);
   for (const value of overrides.values) named.replace(value);
   return named;
@@ -227,7 +299,7 @@ function namedGivens(
 
 interface Member {
   readonly sources: () => readonly Source[];
-  readonly shape: (overrides: Overrides) => FormulaShape;
+  readonly shape: (overrides: Overrides) => FormulaShape | SeveralShape;
 }
 
 function blockValues({ givens }: Block, where: string): readonly NamedValue[] {
@@ -238,7 +310,7 @@ function blockValues({ givens }: Block, where: string): readonly NamedValue[] {
 function blockMember(
   block: Block,
   where: string,
-  limits: LimitCells | null,
+  limits: readonly LimitCells[],
   shared: GivenRanges,
   isLine = false,
 ): Member {
@@ -247,8 +319,12 @@ function blockMember(
     return [readFormula(formula, 'Formula', `${where}, density`)];
   });
   const own = blockValues(block, where);
-  const shape = (overrides: Overrides): FormulaShape => {
-    const cells = withEnds(limits ?? blockLimits(block, where, isLine), overrides.ends, where);
+  const shape = (overrides: Overrides): FormulaShape | SeveralShape => {
+    const cells = ended(
+      limits.length > 0 ? limits : blockLimits(block, where, isLine),
+      overrides,
+      where,
+    );
     const named = namedGivens(cells, own, shared, overrides);
     const method = block.words.get('method');
     if (method !== undefined) checkMethod(method, `${where}, method`);
@@ -259,27 +335,32 @@ function blockMember(
 
 function formulaShape(
   sources: readonly Source[],
-  cells: LimitCells | null,
+  cells: readonly LimitCells[],
   named: Givens,
-): FormulaShape {
+): FormulaShape | SeveralShape {
+  const givens = named.map;
+  if (cells.length > 1) return { kind: 'several', sources, axes: readAxes(cells, named), givens };
+  const [own] = cells;
+  if (own) checkStep(own.step, own.where);
   return {
     kind: 'formula',
     sources,
-    variable: cells?.variable ?? DEFAULT_VARIABLE,
-    limits: cells ? readEnds(cells, named) : UNBOUNDED_LIMITS,
-    givens: named.map,
+    variable: own?.variable ?? DEFAULT_VARIABLE,
+    limits: own ? readEnds(own, named) : UNBOUNDED_LIMITS,
+    givens,
   };
 }
 
 function tableShapes(
   table: PointTable,
-  cells: LimitCells | null,
+  cells: readonly LimitCells[],
   named: Givens,
   places: Places,
 ): readonly TableShape[] {
   const { x, columns } = table;
   const own = { from: x[0]!, to: x.at(-1)! };
-  const wanted = cells ? readEnds(cells, named) : own;
+  if (cells[0]) checkStep(cells[0].step, cells[0].where);
+  const wanted = cells[0] ? readEnds(cells[0], named) : own;
   const limits = { from: Math.max(wanted.from, own.from), to: Math.min(wanted.to, own.to) };
   return columns.map(({ heading, heights }) => {
     const polyline = truncate(x, heights, wanted, places.limits);
@@ -287,11 +368,11 @@ function tableShapes(
   });
 }
 
-function blockLimits({ words }: Block, where: string, isLine: boolean): LimitCells | null {
+function blockLimits({ words }: Block, where: string, isLine: boolean): readonly LimitCells[] {
   const step = words.get('step');
   if (step !== undefined) checkStep(step, where);
   const [from, to] = [words.get('from'), words.get('to')];
-  if (from === undefined && to === undefined) return null;
+  if (from === undefined && to === undefined) return [];
   for (const [name, cell] of [
     ['from', from],
     ['to', to],
@@ -303,5 +384,5 @@ function blockLimits({ words }: Block, where: string, isLine: boolean): LimitCel
         `add a ${isLine ? 'column' : 'row'} ${name} and its value`,
       );
   }
-  return { variable: DEFAULT_VARIABLE, from: from!, to: to!, where };
+  return [{ variable: DEFAULT_VARIABLE, from: from!, to: to!, step: null, where }];
 }

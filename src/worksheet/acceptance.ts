@@ -2,7 +2,7 @@
 import type { Cell, Range } from '../density/cells';
 import { CURRENT_METHOD } from '../density/givens';
 import { endCell } from '../density/limits';
-import type { Shape } from '../density/shape';
+import type { PlainShape } from '../density/shape';
 import type { Column } from '../draw/column';
 import { promisedAcceptance } from '../envelope/envelope';
 import type { Given } from '../formula/given';
@@ -78,7 +78,7 @@ function diagnose(
 }
 
 /** The inputs as they were understood. */
-function asRead(shape: Shape): readonly Line[] {
+function asRead(shape: PlainShape): readonly Line[] {
   const { from, to } = shape.limits;
   const ends = (variable: string): readonly Line[] => [
     [`${variable} from`, endCell(from)],
@@ -135,7 +135,7 @@ function proofLines({ envelope }: Proved): readonly Line[] {
 }
 
 /** What share of the area each term of a sum holds, which is seldom the number in front of it. */
-function termLines(shape: Shape, { envelope }: Proved): readonly Line[] {
+function termLines(shape: PlainShape, { envelope }: Proved): readonly Line[] {
   if (shape.kind === 'table') return [];
   const { sources, variable, givens } = shape;
   const sums = sources.filter((source) => termsOf(source).length > 0);

@@ -2,7 +2,7 @@
 import { areaUnder, poolOfTables } from '../density/blend';
 import type { Cell, Range } from '../density/cells';
 import { given } from '../density/cells';
-import type { FormulaShape, Shape, TableShape } from '../density/shape';
+import type { FormulaShape, PlainShape, TableShape } from '../density/shape';
 import { readShapes } from '../density/shape';
 import { DEFAULT_VARIABLE } from '../density/limits';
 import { InputError } from '../errors';
@@ -18,7 +18,7 @@ const SHARES = 'shares (argument 1)';
 const ROUNDING = 1e-9;
 
 interface Part {
-  readonly shape: Shape;
+  readonly shape: PlainShape;
   readonly share: number;
   readonly where: string;
 }
@@ -69,7 +69,7 @@ function isTable(part: Part): part is Part & { shape: TableShape } {
   return part.shape.kind === 'table';
 }
 
-function onlyShape(range: Range, where: string): Shape {
+function onlyShape(range: Range, where: string): PlainShape {
   const { shapes } = readShapes(given(range), null, [], {
     density: where,
     limits: where,
@@ -111,7 +111,7 @@ function endCell(end: number): Cell {
 }
 
 /** The area under the shape's own heights. */
-function areaOf(shape: Shape, where: string): number {
+function areaOf(shape: PlainShape, where: string): number {
   if (shape.kind === 'table') return areaUnder(shape.polyline);
   const { area, envelope } = prove(shape);
   const half = Math.trunc(envelope.exponent / 2);
@@ -126,7 +126,7 @@ function areaOf(shape: Shape, where: string): number {
 }
 
 /** The term, 0 outside its shape's own limits where the blend reaches further. */
-function withinLimits(text: string, shape: Shape, from: number, to: number): string {
+function withinLimits(text: string, shape: PlainShape, from: number, to: number): string {
   // A table's lines are 0 outside as they stand.
   if (shape.kind === 'table') return text;
   const { limits } = shape;
@@ -139,7 +139,7 @@ function withinLimits(text: string, shape: Shape, from: number, to: number): str
   return `IF(${conditions.length === 1 ? conditions[0] : `AND(${conditions.join(',')})`},${text},0)`;
 }
 
-function namesIn(shape: Shape): readonly string[] {
+function namesIn(shape: PlainShape): readonly string[] {
   return shape.kind === 'table' ? [] : shape.sources.flatMap(({ text }) => namesInText(text));
 }
 

@@ -1,7 +1,7 @@
 /** CASES: a what-if table, one column of draws a case, its rows paired. */
 import type { Cell, Range } from '../density/cells';
 import { given, isBlankOrZero, isText, passErrors, quoted, sizeOf } from '../density/cells';
-import type { Family, Overrides, Shape } from '../density/shape';
+import type { Family, Overrides, PlainShape } from '../density/shape';
 import { inLine } from '../density/shape';
 import { InputError } from '../errors';
 import { nameKey } from '../formula/compile';
@@ -53,7 +53,7 @@ export function cases(
 
 interface Case {
   readonly name: Cell;
-  readonly shape: Shape;
+  readonly shape: PlainShape;
   readonly where: string;
 }
 
@@ -104,7 +104,7 @@ interface ValueRow {
   readonly row: number;
 }
 
-function shapeOf(family: Family, rows: readonly ValueRow[], j: number, where: string): Shape {
+function shapeOf(family: Family, rows: readonly ValueRow[], j: number, where: string): PlainShape {
   const placed = rows.map(({ name, cells, row }) => ({
     name,
     end: endNamed(name),

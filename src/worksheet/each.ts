@@ -1,7 +1,7 @@
 /** EACH: one draw a line of conditions, such as days in store given the harvest of that row. */
 import type { Cell, Range } from '../density/cells';
 import { given, isBlankOrZero, isText, passErrors, quoted, sizeOf } from '../density/cells';
-import type { Family, Overrides, Shape } from '../density/shape';
+import type { Family, Overrides, PlainShape } from '../density/shape';
 import { inLine } from '../density/shape';
 import { drawEach } from '../draw/each';
 import type { RowsOfOne } from '../draw/each';
@@ -121,7 +121,7 @@ function shapeOf(
   names: readonly Name[],
   cells: readonly Cell[],
   where: string,
-): Shape {
+): PlainShape {
   const values: { name: string; value: Cell; where: string }[] = [];
   const ends: Record<string, { cell: Cell; where: string }> = {};
   names.forEach(({ name }, j) => {

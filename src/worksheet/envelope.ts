@@ -1,6 +1,6 @@
 /** ENVELOPE: the proved pieces, one a row. */
 import type { Cell, Range } from '../density/cells';
-import type { Shape } from '../density/shape';
+import type { PlainShape } from '../density/shape';
 import { readShapes } from '../density/shape';
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
@@ -82,7 +82,7 @@ export function onlyShape(
   limits: Range | null,
   givens: readonly Range[],
   places: typeof PLACES,
-): Shape {
+): PlainShape {
   const { shapes, lines } = readShapes(density, limits, givens, places);
   if (shapes.length > 1) {
     throw new InputError(

@@ -3,7 +3,7 @@ import type { Range } from '../density/cells';
 import { given, givenUnlessZero, isText, passErrors, quoted, singleCell } from '../density/cells';
 import { Givens, readGivens } from '../density/givens';
 import { DEFAULT_VARIABLE, readLimitCells } from '../density/limits';
-import type { Shape } from '../density/shape';
+import type { PlainShape } from '../density/shape';
 import { InputError } from '../errors';
 import { expectation } from '../exact/expect';
 import { compile } from '../formula/compile';
@@ -43,7 +43,7 @@ export function expect(
 
 function readQuantity(
   range: Range | null,
-  shape: Shape,
+  shape: PlainShape,
   limits: Range | null,
   givens: readonly Range[],
 ): Tape {
@@ -61,12 +61,13 @@ function readQuantity(
 
 /** The names that a quantity may use. */
 function namesOf(
-  shape: Shape,
+  shape: PlainShape,
   limits: Range | null,
   givens: readonly Range[],
 ): { variable: string; named: GivenMap } {
   if (shape.kind === 'formula') return { variable: shape.variable, named: shape.givens };
-  const variable = limits ? readLimitCells(limits, PLACES.limits).variable : DEFAULT_VARIABLE;
+  const [own] = limits ? readLimitCells(limits, PLACES.limits) : [];
+  const variable = own?.variable ?? DEFAULT_VARIABLE;
   const named = new Givens([variable]);
   for (const value of readGivens(givens, PLACES.givens).values) named.add(value);
   return { variable, named: named.map };

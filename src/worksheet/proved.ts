@@ -5,7 +5,7 @@
  * results do not depend on it.
  */
 import { LRUCache } from 'lru-cache';
-import type { Shape } from '../density/shape';
+import type { PlainShape } from '../density/shape';
 import { inLine } from '../density/shape';
 import type { Column } from '../draw/column';
 import { Drawer } from '../draw/column';
@@ -59,12 +59,12 @@ function remember<T extends Proved | Column>(
 }
 
 /** A drawer that is not kept, for one of so many shapes that they would crowd out all others. @throws {InputError} as prove. */
-export function drawerOf(shape: Shape): Drawer {
+export function drawerOf(shape: PlainShape): Drawer {
   return new Drawer(envelopeOf(shape).envelope);
 }
 
 /** The proof of a shape. @throws {InputError} when it cannot be proved. */
-export function prove(shape: Shape): Proved {
+export function prove(shape: PlainShape): Proved {
   const key = canonical(shape);
   return remember(key, () => {
     const { envelope, tape } = inLine(shape.kind === 'formula' ? shape.line : undefined, () =>
@@ -110,14 +110,14 @@ export function drawColumn(
   });
 }
 
-function envelopeOf(shape: Shape): { envelope: Envelope; tape: Tape | null } {
+function envelopeOf(shape: PlainShape): { envelope: Envelope; tape: Tape | null } {
   if (shape.kind === 'table') return { envelope: polylineEnvelope(shape.polyline), tape: null };
   const tape = compile(shape.sources, [shape.variable], shape.givens);
   const { from, to } = shape.limits;
   return { envelope: proveEnvelope(tape, from, to), tape };
 }
 
-function canonical(shape: Shape): string {
+function canonical(shape: PlainShape): string {
   if (shape.kind === 'table') return JSON.stringify([shape.polyline.x, shape.polyline.heights]);
   const { sources, variable, limits, givens } = shape;
   return JSON.stringify([

@@ -4,7 +4,7 @@
  */
 import type { Range } from '../density/cells';
 import { given, isBlank, quoted } from '../density/cells';
-import type { Shape, Shapes } from '../density/shape';
+import type { PlainShape, Shapes } from '../density/shape';
 import type { ListLine } from '../density/shapelist';
 import { readShapes } from '../density/shape';
 import { InputError } from '../errors';
@@ -17,7 +17,7 @@ import { readRows } from './rows';
 
 /** One column that is asked for. */
 export interface ColumnRequest {
-  readonly shape: Shape;
+  readonly shape: PlainShape;
   readonly seed: string;
   readonly label: string;
   readonly key: Key;
@@ -63,14 +63,14 @@ export function readDrawRequest(
 }
 
 function plainColumns(
-  shapes: readonly Shape[],
+  shapes: readonly PlainShape[],
   seed: Part,
   labels: readonly Part[],
 ): readonly ColumnRequest[] {
   return assignLabels(shapes, labels).map(({ shape, label }) => columnOf(shape, seed, label));
 }
 
-function columnOf(shape: Shape, seed: Part, label: Part): ColumnRequest {
+function columnOf(shape: PlainShape, seed: Part, label: Part): ColumnRequest {
   return { shape, seed: textOf(seed), label: textOf(label), key: keyFrom(seed, label) };
 }
 
@@ -126,10 +126,10 @@ function rowsOfLines(lines: readonly ListLine[] | null): Placed<Range> | null {
  * its heading with the label before it.
  */
 function assignLabels(
-  shapes: readonly Shape[],
+  shapes: readonly PlainShape[],
   labels: readonly Part[],
-): readonly { shape: Shape; label: Part }[] {
-  const headingOf = (shape: Shape): Part => ({
+): readonly { shape: PlainShape; label: Part }[] {
+  const headingOf = (shape: PlainShape): Part => ({
     value: shape.kind === 'table' ? shape.heading : '',
     where: DRAW_PLACES.label,
   });

@@ -148,7 +148,7 @@ describe('limits', () => {
         ['x', 0, 1],
         ['y', 0, 1],
       ],
-      '2 variables; give one row: only shapes of one variable can be drawn so far.',
+      '2 variables; give one: only DRAW, ENVELOPE, ACCEPTANCE, PROPOSALS and EXPECT take several.',
       '',
     ],
     [
