@@ -7,11 +7,11 @@
 import { answer, answerLater } from './host';
 
 /**
- * Draws random values that follow the density exactly: one column for each label, the same values until an input changes. In the unit of x.
+ * Draws random values that follow the density exactly: one column for each label, or for each of several variables, the same values until an input changes. In the unit of x.
  * @customfunction DRAW
  * @cancelable
- * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), a table of points (x and height, straight lines between), a block of two columns that names density, from, to, rows, seed, label and constants, or a list with a heading row (label, density, from, to and so on) and one input a line. Heights need no particular unit.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), or in several variables such as AND(early+late<=90,early*late>=400), a table of points (x and height, straight lines between), a block of two columns that names density, from, to, rows, seed, label and constants, or a list with a heading row (label, density, from, to and so on) and one input a line. Heights need no particular unit.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
  * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
  * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
@@ -35,7 +35,7 @@ export function draw(
  * @customfunction ENVELOPE
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  * @param invocation The call itself.
  */
@@ -53,7 +53,7 @@ export function envelope(
  * @customfunction ACCEPTANCE
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), a block of two columns, or a list of one input a line. Give the same cells as to DRAW.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Give the same as to DRAW.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
@@ -147,7 +147,7 @@ export function quantile(
  * @customfunction EXPECT
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
  * @param quantity A formula in x, such as x, x^2, MAX(0,x-60), or x>80 for a chance.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  * @param invocation The call itself.
@@ -167,7 +167,7 @@ export function expect(
  * @customfunction PROPOSALS
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
  * @param rows How many values, 1 to 100000, or two cells: first row and last row.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.

@@ -42,6 +42,14 @@ export class Picker {
     return shares;
   }
 
+  /** The pick for a number in [0, 1). */
+  pick(u: number): number {
+    const { rows, starts, cells } = this;
+    let i = cells[(u * cells.length) | 0]!;
+    while (u >= starts[i + 1]!) i++;
+    return rows[i]!;
+  }
+
   /** The picks, from 0, of rows `first` … `first + n − 1` under a key. */
   picks(key: Key, first: number, n: number, method = 0): Int32Array {
     const stream = new RowStream(key, method, PURPOSE.pick);

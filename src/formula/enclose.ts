@@ -1,11 +1,12 @@
 /**
- * A tape over an interval of its one variable: enclosures of f, f′ and f″, and of
- * ln|f| with its derivatives where the formula's structure gives them.
+ * A tape over an interval of its variable, or over a box of several: enclosures of f, f′
+ * and f″, and of ln|f| with its derivatives where the formula's structure gives them. Over
+ * a box the derivatives are those along one direction.
  *
  * Source: the rules of src/METHOD.md, "A piece". ln f is built structurally
  * (product → sum, EXP(u) → u) and meets the direct enclosure, which keeps products
  * of EXPs tight and lets a density that overflows doubles be scaled by 2^-exponent.
- * Not handled: unbounded intervals, several variables.
+ * Not handled: unbounded intervals.
  * The file is long because the enclosures of a step depend on each other.
  */
 import type { Interval } from '../numeric/interval';
@@ -45,8 +46,9 @@ export interface Enclosure {
   readonly density: Jet;
   /** ln of the unscaled density. */
   readonly logarithm: Interval;
-  /** The slope of that. */
+  /** The slope of that, and its second derivative. */
   readonly logarithmSlope: Interval;
+  readonly logarithmBend: Interval;
   defined: Defined;
   /** A step that passes its level once inside; null: none is known. */
   turn: Turn | null;
@@ -93,13 +95,14 @@ export class Encloser {
   private readonly hasOwnLog: boolean[];
   private readonly defined: Uint8Array;
   private readonly active: readonly (Step & { place: number })[];
-  private readonly variable: number;
+  private readonly variables: readonly number[];
   private readonly shift = I.interval();
   private readonly atPoint: PointValues;
   private readonly result: Enclosure = {
     density: J.jet(),
     logarithm: I.interval(),
     logarithmSlope: I.interval(),
+    logarithmBend: I.interval(),
     defined: Defined.Everywhere,
     turn: null,
   };
@@ -110,7 +113,7 @@ export class Encloser {
     readonly exponent = 0,
   ) {
     const { steps, root } = tape;
-    this.variable = tape.variables[0]!;
+    this.variables = tape.variables;
     this.jets = steps.map((step) => {
       const u = J.jet();
       if (step.enclosure) {
@@ -131,6 +134,11 @@ export class Encloser {
     this.atPoint = this.pointValues();
   }
 
+  /** Steps that are worked at every look. */
+  get nSteps(): number {
+    return this.active.length;
+  }
+
   /** Room for `at`. */
   pointValues(): PointValues {
     return {
@@ -147,8 +155,35 @@ export class Encloser {
   /** Encloses every step at the double x. */
   at(x: number, out: PointValues): void {
     out.x = x;
-    const { values, defined } = out;
-    if (this.variable >= 0) I.set(values[this.variable]!, x, x);
+    const place = this.variables[0]!;
+    if (place >= 0) I.set(out.values[place]!, x, x);
+    this.valuesAt(out);
+    this.finishPoint(out);
+  }
+
+  /** Encloses the scaled density at a point, one coordinate a variable; tells how far it is defined there. */
+  densityAtPoint(point: ArrayLike<number>, out: Interval): Defined {
+    const at = this.atPoint;
+    this.variables.forEach((place, i) => {
+      if (place >= 0) I.set(at.values[place]!, point[i]!, point[i]!);
+    });
+    this.valuesAt(at);
+    const { root } = this.tape;
+    const state = at.defined[root]! as Defined;
+    const value = at.values[root]!;
+    if (state !== Defined.Everywhere) I.setEntire(out);
+    else if (this.isTold(value)) I.copy(out, value);
+    else I.copy(out, this.overBox(point, point, []).density.v);
+    return state;
+  }
+
+  /** True where the direct value neither overflows nor is lost to underflow; else the logarithm may still know it. */
+  private isTold({ lo, hi }: Interval): boolean {
+    return this.exponent === 0 && hi < Infinity && (lo !== 0 || hi === 0);
+  }
+
+  /** Encloses every step at the point that the variables' values stand at. */
+  private valuesAt({ values, defined }: PointValues): void {
     for (const { operation, a, b, c, place } of this.active) {
       const u = values[a]!;
       const v = values[b]!;
@@ -165,7 +200,6 @@ export class Encloser {
       if (state === Defined.Nowhere) I.setEntire(values[place]!);
       else operation.enclose(values[place]!, u, v, values[c]!);
     }
-    this.finishPoint(out);
   }
 
   private finishPoint(out: PointValues): void {
@@ -177,8 +211,7 @@ export class Encloser {
       return;
     }
     I.copy(density, out.values[root]!);
-    // Where the direct value overflows or is lost to underflow, the logarithm may still know it.
-    if (this.exponent !== 0 || density.hi === Infinity || (density.lo === 0 && density.hi > 0)) {
+    if (!this.isTold(density)) {
       const there = this.over(out.x, out.x, null, null);
       I.copy(density, there.density.v);
       I.copy(out.logarithm, there.logarithm);
@@ -197,15 +230,39 @@ export class Encloser {
    * the next call.
    */
   over(a: number, b: number, atA: PointValues | null, atB: PointValues | null): Enclosure {
-    const { jets, logs, defined } = this;
-    if (this.variable >= 0) {
-      const x = jets[this.variable]!;
-      I.set(x.v, a, b);
-      I.set(x.d, 1, 1);
-      I.set(x.h, 0, 0);
-      const log = logs[this.variable];
-      if (log) logarithmOf(log, x);
-    }
+    this.setVariable(0, a, b, 1);
+    const mayTurn = this.stepsOver(atA, atB);
+    const log = this.logs[this.tape.root]!;
+    if (atA && atB && this.defined[this.tape.root] === Defined.Everywhere)
+      tightenByEnds(log, atA.logarithm, atB.logarithm, b - a);
+    return this.finish(mayTurn);
+  }
+
+  /**
+   * Encloses everything over the box [lo, hi], with derivatives along the sum of some axes.
+   * The result is valid until the next call; it tells no turns.
+   */
+  overBox(lo: ArrayLike<number>, hi: ArrayLike<number>, axes: readonly number[]): Enclosure {
+    for (let i = 0; i < this.variables.length; i++)
+      this.setVariable(i, lo[i]!, hi[i]!, axes.includes(i) ? 1 : 0);
+    this.stepsOver(null, null);
+    return this.finish(false);
+  }
+
+  private setVariable(i: number, lo: number, hi: number, slope: number): void {
+    const place = this.variables[i]!;
+    if (place < 0) return;
+    const x = this.jets[place]!;
+    I.set(x.v, lo, hi);
+    I.set(x.d, slope, slope);
+    I.set(x.h, 0, 0);
+    const log = this.logs[place];
+    if (log) logarithmOf(log, x);
+  }
+
+  /** Encloses every step; true if one of them may turn. */
+  private stepsOver(atA: PointValues | null, atB: PointValues | null): boolean {
+    const { jets, defined } = this;
     let mayTurn = false;
     for (const { operation, a: p, b: q, c: r, place } of this.active) {
       const out = jets[place]!;
@@ -227,10 +284,7 @@ export class Encloser {
       this.logOf(place, operation.logarithm, p, q, r);
       if (atA && atB && state === Defined.Everywhere) tightenMonotone(out, place, atA, atB);
     }
-    const log = this.logs[this.tape.root]!;
-    if (atA && atB && this.defined[this.tape.root] === Defined.Everywhere)
-      tightenByEnds(log, atA.logarithm, atB.logarithm, b - a);
-    return this.finish(mayTurn);
+    return mayTurn;
   }
 
   private logOf(
@@ -274,6 +328,7 @@ export class Encloser {
     else this.scaleRoot(result.density, this.jets[root]!, log);
     I.copy(result.logarithm, log.v);
     I.copy(result.logarithmSlope, log.d);
+    I.copy(result.logarithmBend, log.h);
     result.turn = mayTurn ? this.findTurn() : null;
     return result;
   }

@@ -2,9 +2,9 @@
  * A formula whose outermost operation is + taken apart into its terms, each a formula
  * of its own with its text. Not handled: sums within brackets, SUM.
  */
-import { tokenize } from '@borgar/fx';
 import type { Source } from './compile';
 import { parse } from './parse';
+import { splitText } from './split';
 
 /** The terms of a sum in order; none when the formula is something else. */
 export function termsOf({ tree, text, where }: Source): readonly Source[] {
@@ -13,18 +13,7 @@ export function termsOf({ tree, text, where }: Source): readonly Source[] {
     tree.args.length === 2 &&
     (tree.operator === '+' || tree.operator === '-');
   if (!isSum) return [];
-  const texts = [''];
-  let depth = 0;
-  let isAfterOperand = false;
-  for (const { type, value } of tokenize(text.trim().replace(/^=/, ''))) {
-    if (depth === 0 && value === '+' && isAfterOperand) texts.push('');
-    else texts[texts.length - 1] += value;
-    if (value === '(' || value === '{') depth++;
-    if (value === ')' || value === '}') depth--;
-    if (type !== 'whitespace') {
-      isAfterOperand = type !== 'operator' || value === ')' || value === '}' || value === '%';
-    }
-  }
+  const texts = splitText(text, ({ value, isAfterOperand }) => value === '+' && isAfterOperand);
   if (texts.length < 2) return [];
-  return texts.map((each) => ({ text: each.trim(), where, tree: parse(each, where) }));
+  return texts.map((each) => ({ text: each, where, tree: parse(each, where) }));
 }

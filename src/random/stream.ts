@@ -14,6 +14,9 @@
  * are picked or thinned do not share the numbers of draws under the same seed and label. So do
  * purposes 4, "shuffle", and 5, "shift", for the strata of a stratified column.
  *
+ * Purposes from 16 on, "place", serve proposals of several variables: with words 0 and 1 as of
+ * a further number, block b of a proposal has purpose 16 + b and gives numbers 2b and 2b + 1.
+ *
  * A first block serves two rows: its words 0, 1 the even row, its words 2, 3 the odd one. A
  * further block gives the pair u (words 0, 1) and v (words 2, 3) of one attempt: attempt k ≥ 1
  * is a fresh proposal and uses both; attempt 0 continues the row's first number and uses only v.
@@ -25,7 +28,15 @@ import type { Key } from './key';
 import { fillFractions, fraction, philox4x32 } from './philox';
 
 /** What the numbers serve: word 2 of the counter. */
-export const PURPOSE = { first: 0, further: 1, pick: 2, thin: 3, shuffle: 4, shift: 5 } as const;
+export const PURPOSE = {
+  first: 0,
+  further: 1,
+  pick: 2,
+  thin: 3,
+  shuffle: 4,
+  shift: 5,
+  place: 16,
+} as const;
 
 /** The numbers of one key, first ones for one purpose; holds no position, so calls may come in any order. */
 export class RowStream {
@@ -65,6 +76,19 @@ export class RowStream {
     philox4x32(row, attempt, PURPOSE.further, this.method, this.k0, this.k1, block);
     out[0] = fraction(block[0]!, block[1]!);
     out[1] = fraction(block[2]!, block[3]!);
+  }
+
+  /**
+   * Writes `count` numbers of an attempt of a row, a place in several variables, to out.
+   * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
+   */
+  place(row: number, attempt: number, out: Float64Array, count: number): void {
+    const { block } = this;
+    for (let b = 0; 2 * b < count; b++) {
+      philox4x32(row, attempt, PURPOSE.place + b, this.method, this.k0, this.k1, block);
+      out[2 * b] = fraction(block[0]!, block[1]!);
+      out[2 * b + 1] = fraction(block[2]!, block[3]!);
+    }
   }
 
   /**

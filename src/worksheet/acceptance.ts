@@ -1,25 +1,20 @@
 /** ACCEPTANCE: how exactly the draws of DRAW with the same arguments came about. */
-import type { Cell, Range } from '../density/cells';
+import type { Range } from '../density/cells';
 import { CURRENT_METHOD } from '../density/givens';
 import { endCell } from '../density/limits';
 import type { PlainShape } from '../density/shape';
 import type { Column } from '../draw/column';
 import { promisedAcceptance } from '../envelope/envelope';
-import type { Given } from '../formula/given';
-import { waitingPValue, wilson } from '../evidence/proportion';
+import { waitingPValue } from '../evidence/proportion';
 import { sharesOfTerms } from '../exact/terms';
 import { compile } from '../formula/compile';
 import { termsOf } from '../formula/terms';
 import type { Proved } from './proved';
 import { drawColumn, prove } from './proved';
 import type { ColumnRequest, DrawRequest } from './request';
-import { readDrawRequest } from './request';
-
-const CONFIDENCE = 0.95;
-const CAUTION =
-  'the draws follow the stated shape; they do not make the shape right, and they do not replace licensed or professional judgement';
-
-type Line = readonly [item: string, value: Cell];
+import { readAnyDrawRequest } from './request';
+import { diagnoseSeveral } from './severalacceptance';
+import { CAUTION, densityLines, givenLines, intervalLines, type Line, shortened } from './lines';
 
 /**
  * The diagnostics of a draw, its inputs as read first.
@@ -35,7 +30,15 @@ export function acceptance(
   label: Range | null,
   givens: readonly Range[],
 ): Range {
-  const request = readDrawRequest(density, limits, rows, seed, label, givens);
+  const { several, plain: request } = readAnyDrawRequest(
+    density,
+    limits,
+    rows,
+    seed,
+    label,
+    givens,
+  );
+  if (several) return diagnoseSeveral(several);
   const tables = request.columns.map((column) => diagnose(column, request));
   return joined(tables);
 }
@@ -91,29 +94,7 @@ function asRead(shape: PlainShape): readonly Line[] {
     return [['density', `table of points${name}, ${lines}`], ...ends('x')];
   }
   const { sources, variable, givens } = shape;
-  const lines = sources.map(({ text }, i): Line => [
-    i === 0 ? 'density' : `density, times`,
-    withoutSign(text),
-  ]);
-  const named = [...givens].map(([name, given]): Line => [`given ${name}`, givenAsRead(given)]);
-  return [...lines, ...ends(variable), ...named];
-}
-
-/** A constant itself; of a list or a function what tells whether all of it was read. */
-function givenAsRead(given: Given): Cell {
-  if (typeof given === 'number') return given;
-  if (given.kind === 'function') return `function through ${given.nPoints} points`;
-  const { values } = given;
-  const nZeros = values.filter((value) => value === 0).length;
-  const least = values.reduce((a, b) => Math.min(a, b));
-  const most = values.reduce((a, b) => Math.max(a, b));
-  const zeros = nZeros === 0 ? '' : `, ${nZeros} of them 0 or blank`;
-  return `list of ${values.length} values from ${least} to ${most}${zeros}`;
-}
-
-/** A text that begins with = would be taken for a formula of the sheet. */
-function withoutSign(text: string): string {
-  return text.trim().replace(/^=\s*/, '');
+  return [...densityLines(sources), ...ends(variable), ...givenLines(givens)];
 }
 
 function proofLines({ envelope }: Proved): readonly Line[] {
@@ -152,20 +133,12 @@ function termLines(shape: PlainShape, { envelope }: Proved): readonly Line[] {
   ]);
 }
 
-function shortened(text: string): string {
-  return text.length <= 60 ? text : `${text.slice(0, 59)}…`;
-}
-
 function drawLines({ envelope, area }: Proved, column: Column, nRows: number): readonly Line[] {
   const { proposals, settledAtOnce, longestWait, nearTies } = column;
   const isTable = envelope.densityAt === null;
   const expected = isTable ? 1 : Math.min(1, area / envelope.upperArea);
-  const { lo, hi } = wilson(nRows, proposals, CONFIDENCE);
   return [
-    ['proposals', proposals],
-    ['acceptance', nRows / proposals],
-    ['acceptance, 95 % interval from', lo],
-    ['acceptance, 95 % interval to', hi],
+    ...intervalLines(nRows, proposals),
     ['acceptance promised by the proof', isTable ? 1 : promisedAcceptance(envelope)],
     ['acceptance expected from the areas', expected],
     ['p-value of observed against expected', waitingPValue(nRows, proposals, expected)],

@@ -1,11 +1,12 @@
-/** DRAW: exact draws, one column a label. */
+/** DRAW: exact draws, one column a label, or one a variable of several. */
 import type { Range } from '../density/cells';
 import { drawColumn, prove } from './proved';
-import { readDrawRequest } from './request';
+import { readAnyDrawRequest } from './request';
+import { drawRows, proveSeveral } from './several';
 
 /**
  * Draws that follow the density exactly.
- * Shapes: rows × columns of bare values, one column per label or column of heights.
+ * Shapes: rows × columns of bare values, one column per label, column of heights or variable.
  * Guarantee: exact in the sense of src/METHOD.md; row i depends on shape, seed, label and i alone.
  * @throws {InputError} when an argument cannot be read or the density not be proved.
  * @throws {CellErrorPassed} when a cell holds an error value.
@@ -18,10 +19,15 @@ export function draw(
   label: Range | null,
   givens: readonly Range[],
 ): Range {
-  const { columns, firstRow, nRows } = readDrawRequest(density, limits, rows, seed, label, givens);
-  const drawn = columns.map(
-    ({ shape, key }) => drawColumn(prove(shape), key, firstRow, nRows).values,
-  );
+  const request = readAnyDrawRequest(density, limits, rows, seed, label, givens);
+  const { firstRow, nRows } = request.several ?? request.plain;
+  const drawn = request.several
+    ? request.several.columns.flatMap(
+        ({ shape, key }) => drawRows(proveSeveral(shape), key, firstRow, nRows).columns,
+      )
+    : request.plain.columns.map(
+        ({ shape, key }) => drawColumn(prove(shape), key, firstRow, nRows).values,
+      );
   // One column is the common case, and takes a third of the time when made by itself.
   if (drawn.length === 1) return Array.from(drawn[0]!, (value) => [value]);
   return Array.from({ length: nRows }, (_, i) => drawn.map((values) => values[i]!));

@@ -1,12 +1,14 @@
-/** ENVELOPE: the proved pieces, one a row. */
+/** ENVELOPE: the proved pieces or boxes, one a row. */
 import type { Cell, Range } from '../density/cells';
 import type { PlainShape } from '../density/shape';
-import { readShapes } from '../density/shape';
+import { readAnyShapes, readShapes } from '../density/shape';
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
 import type { Piece } from '../envelope/piece';
 import { InputError } from '../errors';
+import { boxRows } from './boxrows';
 import { prove } from './proved';
+import { proveSeveral } from './several';
 
 const HEADINGS = [
   'from',
@@ -24,7 +26,8 @@ const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)',
  * The pieces of the envelope: heights of the two lines at both ends, the share of
  * proposals that fall into the piece and the acceptance its proof promises there.
  * A side without a limit, or a pole at a limit, has a row of its own: one end `unbounded`, no lower line.
- * Shapes: a heading row, then pieces × 8. Units: x as in the density; heights × 2^-exponent (ACCEPTANCE tells it).
+ * Shapes: a heading row, then pieces × 8; for several variables boxes × columns (boxrows.ts).
+ * Units: x as in the density; heights × 2^-exponent (ACCEPTANCE tells it).
  * @throws {InputError} @throws {CellErrorPassed} as DRAW does.
  */
 export function envelope(
@@ -32,6 +35,8 @@ export function envelope(
   limits: Range | null,
   givens: readonly Range[],
 ): Range {
+  const [any] = readAnyShapes(density, limits, givens, PLACES).shapes;
+  if (any?.kind === 'several') return boxRows(proveSeveral(any).envelope);
   const proved = prove(onlyShape(density, limits, givens, PLACES)).envelope;
   const { pieces, hats } = proved;
   const first = pieces[0]!.from;

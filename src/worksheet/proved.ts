@@ -1,10 +1,4 @@
-/**
- * Proofs and columns, kept so that DRAW, ACCEPTANCE, ENVELOPE and PROFILE of one
- * shape prove and draw once. Keyed by the canonical arguments; least recently used
- * results go first; at most 64 MB. It is the only state that outlives a call, and
- * results do not depend on it.
- */
-import { LRUCache } from 'lru-cache';
+/** Proofs and columns of shapes of one variable, each made once while it is kept (cache.ts). */
 import type { PlainShape } from '../density/shape';
 import { inLine } from '../density/shape';
 import type { Column } from '../draw/column';
@@ -17,9 +11,10 @@ import { Shares } from '../exact/shares';
 import { compile } from '../formula/compile';
 import type { Tape } from '../formula/tape';
 import { powerOfTwo } from '../numeric/float';
+import type { GivenMap } from '../formula/given';
 import type { Key } from '../random/key';
+import { remember } from './cache';
 
-const MAX_BYTES = 64 * 1024 * 1024;
 /** What a piece takes in its envelope, guide table and exact shares, generously. */
 const BYTES_PER_PIECE = 2000;
 const BYTES_PER_STEP = 1500;
@@ -35,27 +30,6 @@ export interface Proved {
   readonly shares: Shares;
   /** The area under the scaled density, within its proved bounds. */
   readonly area: number;
-}
-
-interface Entry {
-  readonly value: Proved | Column;
-  readonly bytes: number;
-}
-
-const cache = new LRUCache<string, Entry>({
-  maxSize: MAX_BYTES,
-  sizeCalculation: ({ bytes }) => bytes,
-});
-
-function remember<T extends Proved | Column>(
-  key: string,
-  make: () => { value: T; bytes: number },
-): T {
-  const known = cache.get(key);
-  if (known) return known.value as T;
-  const made = make();
-  cache.set(key, { value: made.value, bytes: Math.max(1, Math.ceil(made.bytes + 2 * key.length)) });
-  return made.value;
 }
 
 /** A drawer that is not kept, for one of so many shapes that they would crowd out all others. @throws {InputError} as prove. */
@@ -125,9 +99,14 @@ function canonical(shape: PlainShape): string {
     variable,
     limits.from,
     limits.to,
-    [...givens].map(([name, given]) => [
-      name,
-      typeof given === 'number' ? given : given.fingerprint,
-    ]),
+    canonicalGivens(givens),
+  ]);
+}
+
+/** Givens by name, long ones by their fingerprints. */
+export function canonicalGivens(givens: GivenMap): unknown {
+  return [...givens].map(([name, given]) => [
+    name,
+    typeof given === 'number' ? given : given.fingerprint,
   ]);
 }

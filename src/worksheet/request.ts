@@ -4,9 +4,9 @@
  */
 import type { Range } from '../density/cells';
 import { given, isBlank, quoted } from '../density/cells';
-import type { PlainShape, Shapes } from '../density/shape';
+import type { PlainShape, SeveralShape, Shape, Shapes } from '../density/shape';
 import type { ListLine } from '../density/shapelist';
-import { readShapes } from '../density/shape';
+import { readAnyShapes, readShapes } from '../density/shape';
 import { InputError } from '../errors';
 import type { Key } from '../random/key';
 import { keyText } from '../random/key';
@@ -15,16 +15,16 @@ import { argumentOr, keyFrom, keyPart, readLabels, readSeed, textOf } from './ke
 import type { Placed } from './rows';
 import { readRows } from './rows';
 
-/** One column that is asked for. */
-export interface ColumnRequest {
-  readonly shape: PlainShape;
+/** One column that is asked for; one a variable for a shape of several. */
+export interface ColumnRequest<S extends Shape = PlainShape> {
+  readonly shape: S;
   readonly seed: string;
   readonly label: string;
   readonly key: Key;
 }
 
-export interface DrawRequest {
-  readonly columns: readonly ColumnRequest[];
+export interface DrawRequest<S extends Shape = PlainShape> {
+  readonly columns: readonly ColumnRequest<S>[];
   readonly firstRow: number;
   readonly nRows: number;
   readonly notes: readonly string[];
@@ -48,7 +48,45 @@ export function readDrawRequest(
   label: Range | null,
   givens: readonly Range[],
 ): DrawRequest {
-  const shapes = readShapes(density, limits, givens, DRAW_PLACES);
+  return requestOf(readShapes(density, limits, givens, DRAW_PLACES), rows, seed, label);
+}
+
+/** A request for columns, or for the rows of one shape of several variables. */
+export type AnyDrawRequest =
+  | { readonly several: null; readonly plain: DrawRequest }
+  | { readonly several: DrawRequest<SeveralShape>; readonly plain: null };
+
+/** As `readDrawRequest`, for functions that take several variables too. */
+export function readAnyDrawRequest(
+  density: Range | null,
+  limits: Range | null,
+  rows: Range | null,
+  seed: Range | null,
+  label: Range | null,
+  givens: readonly Range[],
+): AnyDrawRequest {
+  const shapes = readAnyShapes(density, limits, givens, DRAW_PLACES);
+  const several = shapes.shapes.filter((shape) => shape.kind === 'several');
+  const plain = shapes.shapes.filter((shape) => shape.kind !== 'several');
+  if (several.length === 0)
+    return { several: null, plain: requestOf({ ...shapes, shapes: plain }, rows, seed, label) };
+  const request = requestOf({ ...shapes, shapes: several }, rows, seed, label);
+  if (request.columns.length > 1) {
+    throw new InputError(
+      DRAW_PLACES.label,
+      `${request.columns.length} labels for a shape of ${several[0]!.axes.length} variables`,
+      'give one label; the columns are the variables',
+    );
+  }
+  return { several: request, plain: null };
+}
+
+function requestOf<S extends Shape>(
+  shapes: Shapes<S>,
+  rows: Range | null,
+  seed: Range | null,
+  label: Range | null,
+): DrawRequest<S> {
   const { firstRow, nRows } = readRows(
     argumentOr(rows, shapes, 'rows', DRAW_PLACES) ??
       rowsOfLines(shapes.lines) ?? { range: given(rows), where: DRAW_PLACES.rows },
@@ -62,25 +100,25 @@ export function readDrawRequest(
   return { columns, firstRow, nRows, notes: shapes.notes };
 }
 
-function plainColumns(
-  shapes: readonly PlainShape[],
+function plainColumns<S extends Shape>(
+  shapes: readonly S[],
   seed: Part,
   labels: readonly Part[],
-): readonly ColumnRequest[] {
+): readonly ColumnRequest<S>[] {
   return assignLabels(shapes, labels).map(({ shape, label }) => columnOf(shape, seed, label));
 }
 
-function columnOf(shape: PlainShape, seed: Part, label: Part): ColumnRequest {
+function columnOf<S extends Shape>(shape: S, seed: Part, label: Part): ColumnRequest<S> {
   return { shape, seed: textOf(seed), label: textOf(label), key: keyFrom(seed, label) };
 }
 
 /** One column per line of a list: its own label, after the argument's if there is one, and its own seed unless one is given. */
-function lineColumns(
-  { shapes }: Shapes,
+function lineColumns<S extends Shape>(
+  { shapes }: Shapes<S>,
   lines: readonly ListLine[],
   seedCells: Placed<Range> | null,
   labels: readonly Part[],
-): readonly ColumnRequest[] {
+): readonly ColumnRequest<S>[] {
   if (labels.length > 1) {
     throw new InputError(
       DRAW_PLACES.label,
@@ -125,11 +163,11 @@ function rowsOfLines(lines: readonly ListLine[] | null): Placed<Range> | null {
  * One column per label for one shape; one per column of heights otherwise, named by
  * its heading with the label before it.
  */
-function assignLabels(
-  shapes: readonly PlainShape[],
+function assignLabels<S extends Shape>(
+  shapes: readonly S[],
   labels: readonly Part[],
-): readonly { shape: PlainShape; label: Part }[] {
-  const headingOf = (shape: PlainShape): Part => ({
+): readonly { shape: S; label: Part }[] {
+  const headingOf = (shape: S): Part => ({
     value: shape.kind === 'table' ? shape.heading : '',
     where: DRAW_PLACES.label,
   });
@@ -158,7 +196,7 @@ function assignLabels(
 }
 
 function refuseEqualLabels(
-  columns: readonly ColumnRequest[],
+  columns: readonly ColumnRequest<Shape>[],
   lines: readonly ListLine[] | null,
 ): void {
   const seen = new Set<string>();
