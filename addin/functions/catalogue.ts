@@ -7,21 +7,26 @@ import {
   above,
   acceptance,
   below,
+  bestOf,
   blend,
   cases,
   draw,
   each,
   envelope,
+  exceedance,
   expect,
   fromBins,
   fromData,
   fromPercentiles,
   InputError,
+  pairedChange,
   pick,
   profile,
   proposals,
   quantile,
+  rowsNeeded,
   stratified,
+  summary,
   thin,
 } from '../../src/index';
 import type { Range } from '../../src/index';
@@ -86,6 +91,15 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
   THIN: ([table = null, weights = null, seed = null, label = null, bound = null]) =>
     thin(table, weights, seed, label, bound),
   BLEND: ([shares = null], shapes) => blend(shares, shapes),
+  SUMMARY: ([values = null, shares = null, confidence = null, weights = null]) =>
+    summary(values, shares, confidence, weights),
+  EXCEEDANCE: ([values = null, threshold = null, confidence = null, weights = null]) =>
+    exceedance(values, threshold, confidence, weights),
+  ROWSNEEDED: ([values = null, share = null, halfwidth = null, confidence = null]) =>
+    rowsNeeded(values, share, halfwidth, confidence),
+  PAIREDCHANGE: ([before = null, after = null, confidence = null]) =>
+    pairedChange(before, after, confidence),
+  BESTOF: ([table = null, largest = null, confidence = null]) => bestOf(table, largest, confidence),
 };
 
 interface FunctionMetadata {

@@ -336,3 +336,76 @@ export function thin(
 ): any[][] {
   return answer('THIN', [table, weights, seed, label, bound], null);
 }
+
+/**
+ * Turns columns of draws into figures with intervals: mean, standard deviation, percentiles by the rule of PERCENTILE.INC, and the mean of the lowest and of the highest share. A heading row, then one row a figure; for each column its value and the two ends of its interval, in its unit. Percentile intervals hold whatever the shape. Assumes independent rows: for STRATIFIED columns the intervals are too wide.
+ * @customfunction SUMMARY
+ * @param values One or more columns of numbers, with or without a heading row. A blank counts as 0; zeros at the end are counted.
+ * @param shares Fractions between 0 and 1: each gives a percentile; up to 0.5 also the mean of the lowest rows, from 0.5 on that of the highest. Left out: 0.05, 0.1, 0.25, 0.5, 0.75, 0.9, 0.95.
+ * @param confidence Fraction between 0 and 1. Left out: 0.95.
+ * @param weights One number of 0 or more for each row, in any unit: how much of the whole it stands for. Rows' worth tells how many rows of equal weight they amount to. Left out: all alike.
+ */
+export function summary(
+  values: any[][],
+  shares?: any[][],
+  confidence?: any[][],
+  weights?: any[][],
+): any[][] {
+  return answer('SUMMARY', [values, shares, confidence, weights], null);
+}
+
+/**
+ * Gives the chance that a value lies above, exactly at and below a threshold, or the chance of TRUE, each with its interval, as fractions of 1. Two columns: item and value. Where fewer than 30 rows count, or all but fewer than 30, the interval is the exact one (Clopper and Pearson), else Wilson's. Assumes independent rows: for STRATIFIED columns the intervals are too wide.
+ * @customfunction EXCEEDANCE
+ * @param values One or more columns of numbers, or of TRUE and FALSE such as A2:A2001>60, with or without a heading row. A blank counts as 0 or FALSE.
+ * @param threshold A number in the unit of the values. Left out for TRUE and FALSE.
+ * @param confidence Fraction between 0 and 1. Left out: 0.95.
+ * @param weights One number of 0 or more for each row, in any unit: how much of the whole it stands for. Left out: all alike.
+ */
+export function exceedance(
+  values: any[][],
+  threshold?: any[][],
+  confidence?: any[][],
+  weights?: any[][],
+): any[][] {
+  return answer('EXCEEDANCE', [values, threshold, confidence, weights], null);
+}
+
+/**
+ * Tells how many rows a wanted precision takes, judged by the rows of a first column, with the interval that this column's own noise leaves. Two columns: item and value. Assumes independent rows: a STRATIFIED column needs fewer.
+ * @customfunction ROWSNEEDED
+ * @param values A first column of a few hundred or thousand rows, with or without a heading.
+ * @param share The percentile that is wanted, as fraction between 0 and 1. Left out: the mean.
+ * @param halfwidth How far the ends of the interval may be from the value, in the unit of the values.
+ * @param confidence Fraction between 0 and 1. Left out: 0.95.
+ */
+export function rowsNeeded(
+  values: any[][],
+  share?: any[][],
+  halfwidth?: any[][],
+  confidence?: any[][],
+): any[][] {
+  return answer('ROWSNEEDED', [values, share, halfwidth, confidence], null);
+}
+
+/**
+ * Compares two columns row by row, such as the margin before and after another press: mean change with its interval, share of rows that rise and that fall, and how many rows it would have taken without pairing. Two columns: item and value, in the unit of the values. Assumes rows that are independent of one another: for STRATIFIED columns the intervals are too wide.
+ * @customfunction PAIREDCHANGE
+ * @param before A column of numbers, with or without a heading.
+ * @param after A column of as many numbers, each belonging to the same scenario as the one beside it.
+ * @param confidence Fraction between 0 and 1. Left out: 0.95.
+ */
+export function pairedChange(before: any[][], after: any[][], confidence?: any[][]): any[][] {
+  return answer('PAIREDCHANGE', [before, after, confidence], null);
+}
+
+/**
+ * Compares cases that were worked out for the same scenarios: for each the mean and its place among the means, the chance to be the best of its row, and the average regret, which is how far it is from the best of the same row. A heading row, then one row a case. The figures rest on the stated shapes; they do not replace judgement about what is not in them. Assumes independent rows: for STRATIFIED columns the intervals are too wide.
+ * @customfunction BESTOF
+ * @param table One column a case and one row a scenario, with or without a heading row of case names.
+ * @param largest TRUE if the largest value is the best, such as a margin; FALSE if the smallest is, such as a cost.
+ * @param confidence Fraction between 0 and 1. Left out: 0.95.
+ */
+export function bestOf(table: any[][], largest: any[][], confidence?: any[][]): any[][] {
+  return answer('BESTOF', [table, largest, confidence], null);
+}

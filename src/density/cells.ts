@@ -98,6 +98,10 @@ export function lineOfCells(range: Range, where: Where): readonly Cell[] {
 
 /** How large a range is, for messages: `1 row and 3 columns`. */
 export function sizeOf(range: Range): string {
-  const counted = (n: number, noun: string): string => `${n} ${noun}${n === 1 ? '' : 's'}`;
   return `${counted(range.length, 'row')} and ${counted(range[0]!.length, 'column')}`;
+}
+
+/** `1 row`, `2 rows`. */
+export function counted(n: number, noun: string): string {
+  return `${n} ${noun}${n === 1 ? '' : 's'}`;
 }

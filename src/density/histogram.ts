@@ -24,7 +24,7 @@ export function steps(edges: readonly number[], shares: readonly number[]): read
 }
 
 /** The quantile of sorted values with straight lines between the order statistics, as PERCENTILE.INC has it. */
-export function sampleQuantile(sorted: readonly number[], share: number): number {
+export function sampleQuantile(sorted: ArrayLike<number>, share: number): number {
   const place = (sorted.length - 1) * share;
   const i = Math.floor(place);
   const [low, high] = [sorted[i]!, sorted[Math.min(i + 1, sorted.length - 1)]!];

@@ -3,6 +3,7 @@ import type { Range } from '../density/cells';
 import type { Point } from '../density/histogram';
 import { binCount, countInBins, steps } from '../density/histogram';
 import { InputError } from '../errors';
+import { requireShare } from './confidence';
 import type { Line } from './numbers';
 import { numberLine, optionalNumber, requireRising } from './numbers';
 
@@ -57,16 +58,8 @@ export function fromPercentiles(
 ): Range {
   const shares = numberLine(levels, 'levels (argument 1)', 'give fractions such as 0.1, 0.5, 0.9');
   const places = numberLine(values, 'values (argument 2)', 'give the value at each level');
-  shares.numbers.forEach((level, i) => {
-    if (level > 0 && level < 1) return;
-    throw new InputError(
-      shares.placeOf(i),
-      `${level} is not between 0 and 1`,
-      level > 1 && level < 100
-        ? `write ${level / 100} or ${level}%`
-        : 'give levels between 0 and 1; the ends are lowest and highest',
-    );
-  });
+  const between = 'give levels between 0 and 1; the ends are lowest and highest';
+  shares.numbers.forEach((level, i) => requireShare(level, shares.placeOf(i), between));
   requireRising(shares, 'give levels that rise');
   requireRising(places, 'give values that rise with the levels');
   const n = shares.numbers.length;

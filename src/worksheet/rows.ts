@@ -3,7 +3,8 @@ import type { Cell, Range } from '../density/cells';
 import { lineOfCells, quoted } from '../density/cells';
 import { InputError } from '../errors';
 
-const MAX_ROWS = 1_048_575;
+/** As many rows as a sheet has below a heading. */
+export const MAX_ROWS = 1_048_575;
 
 /** Cells and the place they were read from, for messages. */
 export interface Placed<T> {

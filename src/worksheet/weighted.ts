@@ -1,7 +1,9 @@
-/** A table whose rows have weights: what PICK and THIN take. */
+/** Weights of rows, and a table whose rows have weights, which PICK and THIN take. */
 import type { Cell, Range } from '../density/cells';
-import { given, passErrors } from '../density/cells';
+import { counted, given, passErrors } from '../density/cells';
 import { InputError } from '../errors';
+import { type Shares, sharesOf } from '../evidence/weights';
+import type { Line } from './numbers';
 import { numberLine } from './numbers';
 
 export const TABLE = 'table (argument 1)';
@@ -25,7 +27,7 @@ export function readWeighted(table: Range | null, weights: Range | null): Weight
   const own = given(table);
   if (own === null) throw new InputError(TABLE, 'it is missing', 'give a range of rows');
   passErrors(own);
-  const { numbers, placeOf } = numberLine(weights, WEIGHTS, 'give one weight for each row');
+  const { numbers, placeOf } = readWeights(weights, WEIGHTS);
   const nHeadings = own.length - numbers.length;
   if (nHeadings !== 0 && nHeadings !== 1) {
     throw new InputError(
@@ -34,6 +36,18 @@ export function readWeighted(table: Range | null, weights: Range | null): Weight
       'give one weight for each row, or for each row below its heading',
     );
   }
+  return {
+    heading: nHeadings === 1 ? own[0]! : null,
+    rows: own.slice(nHeadings).map(withoutBlanks),
+    weights: numbers,
+    placeOf,
+  };
+}
+
+/** @throws {InputError} for text or a negative number among the weights, and when all are 0. */
+export function readWeights(range: Range | null, where: string): Line {
+  const weights = numberLine(range, where, 'give one weight for each row');
+  const { numbers, placeOf } = weights;
   const negative = numbers.findIndex((weight) => weight < 0);
   if (negative >= 0) {
     throw new InputError(
@@ -43,13 +57,23 @@ export function readWeighted(table: Range | null, weights: Range | null): Weight
     );
   }
   if (!numbers.some((weight) => weight > 0))
-    throw new InputError(WEIGHTS, 'all of them are 0', 'give at least one weight above 0');
-  return {
-    heading: nHeadings === 1 ? own[0]! : null,
-    rows: own.slice(nHeadings).map(withoutBlanks),
-    weights: numbers,
-    placeOf,
-  };
+    throw new InputError(where, 'all of them are 0', 'give at least one weight above 0');
+  return weights;
+}
+
+/**
+ * Each row's part of the whole; null without weights or with weights that are all alike.
+ * @throws {InputError} as readWeights, and when there is not one weight for each row.
+ */
+export function sharesForRows(range: Range | null, where: string, nRows: number): Shares | null {
+  if (given(range) === null) return null;
+  const { numbers } = readWeights(range, where);
+  if (numbers.length === nRows) return sharesOf(numbers);
+  throw new InputError(
+    where,
+    `${counted(numbers.length, 'weight')} for ${counted(nRows, 'row')} of values`,
+    'give one weight for each row',
+  );
 }
 
 /** A blank is 0, as everywhere: some hosts hand it over as 0. */
@@ -57,8 +81,4 @@ function withoutBlanks(row: readonly Cell[]): readonly Cell[] {
   return row.includes(null) || row.includes('')
     ? row.map((cell) => (cell === null || cell === '' ? 0 : cell))
     : row;
-}
-
-function counted(n: number, noun: string): string {
-  return `${n} ${noun}${n === 1 ? '' : 's'}`;
 }

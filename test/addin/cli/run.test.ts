@@ -87,6 +87,21 @@ describe('undercurve call', () => {
     EACH: [BLOCK, null, null, null, [['m'], [3], [4]]],
     PICK: [[['early'], ['late'], ['none']], [[2], [1], [0]], 5, 'plan-2027', 'harvest'],
     THIN: [[['early'], ['late'], ['none']], [[1], [1], [0]], 'plan-2027', 'harvest', 1],
+    SUMMARY: [[['harvest'], [31], [28], [40]]],
+    EXCEEDANCE: [[['harvest'], [31], [28], [40]], 30],
+    ROWSNEEDED: [[[31], [28], [40]], null, 0.5],
+    PAIREDCHANGE: [
+      [[31], [28], [40]],
+      [[33], [28], [41]],
+    ],
+    BESTOF: [
+      [
+        ['two', 'three'],
+        [31, 33],
+        [40, 36],
+      ],
+      true,
+    ],
   };
 
   test.each(catalogue.map(({ name }) => name))('answers for UNDERCURVE.%s [law]', (name) => {
