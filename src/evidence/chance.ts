@@ -3,14 +3,14 @@
  * weights or without.
  *
  * Source: the intervals of proportion.ts; with weights the effective number of rows of Korn &
- * Graubard (1998), Survey Methodology 24: as many rows of equal weight as have the linearised
- * error of the weighted share, at most the rows there are (from memory).
+ * Graubard (1998), Survey Methodology 24: as many rows of equal weight as have the error of the
+ * weighted share, at most the rows there are (from memory).
  * Not handled: dependent rows.
  */
 import type { Interval } from './proportion';
 import { chanceInterval } from './proportion';
 import type { Shares } from './weights';
-import { rowsWorth } from './weights';
+import { pull, rowsWorth } from './weights';
 
 export interface Chance {
   readonly chance: number;
@@ -33,11 +33,12 @@ export function chanceOf(
   for (let i = 0; i < nRows; i++) {
     const share = shares[i]!;
     if (share > 0) nCounting++;
-    if (!isTrue(i)) squaresFalse += share * share;
+    const squared = pull(share) * pull(share);
+    if (!isTrue(i)) squaresFalse += squared;
     else if (share > 0) {
       count++;
       chance += share;
-      squaresTrue += share * share;
+      squaresTrue += squared;
     }
   }
   // No and all rows have no error to go by, and the sum of all shares may miss 1 by rounding.

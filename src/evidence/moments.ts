@@ -2,7 +2,7 @@
  * Mean and standard deviation of a column with their intervals, with weights or without.
  *
  * Sources: two passes with a correction, Chan, Golub & LeVeque (1983), American Statistician 37;
- * errors of weighted means by linearisation, Cochran (1977), "Sampling Techniques", §6.4;
+ * errors of weighted means by the jackknife, weights.ts, which for equal weights is s / √n;
  * interval of a standard deviation without normality: Bonett (2006), Computational Statistics &
  * Data Analysis 50, with the mean in place of his trimmed mean (all from memory).
  * Not handled: dependent rows; values beyond 1e300.
@@ -11,6 +11,7 @@ import { exp, ln } from '../numeric/elementary';
 import type { Rows } from './sample';
 import type { Ends, Student } from './student';
 import { NO_ENDS } from './student';
+import { pull } from './weights';
 
 export interface Moments {
   readonly mean: number;
@@ -49,7 +50,7 @@ export function momentsOf({ values, shares, rowsWorth }: Rows): Moments {
   if (!(scale > 0)) {
     return { mean, error: 0, standardDeviation: 0, skewness: 0, varianceNoise: 0, rowsWorth };
   }
-  let [second, third, squared, squaredSecond, squares] = [0, 0, 0, 0, 0];
+  let [second, third, squared, squaredSecond, squares, pulled] = [0, 0, 0, 0, 0, 0];
   for (let i = 0; i < n; i++) {
     const share = shares === null ? even : shares[i]!;
     const z = (values[i]! - mean) / scale;
@@ -60,11 +61,13 @@ export function momentsOf({ values, shares, rowsWorth }: Rows): Moments {
     squared += own * zz;
     squaredSecond += own * zz * zz;
     squares += own;
+    const moved = pull(share) * z;
+    pulled += moved * moved;
   }
   const fourth = squaredSecond - 2 * second * squared + second * second * squares;
   return {
     mean,
-    error: scale * Math.sqrt((squared * n) / (n - 1)),
+    error: scale * Math.sqrt((pulled * (n - 1)) / n),
     standardDeviation: scale * Math.sqrt(second / (1 - squares)),
     skewness: third / (second * Math.sqrt(second)),
     varianceNoise: (rowsWorth * fourth) / (second * second),

@@ -34,7 +34,8 @@ export function ranksAround(n: number, share: number, confidence: number): Ranks
 /** Goes out in equal steps from the rank (n + 1) share, or from the two ranks around it. */
 function closed(rows: Binomial, confidence: number): Ranks {
   const { n, p } = rows;
-  const centre = Math.round(2 * (n + 1) * p) / 2;
+  const centre =
+    p <= 0.5 ? Math.round(2 * (n + 1) * p) / 2 : n + 1 - Math.round(2 * (n + 1) * (1 - p)) / 2;
   let lower = Math.min(n, Math.max(1, Math.floor(centre)));
   let upper = Math.min(n, Math.max(1, Math.ceil(centre)));
   let coverage = rows.between(lower, upper - 1);

@@ -13,6 +13,7 @@ import { ranksAround } from './orderstatistics';
 import type { Sample } from './sample';
 import type { Ends } from './student';
 import { NO_ENDS } from './student';
+import { pull } from './weights';
 
 /** The value at a share. Domain: 0 ≤ share ≤ 1. */
 export function percentile({ values, shares }: Sample, share: number): number {
@@ -53,7 +54,7 @@ function effectiveRows({ values, shares }: Sample, share: number): number {
   if (shares === null) return values.length;
   let [below, squaredBelow, squaredAbove] = [0, 0, 0];
   for (let i = 0; i < values.length; i++) {
-    const own = shares[i]! * shares[i]!;
+    const own = pull(shares[i]!) * pull(shares[i]!);
     // Half a row on either side of the percentile does not matter.
     if (below < share) squaredBelow += own;
     else squaredAbove += own;

@@ -9,6 +9,7 @@
 import type { Sample } from './sample';
 import type { Ends, Student } from './student';
 import { NO_ENDS } from './student';
+import { pull } from './weights';
 
 export interface TailMean {
   readonly mean: number;
@@ -29,7 +30,7 @@ export function highestMean(sample: Sample, share: number, student: Student): Ta
 }
 
 function tailMean(sample: Sample, share: number, student: Student, fromTop: boolean): TailMean {
-  const { values, shares, rowsWorth } = sample;
+  const { values, shares } = sample;
   const n = values.length;
   const even = 1 / n;
   const at = (i: number): number => (fromTop ? n - 1 - i : i);
@@ -58,14 +59,12 @@ function tailMean(sample: Sample, share: number, student: Student, fromTop: bool
   if (scale === 0) return { mean, interval: { lo: mean, hi: mean } };
   const average = off / scale;
   let squared = 0;
-  let rest = 1 / rowsWorth;
-  for (let i = 0; i < last; i++) {
+  for (let i = 0; i < n; i++) {
     const own = shares === null ? even : shares[at(i)]!;
-    const influence = own * ((values[at(i)]! - end) / scale - average);
-    squared += influence * influence;
-    rest -= own * own;
+    const beyond = i < last ? (values[at(i)]! - end) / scale : 0;
+    const moved = pull(own) * (beyond - average);
+    squared += moved * moved;
   }
-  squared += Math.max(0, rest) * average * average;
-  const error = (scale * Math.sqrt((squared * n) / (n - 1))) / share;
+  const error = (scale * Math.sqrt((squared * (n - 1)) / n)) / share;
   return { mean, interval: student.interval(mean, error, worth - 1) };
 }

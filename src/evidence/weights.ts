@@ -27,6 +27,16 @@ export function sharesOf(weights: ArrayLike<number>): Shares | null {
   return Float64Array.from(weights, (weight) => weight / most / whole);
 }
 
+/**
+ * How far a weighted share or mean moves when a row is left out, as part of the row's distance
+ * from it. Squares of this make the jackknife's error, which keeps up where a few weights are
+ * large; linearised errors fall behind.
+ * Source: Efron & Tibshirani (1993), "An Introduction to the Bootstrap", §11 (from memory).
+ */
+export function pull(share: number): number {
+  return share / (1 - share);
+}
+
 /** How many rows of equal weight would tell as much: (sum of weights)² over sum of squares. */
 export function rowsWorth(shares: Shares | null, nRows: number): number {
   if (shares === null) return nRows;

@@ -61,8 +61,8 @@ export function nameOf({ heading }: Column, j: number, nColumns: number): string
 /** What zeros at the end of a column may mean. */
 export function zerosNote(n: number): string {
   return n === 1
-    ? 'the last row is 0 or blank and counts as 0; was one row too many selected?'
-    : `the last ${n} rows are 0 or blank and count as 0; were too many rows selected?`;
+    ? 'the last row is 0 or blank and counts as 0: perhaps one row too many was selected'
+    : `the last ${n} rows are 0 or blank and count as 0: perhaps more rows were selected than there are`;
 }
 
 function withRows(columns: Columns, where: string, fewest: number): Columns {

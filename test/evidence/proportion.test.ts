@@ -1,5 +1,12 @@
 import fc from 'fast-check';
-import { waitingPValue, wilson } from '../../src/evidence/proportion';
+import { Binomial } from '../../src/evidence/binomial';
+import {
+  chanceInterval,
+  clopperPearson,
+  FEW,
+  waitingPValue,
+  wilson,
+} from '../../src/evidence/proportion';
 
 describe('wilson', () => {
   // 95 %: cases of Newcombe (1998), "Two-sided confidence intervals for the single proportion",
@@ -54,6 +61,63 @@ describe('wilson', () => {
   it('wilson(k, n, …) of none and of all ends at exactly 0 and 1 [law]', () => {
     expect(wilson(0, 7, 0.95).lo).toBe(0);
     expect(wilson(7, 7, 0.95).hi).toBe(1);
+  });
+});
+
+describe('clopperPearson', () => {
+  // As above: method 5 of Newcombe (1998), and NIST/SEMATECH e-Handbook 7.2.4.1.
+  it.each([
+    [81, 263, 0.95, 0.2527367456, 0.3676219226, 5e-11],
+    [15, 148, 0.95, 0.0578440101, 0.1616504903, 5e-11],
+    [0, 20, 0.95, 0, 0.168433471, 5e-11],
+    [1, 29, 0.95, 0.0008726469, 0.1776442955, 5e-11],
+    [4, 20, 0.9, 0.071353884309, 0.401028117332, 5e-13],
+  ])('clopperPearson(%d, %d, %d) is %d to %d [published]', (k, n, confidence, lo, hi, halfUnit) => {
+    const interval = clopperPearson(k, n, confidence);
+    expect(Math.abs(interval.lo - lo)).toBeLessThanOrEqual(halfUnit);
+    expect(Math.abs(interval.hi - hi)).toBeLessThanOrEqual(halfUnit);
+  });
+
+  it('clopperPearson(0, n, …) ends where no success has the chance 2.5 % [law]', () => {
+    for (const n of [1, 7, 500, 100_000]) {
+      const { lo, hi } = clopperPearson(0, n, 0.95);
+      expect(lo).toBe(0);
+      expect(Math.abs((1 - hi) ** n / 0.025 - 1)).toBeLessThan(1e-10);
+      const all = clopperPearson(n, n, 0.95);
+      expect(all.hi).toBe(1);
+      expect(Math.abs(all.lo ** n / 0.025 - 1)).toBeLessThan(1e-10);
+    }
+  });
+
+  it('clopperPearson(k, n, …) ends where k or more, or k or fewer, have 2.5 % [law]', () => {
+    for (const [k, n] of [
+      [1, 10],
+      [29, 1000],
+      [500, 1000],
+      [29, 100_000],
+    ] as const) {
+      const { lo, hi } = clopperPearson(k, n, 0.95);
+      expect(Math.abs(new Binomial(n, lo).between(k, n) - 0.025)).toBeLessThan(1e-12);
+      expect(Math.abs(new Binomial(n, hi).between(0, k) - 0.025)).toBeLessThan(1e-12);
+    }
+  });
+
+  it('clopperPearson(k, n, …) of fractions lies between its whole neighbours [law]', () => {
+    const at = (k: number, n: number) => clopperPearson(k, n, 0.95);
+    expect(at(4.5, 50).lo).toBeGreaterThan(at(4, 50).lo);
+    expect(at(4.5, 50).lo).toBeLessThan(at(5, 50).lo);
+    expect(at(4, 50.5).hi).toBeLessThan(at(4, 50).hi);
+    expect(at(4, 50.5).hi).toBeGreaterThan(at(4, 51).hi);
+  });
+});
+
+describe('chanceInterval', () => {
+  it('is exact below FEW successes or failures, Wilson from there on [law]', () => {
+    expect(FEW).toBe(30);
+    expect(chanceInterval(29, 1000, 0.95)).toEqual(clopperPearson(29, 1000, 0.95));
+    expect(chanceInterval(971, 1000, 0.95)).toEqual(clopperPearson(971, 1000, 0.95));
+    expect(chanceInterval(30, 1000, 0.95)).toEqual(wilson(30, 1000, 0.95));
+    expect(chanceInterval(970, 1000, 0.95)).toEqual(wilson(970, 1000, 0.95));
   });
 });
 
