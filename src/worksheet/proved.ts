@@ -6,6 +6,8 @@ import { Drawer } from '../draw/column';
 import type { Envelope } from '../envelope/envelope';
 import { polylineEnvelope } from '../envelope/polyline';
 import { proveEnvelope } from '../envelope/prove';
+import { continuous } from '../exact/continuous';
+import type { Distribution } from '../exact/distribution';
 import { rescaled } from '../exact/rescale';
 import { Shares } from '../exact/shares';
 import { compile } from '../formula/compile';
@@ -30,6 +32,8 @@ export interface Proved {
   readonly shares: Shares;
   /** The area under the scaled density, within its proved bounds. */
   readonly area: number;
+  /** What columns are compared with. */
+  readonly distribution: Distribution;
 }
 
 /** A drawer that is not kept, for one of so many shapes that they would crowd out all others. @throws {InputError} as prove. */
@@ -52,13 +56,17 @@ export function prove(shape: PlainShape): Proved {
   });
 }
 
-function withShares(proof: Omit<Proved, 'shares' | 'area'>): Proved {
-  let known: { readonly shares: Shares; readonly area: number } | undefined;
-  const exact = (): { readonly shares: Shares; readonly area: number } => {
+function withShares(proof: Omit<Proved, 'shares' | 'area' | 'distribution'>): Proved {
+  let known: Pick<Proved, 'shares' | 'area' | 'distribution'> | undefined;
+  const exact = (): NonNullable<typeof known> => {
     if (known) return known;
     const { envelope, shift } = rescaled(proof.envelope, proof.tape);
     const shares = new Shares(envelope);
-    return (known = { shares, area: shares.area / powerOfTwo(shift) });
+    return (known = {
+      shares,
+      area: shares.area / powerOfTwo(shift),
+      distribution: continuous(shares, proof.envelope, proof.tape),
+    });
   };
   return {
     ...proof,
@@ -67,6 +75,9 @@ function withShares(proof: Omit<Proved, 'shares' | 'area'>): Proved {
     },
     get area() {
       return exact().area;
+    },
+    get distribution() {
+      return exact().distribution;
     },
   };
 }
