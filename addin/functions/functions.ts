@@ -7,11 +7,11 @@
 import { answer, answerLater } from './host';
 
 /**
- * Draws random values that follow the density exactly: one column for each label, or for each of several variables, the same values until an input changes. In the unit of x.
+ * Draws random values that follow the density exactly: one column for each label, or for each of several variables, the same values until an input changes. In the unit of x. With a step in limits the values are counted: from, from + step and so on; for a short list of values with weights in cells PICK is simpler.
  * @customfunction DRAW
  * @cancelable
  * @param density What is likely: a formula in x such as EXP(-0.5*((x-4)/1.3)^2), or in several variables such as AND(early+late<=90,early*late>=400), a table of points (x and height, straight lines between), a block of two columns that names density, from, to, rows, seed, label and constants, or a list with a heading row (label, density, from, to and so on) and one input a line. Heights need no particular unit.
- * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from, to and step.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
  * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
  * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
@@ -35,7 +35,7 @@ export function draw(
  * @customfunction ENVELOPE
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from, to and step.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  * @param invocation The call itself.
  */
@@ -53,7 +53,7 @@ export function envelope(
  * @customfunction ACCEPTANCE
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), a block of two columns, or a list of one input a line. Give the same cells as to DRAW.
- * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from, to and step.
  * @param rows How many values, 1 to 1048575, or two cells: first row and last row. Give the same as to DRAW.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
@@ -73,10 +73,10 @@ export function acceptance(
 }
 
 /**
- * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it and the share of the area below x. A heading row, then one row a point: x in its unit, heights in share per unit of x, the last column as fraction of 1.
+ * Gives evenly spaced points for a chart: the density scaled to area 1, with the proved lines above and below it and the share of the area below x. A heading row, then one row a point: x in its unit, heights in share per unit of x, the last column as fraction of 1. Of a counted quantity a row for each value, at most count of them: density is the value's share, and share below leaves the value itself out.
  * @customfunction PROFILE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param count How many points, 2 to 100000. Left out: 201.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
@@ -90,10 +90,10 @@ export function profile(
 }
 
 /**
- * Gives the exact share of the density's area below each x, as fraction of 1: the chance that a draw is below it. The result has the shape of x.
+ * Gives the exact share of the density's area below each x, as fraction of 1: the chance that a draw is below it. Of a counted quantity the value x itself is neither below nor above. The result has the shape of x.
  * @customfunction BELOW
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param x A number or a range of numbers, in the unit of the density's x.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
@@ -107,10 +107,10 @@ export function below(
 }
 
 /**
- * Gives the exact share of the density's area above each x, as fraction of 1: the chance that a draw is above it. Small shares keep their digits. The result has the shape of x.
+ * Gives the exact share of the density's area above each x, as fraction of 1: the chance that a draw is above it. Small shares keep their digits. Of a counted quantity the value x itself is neither below nor above. The result has the shape of x.
  * @customfunction ABOVE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param x A number or a range of numbers, in the unit of the density's x.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  */
@@ -124,10 +124,10 @@ export function above(
 }
 
 /**
- * Gives the x that has each share of the density's area below it, or above it: 0.9 gives the value that nine draws in ten stay below. The result has the shape of share, in the unit of x.
+ * Gives the x that has each share of the density's area below it, or above it: 0.9 gives the value that nine draws in ten stay below. Of a counted quantity the first value that has the share together with all values before it. The result has the shape of share, in the unit of x.
  * @customfunction QUANTILE
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param share A fraction from 0 to 1 or a range of them. 0 and 1 give the limits.
  * @param side below or above: on which side of x the share lies. Left out: below.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
@@ -147,7 +147,7 @@ export function quantile(
  * @customfunction EXPECT
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
- * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from, to and step.
  * @param quantity A formula in x, such as x, x^2, MAX(0,x-60), or x>80 for a chance.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
  * @param invocation The call itself.
@@ -167,7 +167,7 @@ export function expect(
  * @customfunction PROPOSALS
  * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns. Give the same cells as to DRAW.
- * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or a row for each variable: its name, from, to and, for a counted one, the step. A table has its own ends, a block may name from, to and step.
  * @param rows How many values, 1 to 100000, or two cells: first row and last row.
  * @param seed Seed of the draws. Give the same as to DRAW.
  * @param label Label of the draws. Give the same as to DRAW.
@@ -238,7 +238,7 @@ export function blend(shares: any[][], shapes?: any[][][]): any[][] {
  * Draws one quantity under several cases, such as three numbers of presses: one column a case, every column with the random numbers of the same row, so that differences between cases are not noise. Each column is what DRAW gives with that case's values. A heading row of case names, then values in the unit of x.
  * @customfunction CASES
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to, rows, seed, label and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param rows How many values a case, 1 to 1048575, or two cells: first row and last row. Needed unless a block has them.
  * @param seed Any text or number except blank and 0. Needed unless a block has it.
  * @param label Name of the quantity, the same for all cases. Needed unless a block has it.
@@ -282,7 +282,7 @@ export function each(
  * Draws values as DRAW does, but spread evenly over the density, so that averages need far fewer rows. Each row alone is exactly distributed; rows are not independent, so intervals worked out from them are too wide, and the column as a whole changes with the number of rows. In the unit of x.
  * @customfunction STRATIFIED
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to, rows, seed, label and constants.
- * @param limits Two cells, from and to, in the unit of x. A table has its own ends, a block may name from and to.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param rows How many values, 1 to 1048575. Another number gives another column. Needed unless a block has it.
  * @param seed Any text or number except blank and 0. The same seed gives the same values. Needed unless a block has it.
  * @param label Name of the quantity. Each label has its own random numbers; a row of labels draws one column for each. Needed unless a block has it.
@@ -397,23 +397,6 @@ export function rowsNeeded(
  */
 export function pairedChange(before: any[][], after: any[][], confidence?: any[][]): any[][] {
   return answer('PAIREDCHANGE', [before, after, confidence], null);
-}
-
-/**
- * Checks whether columns of values look like independent draws of a shape: one overall line in plain words, then exact percentiles, mean and standard deviation beside the drawn ones with the range that is allowed, then tests of the whole (largest distance of shares, tails, cells of equal share, order of rows, repeats, rows outside the limits) with their p-values. Of 100 columns that follow their shape at most one shows any sign against it; no sign proves nothing. It says whether the values follow the shape, not whether the shape is right. Assumes independent rows that are not rounded: it does not apply to STRATIFIED columns.
- * @customfunction CHECK
- * @param values One or more columns of numbers, with or without a heading row: all against one shape, or as many as there are shapes.
- * @param density The shape that the values should follow: a formula, a table of points, a shape block or a shape list, as for DRAW.
- * @param limits Two cells, from and to, or a row name, from, to; as for DRAW.
- * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
- */
-export function check(
-  values: any[][],
-  density: any[][],
-  limits?: any[][],
-  givens?: any[][][],
-): any[][] {
-  return answer('CHECK', [values, density, limits], givens);
 }
 
 /**

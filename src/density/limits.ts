@@ -3,18 +3,19 @@
  * for each variable, with an optional heading. An end is a number, the name of a given, or
  * `unbounded` (held as −∞ or ∞). A step makes a counted quantity: from, from + step, …;
  * 0 or none means continuous.
- * Not handled yet: steps of a single variable (refused where it is drawn).
  */
 import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
 import { isBlankOrZero, isText, numberIn, passErrors, quoted, sizeOf, word } from './cells';
 import { nameKey } from '../formula/compile';
 import type { Givens } from './givens';
+import type { Lattice } from './lattice';
+import { latticeOf } from './lattice';
 
 /** Ends beyond this are refused: their areas could not be told in doubles. */
 const MAX_END = 1e150;
 export const DEFAULT_VARIABLE = 'x';
-const UNBOUNDED = 'unbounded';
+export const UNBOUNDED = 'unbounded';
 
 /** The limits as their cells stand, before names are looked up. */
 export interface LimitCells {
@@ -120,28 +121,17 @@ function readRow(
   };
 }
 
-/** @throws {InputError} for a step other than 0. */
-export function checkStep(step: Cell, where: string): void {
-  if (numberIn(step, `${where}, step`) !== 0) {
-    throw new InputError(
-      `${where}, step`,
-      `${quoted(step)} asks for counted values`,
-      'give 0: only continuous quantities can be drawn so far',
-    );
-  }
-}
-
 /**
  * The ends as numbers.
- * @throws {InputError} when an end is no number and no given, when from ≥ to, or when an end is too far out.
+ * @throws {InputError} when an end is no number and no given, when from ≥ to (from > to if counted), or when an end is too far out.
  */
-export function readEnds(cells: LimitCells, givens: Givens): Limits {
+export function readEnds(cells: LimitCells, givens: Givens, isCounted = false): Limits {
   const { from, to, where, fromWhere = `${where}, from`, toWhere = `${where}, to` } = cells;
   const limits = {
     from: readEnd(from, fromWhere, givens, -Infinity),
     to: readEnd(to, toWhere, givens, Infinity),
   };
-  if (!(limits.from < limits.to)) {
+  if (!(limits.from < limits.to || (isCounted && limits.from === limits.to))) {
     throw new InputError(
       where,
       `from (${limits.from}) is not below to (${limits.to})`,
@@ -149,6 +139,21 @@ export function readEnds(cells: LimitCells, givens: Givens): Limits {
     );
   }
   return limits;
+}
+
+/** The limits of one variable, and the points between them if it is counted. */
+export interface LineLimits {
+  readonly limits: Limits;
+  readonly lattice: Lattice | null;
+}
+
+/** @throws {InputError} as readEnds and latticeOf. */
+export function readLimits(cells: LimitCells, givens: Givens): LineLimits {
+  const { where } = cells;
+  const step = numberIn(cells.step, `${where}, step`);
+  if (step === 0) return { limits: readEnds(cells, givens), lattice: null };
+  const limits = readEnds(cells, givens, true);
+  return { limits, lattice: latticeOf(limits.from, limits.to, step, where) };
 }
 
 /** One of several variables, continuous for a step of 0, else counted: from, from + step, … to. */

@@ -15,13 +15,15 @@ import { given, givenUnlessZero, isBlankOrZero, isText, passErrors } from './cel
 import { readFormula, readLines } from './formulas';
 import type { GivenRanges, NamedValue } from './givens';
 import { checkMethod, Givens, readGivens } from './givens';
-import type { Axis, LimitCells, Limits, OtherEnds } from './limits';
+import type { Lattice } from './lattice';
+import { latticeOf, within } from './lattice';
+import type { Axis, LimitCells, Limits, LineLimits, OtherEnds } from './limits';
 import {
-  checkStep,
   DEFAULT_VARIABLE,
   readAxes,
-  readEnds,
+  readLimits,
   readLimitCells,
+  UNBOUNDED,
   withEnds,
 } from './limits';
 import type { ListLine } from './shapelist';
@@ -30,7 +32,7 @@ import type { Polyline, PointTable } from './table';
 import { isPointTable, readTable, truncate } from './table';
 
 /** A formula without limits is drawn over the whole line. */
-const UNBOUNDED_LIMITS: Limits = { from: -Infinity, to: Infinity };
+const UNBOUNDED_LIMITS: LineLimits = { limits: { from: -Infinity, to: Infinity }, lattice: null };
 
 export interface FormulaShape {
   readonly kind: 'formula';
@@ -38,6 +40,8 @@ export interface FormulaShape {
   readonly sources: readonly Source[];
   readonly variable: string;
   readonly limits: Limits;
+  /** The points of a counted quantity; null for a continuous one. */
+  readonly lattice: Lattice | null;
   readonly givens: GivenMap;
   /** The place of the line of a list it stands in, for messages. */
   readonly line?: string;
@@ -48,6 +52,7 @@ export interface TableShape {
   readonly heading: string;
   readonly polyline: Polyline;
   readonly limits: Limits;
+  readonly lattice: Lattice | null;
 }
 
 /** A formula in two variables or more. */
@@ -341,12 +346,11 @@ function formulaShape(
   const givens = named.map;
   if (cells.length > 1) return { kind: 'several', sources, axes: readAxes(cells, named), givens };
   const [own] = cells;
-  if (own) checkStep(own.step, own.where);
   return {
     kind: 'formula',
     sources,
     variable: own?.variable ?? DEFAULT_VARIABLE,
-    limits: own ? readEnds(own, named) : UNBOUNDED_LIMITS,
+    ...(own ? readLimits(own, named) : UNBOUNDED_LIMITS),
     givens,
   };
 }
@@ -359,20 +363,38 @@ function tableShapes(
 ): readonly TableShape[] {
   const { x, columns } = table;
   const own = { from: x[0]!, to: x.at(-1)! };
-  if (cells[0]) checkStep(cells[0].step, cells[0].where);
-  const wanted = cells[0] ? readEnds(cells[0], named) : own;
+  const read = cells[0] ? readLimits(cells[0], named) : { limits: own, lattice: null };
+  const wanted = read.limits;
+  const lattice = read.lattice && cells[0] ? tableLattice(read.lattice, own, cells[0].where) : null;
   const limits = { from: Math.max(wanted.from, own.from), to: Math.min(wanted.to, own.to) };
   return columns.map(({ heading, heights }) => {
     const polyline = truncate(x, heights, wanted, places.limits);
-    return { kind: 'table', heading, polyline, limits };
+    return { kind: 'table', heading, polyline, limits, lattice };
   });
 }
 
+/** The points of a table, counted from its own end on a side without a limit. */
+function tableLattice(lattice: Lattice, { from, to }: Limits, where: string): Lattice {
+  const { first, last, at, step } = lattice;
+  if (Number.isFinite(first) || Number.isFinite(last)) {
+    const inside = within(lattice, from, to);
+    if (inside.first <= inside.last) return inside;
+    throw new InputError(
+      where,
+      `no point with step ${step} lies between the ends of the table, ${from} and ${to}`,
+      `start the limits elsewhere than at ${at(0)}, or give a smaller step`,
+    );
+  }
+  return latticeOf(from, to, step, where);
+}
+
 function blockLimits({ words }: Block, where: string, isLine: boolean): readonly LimitCells[] {
-  const step = words.get('step');
-  if (step !== undefined) checkStep(step, where);
+  const step = words.get('step') ?? null;
   const [from, to] = [words.get('from'), words.get('to')];
-  if (from === undefined && to === undefined) return [];
+  if (from === undefined && to === undefined) {
+    if (isBlankOrZero(step)) return [];
+    return [{ variable: DEFAULT_VARIABLE, from: UNBOUNDED, to: UNBOUNDED, step, where }];
+  }
   for (const [name, cell] of [
     ['from', from],
     ['to', to],
@@ -384,5 +406,5 @@ function blockLimits({ words }: Block, where: string, isLine: boolean): readonly
         `add a ${isLine ? 'column' : 'row'} ${name} and its value`,
       );
   }
-  return [{ variable: DEFAULT_VARIABLE, from: from!, to: to!, step: null, where }];
+  return [{ variable: DEFAULT_VARIABLE, from: from!, to: to!, step, where }];
 }

@@ -1,59 +1,19 @@
 /**
- * Exact draws of one variable: a column of values, row by row from its own numbers.
- *
- * Row i proposes until a proposal is accepted. Its first number settles most rows at
- * once (the segment lies under the lower line); otherwise attempt 0 draws a height
- * in the gap, and every further attempt k = 1, 2 … is a fresh proposal with its own
- * counter. So row i is the same whatever the number of rows. Rejection sampling:
- * von Neumann (1951); the lower bound as a squeeze: Marsaglia (1977).
+ * Exact draws of a continuous quantity: how its proposals fall from an envelope of pieces and
+ * hats, and how they are accepted. rejection.ts makes columns of them.
  * Not handled: several variables.
  */
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
 import { placeOn } from '../envelope/hat';
-import { bug } from '../errors';
 import { Encloser } from '../formula/enclose';
 import { next, prev } from '../numeric/float';
 import * as I from '../numeric/interval';
-import { RowStream } from '../random/stream';
-import type { Key } from '../random/key';
 import type { Guide } from './guide';
 import { guideOf } from './guide';
+import type { Place } from './rejection';
+import { ColumnDrawer } from './rejection';
 
-/** Drawn values and what is needed to judge how they came about. */
-export interface Column {
-  readonly values: Float64Array;
-  /** Proposals made for all rows together. */
-  readonly proposals: number;
-  /** Rows whose first number fell under the lower line. */
-  readonly settledAtOnce: number;
-  /** Most proposals that one row needed. */
-  readonly longestWait: number;
-  /** Heights so near the density that its enclosure could not tell, settled by comparing doubles. */
-  readonly nearTies: number;
-}
-
-/** One proposal of a row. */
-export interface Proposal {
-  readonly row: number;
-  readonly attempt: number;
-  readonly x: number;
-  /** The height drawn; under the lower line no height is drawn, and it is NaN. */
-  readonly height: number;
-  readonly isKept: boolean;
-}
-
-/** Where the numbers of draws 0, 1, 2 … come from; multiples of 2^-53 in [0, 1), as of random/stream.ts. */
-export interface NumberSource {
-  /** Writes the first numbers of draws from … from + count − 1 to out[0 … count − 1]. */
-  fillFirst(from: number, out: Float64Array, count: number): void;
-  /** Writes u and v of an attempt of draw i to out[0] and out[1]. */
-  further(i: number, attempt: number, out: Float64Array): void;
-}
-
-const CHUNK = 4096;
-/** At an acceptance of 0.01 a row needs this many with a chance far below 10^-1000. */
-const MAX_ATTEMPTS = 1_000_000;
 /** Room for the rounding of a line's value when asking whether the density lies above it. */
 const LINE_ROUNDING = 4e-15;
 /** Room for the rounding of what the bounds inside a piece say. */
@@ -70,59 +30,20 @@ const STRIDE = 6;
 const LINES_STRIDE = 16;
 
 /** Draws columns from one envelope. */
-export class Drawer {
+export class Drawer extends ColumnDrawer {
   private readonly guide: Guide;
   /** For each hat at a pole the density by the distance from it. */
   private readonly near: readonly (Encloser | null)[];
   private readonly density = I.interval();
-  private readonly pair = new Float64Array(2);
-  private nearTies = 0;
 
   constructor(private readonly envelope: Envelope) {
+    super();
     this.guide = guideOf(envelope);
     const { hats, exponent } = envelope;
     this.near = hats.map(({ near }) => near && new Encloser(near, exponent));
   }
 
-  /** Rows `first` … `first + n − 1` under a key. @throws {Error} on a breach, which no proof allows. */
-  column(key: Key, first: number, n: number, method = 0): Column {
-    const stream = new RowStream(key, method);
-    return this.draws(
-      {
-        fillFirst: (from, out, count) => stream.fillFirst(first + from, out, count),
-        further: (i, attempt, out) => stream.further(first + i, attempt, out),
-      },
-      n,
-    );
-  }
-
-  /** n draws by numbers of the caller's, each draw by its own. @throws {Error} on a breach. */
-  draws(source: NumberSource, n: number): Column {
-    const values = new Float64Array(n);
-    const chunk = Math.min(CHUNK, n);
-    const numbers = new Float64Array(chunk);
-    const open = new Int32Array(chunk);
-    this.nearTies = 0;
-    let proposals = n;
-    let settledAtOnce = 0;
-    let longestWait = n > 0 ? 1 : 0;
-    for (let done = 0; done < n; done += CHUNK) {
-      const size = Math.min(CHUNK, n - done);
-      source.fillFirst(done, numbers, size);
-      const nOpen = this.settleFirst(numbers, size, values, done, open);
-      settledAtOnce += size - nOpen;
-      for (let k = 0; k < nOpen; k++) {
-        const at = open[k]!;
-        const wait = this.finish(source, done + at, numbers[at]!, values);
-        proposals += wait - 1;
-        if (wait > longestWait) longestWait = wait;
-      }
-    }
-    return { values, proposals, settledAtOnce, longestWait, nearTies: this.nearTies };
-  }
-
-  /** Writes x of every first number; returns how many lie in gaps and lists them in `open`. */
-  private settleFirst(
+  protected settleFirst(
     numbers: Float64Array,
     size: number,
     values: Float64Array,
@@ -151,61 +72,27 @@ export class Drawer {
     return nOpen;
   }
 
-  /** Every proposal of rows `first` … `first + n − 1`, as `column` makes them; null when there are more than `most`. */
-  proposals(key: Key, first: number, n: number, most: number, method = 0): Proposal[] | null {
-    const stream = new RowStream(key, method);
-    const made: Proposal[] = [];
-    for (let row = first; row < first + n; row++) {
-      stream.fillFirst(row, this.one, 1);
-      const u = this.one[0]!;
-      stream.further(row, 0, this.pair);
-      this.propose(u);
-      for (let attempt = 0, isKept = false; !isKept; attempt++) {
-        if (made.length === most) return null;
-        const v = this.pair[1]!;
-        isKept = this.isAccepted(v);
-        made.push({ row, attempt, x: this.proposal.x, height: this.heightAtShare(v), isKept });
-        stream.further(row, attempt + 1, this.pair);
-        if (!isKept) this.propose(this.pair[0]!);
-      }
-    }
-    return made;
-  }
-
-  /** Finishes draw i, whose first number u fell into a gap or a hat; returns the proposals it took. */
-  private finish(source: NumberSource, i: number, u: number, values: Float64Array): number {
-    const proposal = this.proposal;
-    source.further(i, 0, this.pair);
-    this.propose(u);
-    for (let attempt = 0; attempt < MAX_ATTEMPTS; attempt++) {
-      if (this.isAccepted(this.pair[1]!)) {
-        values[i] = proposal.x;
-        return attempt + 1;
-      }
-      source.further(i, attempt + 1, this.pair);
-      this.propose(this.pair[0]!);
-    }
-    throw bug(`draw ${i} found no place in ${MAX_ATTEMPTS} attempts`);
-  }
-
   /** The proposal at hand: its place, and the gap or hat that decides on it (−1: none has to). */
-  private readonly proposal = { x: NaN, t: NaN, height: NaN, gap: -1 };
-  private readonly one = new Float64Array(1);
+  private readonly proposal = { x: NaN, isUnderLower: false, t: NaN, height: NaN, gap: -1 };
+  private readonly number = new Float64Array(1);
   private readonly oneValue = new Float64Array(1);
   private readonly oneOpen = new Int32Array(1);
 
-  private propose(u: number): void {
-    this.one[0] = u;
-    const isOpen = this.settleFirst(this.one, 1, this.oneValue, 0, this.oneOpen) > 0;
-    this.proposal.x = this.oneValue[0]!;
-    this.proposal.gap = -1;
-    if (!isOpen) return;
+  protected propose(u: number): Place {
+    const { proposal } = this;
+    this.number[0] = u;
+    const isOpen = this.settleFirst(this.number, 1, this.oneValue, 0, this.oneOpen) > 0;
+    proposal.x = this.oneValue[0]!;
+    proposal.gap = -1;
+    proposal.isUnderLower = !isOpen;
+    if (!isOpen) return proposal;
     const { segments, gapOf, cells } = this.guide;
     let i = cells[(u * cells.length) | 0]!;
     while (u >= segments[(i + 1) * STRIDE]!) i++;
-    this.proposal.gap = gapOf[i]!;
-    const hat = this.envelope.hats[this.proposal.gap - this.envelope.pieces.length];
+    proposal.gap = gapOf[i]!;
+    const hat = this.envelope.hats[proposal.gap - this.envelope.pieces.length];
     if (hat) this.proposeOn(hat, (u - segments[i * STRIDE]!) * segments[i * STRIDE + 1]!);
+    return proposal;
   }
 
   /** A place on a hat, further right for a larger share r of it. */
@@ -219,16 +106,18 @@ export class Drawer {
     }
   }
 
-  private isAccepted(v: number): boolean {
+  protected isAccepted(v: number): boolean {
     const { x, t, gap, height } = this.proposal;
-    if (gap < 0) return true;
     const { pieces, densityAt } = this.envelope;
     if (gap < pieces.length) return this.isUnderGap(x, gap, v);
     const near = this.near[gap - pieces.length]!;
     // Near a pole the rounding of x is no small part of the distance, which therefore decides.
     if (near) near.densityAt(t, this.density);
     else densityAt!(x, this.density);
-    return this.isUnder(x, v * height, height * (1 + HAT_ROUNDING), near !== null);
+    const { lo, hi } = this.density;
+    // By the distance there is no other height than the enclosure's.
+    const settle = near ? () => lo / 2 + hi / 2 : () => this.envelope.heightAt(x);
+    return this.isUnder(this.density, x, v * height, height * (1 + HAT_ROUNDING), settle);
   }
 
   /** Whether the height at share v of the gap lies under the density at x. */
@@ -238,7 +127,8 @@ export class Drawer {
     const settled = this.settleInside(x, piece, height);
     if (settled !== 0) return settled > 0;
     this.envelope.densityAt!(x, this.density);
-    return this.isUnder(x, height, lower + gap + LINE_ROUNDING * this.sizeOf(piece));
+    const upper = lower + gap + LINE_ROUNDING * this.sizeOf(piece);
+    return this.isUnder(this.density, x, height, upper, () => this.envelope.heightAt(x));
   }
 
   /**
@@ -284,22 +174,10 @@ export class Drawer {
     return lines[at + 2]! + Math.abs(lines[at + 3]!) + lines[at + 4]! + Math.abs(lines[at + 5]!);
   }
 
-  /** The height that share v stands for at the proposal at hand; NaN under the lower line. */
-  private heightAtShare(v: number): number {
+  protected heightAtShare(v: number): number {
     const { x, gap, height } = this.proposal;
-    if (gap < 0) return NaN;
     if (gap >= this.envelope.pieces.length) return v * height;
     const lines = this.linesAt(x, gap);
     return lines.lower + v * lines.gap;
-  }
-
-  /** Whether a height lies under the density, which is enclosed already. */
-  private isUnder(x: number, height: number, upper: number, isByDistance = false): boolean {
-    const { lo, hi } = this.density;
-    if (lo > upper) throw bug(`breach: the density at x = ${x} lies above the envelope`);
-    if (lo >= height) return true;
-    if (hi < height) return false;
-    this.nearTies++;
-    return (isByDistance ? lo / 2 + hi / 2 : this.envelope.heightAt(x)) >= height;
   }
 }

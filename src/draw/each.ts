@@ -6,16 +6,16 @@
  */
 import type { Key } from '../random/key';
 import { RowStream } from '../random/stream';
-import type { Drawer } from './column';
+import type { ColumnDrawer } from './rejection';
 
 /** Rows, from 1, that follow one density. */
 export interface RowsOfOne {
   readonly rows: readonly number[];
   /** Called once, when its rows are drawn, so that not all proofs are held at a time. */
-  readonly drawer: () => Drawer;
+  readonly drawer: () => ColumnDrawer;
 }
 
-/** Rows 1 … n, each in exactly one of the groups. @throws {Error} as Drawer. */
+/** Rows 1 … n, each in exactly one of the groups. @throws {Error} as ColumnDrawer. */
 export function drawEach(
   groups: readonly RowsOfOne[],
   key: Key,

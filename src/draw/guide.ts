@@ -57,8 +57,14 @@ interface Trapezoid {
   readonly right: number;
 }
 
+/** What of an envelope is laid end to end. */
+export type Stacked = Pick<Envelope, 'pieces' | 'hats'> & {
+  /** Null where upper and lower line are the density itself. */
+  readonly densityAt: object | null;
+};
+
 /** The guide table of an envelope. */
-export function guideOf(envelope: Envelope): Guide {
+export function guideOf(envelope: Stacked): Guide {
   const { pieces } = envelope;
   const trapezoids: Trapezoid[] = [];
   let tallest = 0;
@@ -80,7 +86,7 @@ export function guideOf(envelope: Envelope): Guide {
     ((pieces[piece]!.to - pieces[piece]!.from) / box) * (left / tallest / 2 + right / tallest / 2);
   const segmentsOf = (lies: 'before' | 'after'): Segment[] =>
     envelope.hats.flatMap(({ area, c, origin, direction }, j) => {
-      const isBefore = origin + direction * c <= first;
+      const isBefore = origin + direction * c < first + box / 2;
       const hat = {
         from: 0,
         width: 0,
@@ -144,7 +150,7 @@ function cellsOf(segments: Float64Array, n: number): Int32Array {
   return cells;
 }
 
-function linesOf({ pieces }: Envelope): Float64Array {
+function linesOf({ pieces }: Stacked): Float64Array {
   const lines = new Float64Array(pieces.length * LINES_STRIDE);
   pieces.forEach((p, i) => {
     const at = i * LINES_STRIDE;

@@ -17,13 +17,13 @@
  */
 import type { Key } from '../random/key';
 import { PURPOSE, RowStream } from '../random/stream';
-import type { Column, Drawer } from './column';
+import type { Column, ColumnDrawer } from './rejection';
 
 const GRID = 9007199254740992;
 const BELOW_ONE = 1 - 1 / GRID;
 
-/** Rows 1 … n. @throws {Error} as Drawer. */
-export function drawStratified(drawer: Drawer, key: Key, n: number, method = 0): Column {
+/** Rows 1 … n. @throws {Error} as ColumnDrawer. */
+export function drawStratified(drawer: ColumnDrawer, key: Key, n: number, method = 0): Column {
   const stream = new RowStream(key, method);
   const strata = strataOf(key, n, method);
   return drawer.draws(

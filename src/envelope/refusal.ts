@@ -69,6 +69,24 @@ export function undefinedSide(
   );
 }
 
+/** As undefinedOn, for a counted quantity. */
+export function undefinedAt(x: number, reason: string): InputError {
+  return new InputError(
+    WHERE,
+    `it is undefined at x = ${shortNumber(x)}, where ${reason}`,
+    'keep the limits where it is defined, or give it a height there with IF',
+  );
+}
+
+/** A counted quantity without a limit that spreads over more points than are looked at. */
+export function tooManyPoints(n: number, most: number): InputError {
+  return new InputError(
+    WHERE,
+    `it is spread over about ${shortNumber(n)} points`,
+    `use a larger step, or 0 for a continuous quantity: at most ${most} points can matter`,
+  );
+}
+
 export function unboundedNear(x: number): InputError {
   return new InputError(
     WHERE,

@@ -17,19 +17,18 @@ import FlatQueue from 'flatqueue';
 import { findCrossing } from '../envelope/crossing';
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';
-import { hatOver } from '../envelope/hat';
 import type { Piece } from '../envelope/piece';
 import { InputError } from '../errors';
 import type { PointValues } from '../formula/enclose';
 import { Encloser } from '../formula/enclose';
 import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
-import { SideEncloser } from '../formula/side';
 import type { Tape } from '../formula/tape';
-import { addDown, addUp, divDown, divUp, middle, mulUp, powerOfTwo } from '../numeric/float';
+import { addDown, addUp, divDown, divUp, middle, powerOfTwo } from '../numeric/float';
 import * as I from '../numeric/interval';
 import * as J from '../numeric/jet';
 import { shortNumber } from '../numeric/text';
+import { Beyond, refusedBeyond, WANTED_BEYOND } from './beyond';
 import type { DensityJets } from './density';
 import { densityJets } from './density';
 import { heightOf } from './height';
@@ -45,8 +44,6 @@ export interface Expectation {
 /** Bounds are narrowed until they are this near, as a share of the mean distance of g from c. */
 const WANTED = 1e-7;
 const MOST_PARTS = 2000;
-/** What lies beyond the parts should be no more than this, as a share of the same. */
-const WANTED_BEYOND = 2e-8;
 /** Doublings of the distance at which the parts end. */
 const MOST_DOUBLINGS = 200;
 /** A part narrower than this share of the limits, or than the second one if g is defined in part, is not halved further. */
@@ -160,65 +157,30 @@ class Expecter {
    */
   private side(hat: Hat, scale: number): { most: number; stretches: readonly Stretch[] } {
     const { origin, direction, isBeyond } = hat;
-    const ofDensity = new SideEncloser(this.densityTape!, this.density.encloser!, hat);
-    const ofQuantity = new SideEncloser(this.quantity, this.encloser, hat);
+    const beyond = new Beyond(
+      hat,
+      { tape: this.densityTape!, encloser: this.density.encloser! },
+      { tape: this.quantity, encloser: this.encloser },
+    );
     let best: { most: number; distance: number } | null = null;
     let isInfinite = false;
     for (let k = 0; k < MOST_DOUBLINGS; k++) {
       const distance = hat.c * powerOfTwo(isBeyond ? k : -k);
       const x = origin + direction * distance;
       if (!Number.isFinite(x) || x === origin) break;
-      const most = this.beyond(hat, distance, x, ofDensity, ofQuantity);
+      const most = beyond.most(distance, x, this.centre);
       if (most === 'infinite') isInfinite = true;
       if (typeof most === 'string') continue;
       if (best === null || most < best.most) best = { most, distance };
       if (most <= WANTED_BEYOND * scale) break;
     }
-    if (best === null) throw this.refusedSide(hat, isInfinite);
+    if (best === null) throw refusedBeyond(hat, isInfinite, this.where);
     const stretches: Stretch[] = [];
     for (let t = hat.c; t !== best.distance; t *= isBeyond ? 2 : 0.5) {
       const [a, b] = [t, isBeyond ? 2 * t : t / 2].map((d) => origin + direction * d);
       stretches.push({ from: Math.min(a!, b!), to: Math.max(a!, b!), piece: null });
     }
     return { most: best.most, stretches: stretches.flatMap((each) => this.cutAtTurns(each)) };
-  }
-
-  /** A bound of the integral of |g − c|·f from a distance on. */
-  private beyond(
-    hat: Hat,
-    distance: number,
-    x: number,
-    ofDensity: SideEncloser,
-    ofQuantity: SideEncloser,
-  ): number | 'infinite' | 'unknown' {
-    const f = ofDensity.factors(distance);
-    const g = ofQuantity.factors(distance);
-    if (f === null || g === null) return 'unknown';
-    // Beyond the doubles no factor is left out, which needs no scale.
-    const { exponent } = this.envelope;
-    const scale = Math.abs(exponent) <= 1000 ? powerOfTwo(-exponent) : 0;
-    this.density.encloser!.densityAt(x, this.room);
-    const atX = Math.max(0, this.room.hi);
-    this.encloser.densityAt(x, this.room);
-    const size = Math.max(Math.abs(this.room.lo), Math.abs(this.room.hi));
-    const product = hatOver(hat, distance, [...f, ...g], mulUp(atX, size), scale);
-    const own = this.centre === 0 ? null : hatOver(hat, distance, f, atX, scale);
-    if (typeof product === 'string') return product;
-    if (typeof own === 'string') return own;
-    return addUp(product.hat.area, own ? mulUp(Math.abs(this.centre), own.hat.area) : 0);
-  }
-
-  private refusedSide({ origin, direction, isBeyond }: Hat, isInfinite: boolean): InputError {
-    const place = isBeyond
-      ? `towards ${direction > 0 ? 'larger' : 'smaller'} x`
-      : `near x = ${shortNumber(origin)}`;
-    return new InputError(
-      this.where,
-      isInfinite
-        ? `its mean is infinite, by what lies ${place}`
-        : `its mean cannot be bounded ${place}`,
-      'cap it with MIN or MAX, or give limits that leave the place out',
-    );
   }
 
   /** What the envelope leaves out around jumps. */

@@ -97,7 +97,7 @@ function areaPerUniform(
 }
 
 /** The s of a distance t: the hat's area beyond it as a share of all. */
-function shareBeyond({ kind, c, rate }: Hat, t: number): number {
+export function shareBeyond({ kind, c, rate }: Hat, t: number): number {
   if (kind === 'exponential') {
     const z = 1 + (rate * (t - c)) / 9;
     const square = z * z;

@@ -8,6 +8,7 @@ import { evaluator } from '../formula/evaluate';
 import { Defined } from '../formula/operation';
 import type { Tape } from '../formula/tape';
 import { heightOf } from './height';
+import type { PointSums } from './points';
 import { refinedIntegral } from './quadrature';
 import { hatIntegral } from './side';
 
@@ -38,6 +39,23 @@ export function sharesOfTerms(envelope: Envelope, terms: readonly Tape[]): numbe
   });
   const total = areas.reduce((sum, area) => sum + area, 0);
   return total > 0 && total < Infinity ? areas.map((area) => area / total) : null;
+}
+
+/** As sharesOfTerms, of the sum of a counted quantity's heights. */
+export function sharesOfPointTerms(sums: PointSums, terms: readonly Tape[]): number[] | null {
+  const { heightAt, exponent } = sums.envelope;
+  if (exponent !== 0) return null;
+  let isSigned = false;
+  const parts = terms.map((term) => {
+    const at = evaluator(term);
+    return sums.sum((x) => {
+      const part = at(x) / heightAt(x);
+      isSigned ||= !(part >= 0);
+      return part > 0 ? Math.min(1, part) : 0;
+    });
+  });
+  const total = parts.reduce((sum, part) => sum + part, 0);
+  return total > 0 && !isSigned ? parts.map((part) => part / total) : null;
 }
 
 function isNeverNegative({ pieces }: Envelope, term: Tape): boolean {

@@ -44,14 +44,26 @@ export function compile(
   variables: readonly string[],
   givens: GivenMap,
 ): Tape {
-  return new Compiler(variables, givens).product(sources);
+  return new Compiler(variables, givens, false).product(sources);
+}
+
+/**
+ * As `compile`, for variables that take whole numbers only: the same values there, and curves
+ * between them where FACT, COMBIN, POISSON.DIST and INT have steps.
+ */
+export function compileSmooth(
+  sources: readonly Source[],
+  variables: readonly string[],
+  givens: GivenMap,
+): Tape {
+  return new Compiler(variables, givens, true).product(sources);
 }
 
 type OperatorTree = Extract<Tree, { kind: 'operator' }>;
 type CallTree = Extract<Tree, { kind: 'call' }>;
 
 class Compiler {
-  private readonly steps = new Steps();
+  private readonly steps: Steps;
   private readonly outermost = new Scope();
   private readonly variablePlaces: number[];
   private work = 0;
@@ -62,7 +74,9 @@ class Compiler {
   constructor(
     private readonly variables: readonly string[],
     private readonly givens: GivenMap,
+    private readonly isSmooth: boolean,
   ) {
+    this.steps = new Steps(isSmooth);
     this.variablePlaces = variables.map((name, i) => {
       const step = this.steps.variable(i);
       this.outermost.set(nameKey(name), { kind: 'step', step });
@@ -427,6 +441,8 @@ class Compiler {
         return enclosure && enclosure.lo === enclosure.hi ? value : undefined;
       },
       isConstant: (node) => this.steps.at(node).isConstant,
+      isCount: (node) =>
+        this.isSmooth && !this.steps.at(node).isConstant && this.steps.isWhole(node),
       enclosure: (node) => this.steps.enclosure(node),
       isTruth: (node) => this.steps.isTruth(node),
       refuse: (found, expected) => this.error(at, found, expected),

@@ -14,6 +14,8 @@ export interface Maker {
   /** The value of a node that does not depend on the variables and is exactly known. */
   exactValue(node: number): number | undefined;
   isConstant(node: number): boolean;
+  /** True for a whole number that depends on the variables, where a curve through whole numbers is wanted. */
+  isCount(node: number): boolean;
   /** Encloses a node that does not depend on the variables, truths included; nothing where it is undefined. */
   enclosure(node: number): Interval | undefined;
   isTruth(node: number): boolean;

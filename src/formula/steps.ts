@@ -6,18 +6,42 @@ import type { Interval } from '../numeric/interval';
 import * as I from '../numeric/interval';
 import type { Operation } from './operation';
 import { Defined } from './operation';
-import { NUMBER, SUBTRACT, VARIABLE } from './operations/arithmetic';
+import { ADD, MULTIPLY, NEGATE, NUMBER, SUBTRACT, VARIABLE } from './operations/arithmetic';
+import { INT } from './operations/rounding';
 import type { Step, Tape } from './tape';
+
+/** Operations that give whole numbers from whole numbers. */
+const WHOLE_FROM_WHOLE: ReadonlySet<Operation> = new Set([ADD, SUBTRACT, MULTIPLY, NEGATE]);
 
 export class Steps {
   private readonly all: Step[] = [];
   private readonly known = new Map<string, number>();
   private readonly truths = new Set<number>();
+  private readonly whole = new Map<number, boolean>();
   /** One operation a name: steps of the same rule then share its code, which is what makes them fast. */
   private readonly operations = new Map<string, Operation>();
 
+  /** `areWhole`: the variables take whole numbers only. */
+  constructor(private readonly areWhole = false) {}
+
   get length(): number {
     return this.all.length;
+  }
+
+  /** True for what is known to be a whole number when the variables are. */
+  isWhole(place: number): boolean {
+    const known = this.whole.get(place);
+    if (known !== undefined) return known;
+    const { operation, a, b, enclosure } = this.all[place]!;
+    const isWhole =
+      enclosure !== null
+        ? enclosure.lo === enclosure.hi && Math.floor(enclosure.lo) === enclosure.lo
+        : operation === VARIABLE
+          ? this.areWhole
+          : operation === INT ||
+            (WHOLE_FROM_WHOLE.has(operation) && this.isWhole(a) && this.isWhole(b));
+    this.whole.set(place, isWhole);
+    return isWhole;
   }
 
   at(place: number): Step {
@@ -45,6 +69,7 @@ export class Steps {
   apply(wanted: Operation, args: readonly number[]): number {
     const [a = 0, b = a, c = a] = args;
     if (wanted === SUBTRACT && a === b) return this.number(0);
+    if (wanted === INT && this.areWhole && this.isWhole(a)) return a;
     const key = `${wanted.name}(${args.join()})`;
     const known = this.known.get(key);
     if (known !== undefined) return known;

@@ -17,13 +17,13 @@ import { ABS, CHOOSE_BY, SIGN } from './operations/choice';
 import { COUNT_ROWS } from './operations/counts';
 import { ERF, ERFC } from './operations/error';
 import { EXP, LN, LOG10 } from './operations/exponential';
-import { COMBINATIONS, FACTORIAL, GAMMA, GAMMALN } from './operations/gamma';
+import { GAMMA, GAMMALN } from './operations/gamma';
 import { GAMMA_ROWS } from './operations/gammas';
 import { ACOSH, ASINH, ATANH, COSH, SINH, TANH } from './operations/hyperbolic';
 import { MANY_ROWS } from './operations/many';
 import { NORMAL_ROWS } from './operations/normal';
 import { raise, SQRT } from './operations/power';
-import { INT, ROUNDING_ROWS } from './operations/rounding';
+import { ROUNDING_ROWS } from './operations/rounding';
 import {
   BOTH,
   comparison,
@@ -117,13 +117,6 @@ const ROWS: readonly Row[] = [
   unary('ACOSH', ACOSH),
   unary('ATANH', ATANH),
 
-  written('FACT', (make, x) => make.apply(FACTORIAL, make.apply(INT, x))),
-  {
-    name: 'COMBIN',
-    least: 2,
-    most: 2,
-    rewrite: (make, [n, k]) => make.apply(COMBINATIONS, make.apply(INT, n!), make.apply(INT, k!)),
-  },
   unary('GAMMA', GAMMA),
   unary('GAMMALN', GAMMALN),
   { name: 'ERF', least: 1, most: 2, rewrite: errorBetween },

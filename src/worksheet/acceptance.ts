@@ -3,10 +3,13 @@ import type { Range } from '../density/cells';
 import { CURRENT_METHOD } from '../density/givens';
 import { endCell } from '../density/limits';
 import type { PlainShape } from '../density/shape';
-import type { Column } from '../draw/column';
+import type { Lattice } from '../density/lattice';
+import type { Column } from '../draw/rejection';
+import type { Envelope } from '../envelope/envelope';
+import type { PointEnvelope } from '../envelope/points';
 import { promisedAcceptance } from '../envelope/envelope';
 import { waitingPValue } from '../evidence/proportion';
-import { sharesOfTerms } from '../exact/terms';
+import { sharesOfPointTerms, sharesOfTerms } from '../exact/terms';
 import { compile } from '../formula/compile';
 import { termsOf } from '../formula/terms';
 import type { Proved } from './proved';
@@ -82,10 +85,11 @@ function diagnose(
 
 /** The inputs as they were understood. */
 function asRead(shape: PlainShape): readonly Line[] {
-  const { from, to } = shape.limits;
+  const { limits, lattice } = shape;
   const ends = (variable: string): readonly Line[] => [
-    [`${variable} from`, endCell(from)],
-    [`${variable} to`, endCell(to)],
+    [`${variable} from`, endCell(limits.from)],
+    [`${variable} to`, endCell(limits.to)],
+    ...(lattice ? latticeLines(variable, lattice) : []),
   ];
   if (shape.kind === 'table') {
     const name = shape.heading === '' ? '' : ` "${shape.heading}"`;
@@ -97,7 +101,40 @@ function asRead(shape: PlainShape): readonly Line[] {
   return [...densityLines(sources), ...ends(variable), ...givenLines(givens)];
 }
 
-function proofLines({ envelope }: Proved): readonly Line[] {
+/** The step, and the last point, which `to` need not be. */
+function latticeLines(variable: string, { step, last, at }: Lattice): readonly Line[] {
+  const end = Number.isFinite(last) ? at(last) : 'unbounded';
+  return [
+    [`${variable} step`, step],
+    [`${variable} last point`, end],
+  ];
+}
+
+function proofLines(proved: Proved): readonly Line[] {
+  return proved.kind === 'points'
+    ? pointProofLines(proved.envelope)
+    : curveProofLines(proved.envelope);
+}
+
+function pointProofLines(envelope: PointEnvelope): readonly Line[] {
+  const hatArea = envelope.hats.reduce((sum, { area }) => sum + area, 0);
+  return [
+    [
+      'proof',
+      envelope.hats.length === 0
+        ? 'proved: the height at every point lies between the lower and the upper bound'
+        : 'proved: the height at every point lies between the lower and the upper bound, and under a falling curve beyond them',
+    ],
+    ['points', envelope.heights.most.length],
+    ['pieces', envelope.pieces.length],
+    ['share of proposals beyond the pieces', hatArea / envelope.upperArea],
+    ['sum at least', envelope.areaLo],
+    ['sum at most', envelope.areaHi],
+    ['scale exponent', envelope.exponent],
+  ];
+}
+
+function curveProofLines(envelope: Envelope): readonly Line[] {
   const isTable = envelope.densityAt === null;
   const hatArea = envelope.hats.reduce((sum, { area }) => sum + area, 0);
   return [
@@ -116,17 +153,18 @@ function proofLines({ envelope }: Proved): readonly Line[] {
 }
 
 /** What share of the area each term of a sum holds, which is seldom the number in front of it. */
-function termLines(shape: PlainShape, { envelope }: Proved): readonly Line[] {
+function termLines(shape: PlainShape, proved: Proved): readonly Line[] {
   if (shape.kind === 'table') return [];
   const { sources, variable, givens } = shape;
   const sums = sources.filter((source) => termsOf(source).length > 0);
   if (sums.length !== 1) return [];
   const others = sources.filter((source) => source !== sums[0]);
   const terms = termsOf(sums[0]!);
-  const shares = sharesOfTerms(
-    envelope,
-    terms.map((term) => compile([term, ...others], [variable], givens)),
-  );
+  const tapes = terms.map((term) => compile([term, ...others], [variable], givens));
+  const shares =
+    proved.kind === 'points'
+      ? sharesOfPointTerms(proved.shares.sums, tapes)
+      : sharesOfTerms(proved.envelope, tapes);
   return (shares ?? []).map((share, i): Line => [
     `share of area, term ${i + 1}: ${shortened(terms[i]!.text)}`,
     share,

@@ -81,6 +81,13 @@ function onlyShape(range: Range, where: string): PlainShape {
       `${shapes.length} shapes in one range`,
       'give each shape a range of its own',
     );
+  if (shapes[0]!.lattice) {
+    throw new InputError(
+      where,
+      'a counted quantity',
+      'give continuous shapes; a formula of counted values can add up terms such as 0.3*POISSON.DIST(x,4,FALSE)+0.7*POISSON.DIST(x,9,FALSE)',
+    );
+  }
   return shapes[0]!;
 }
 

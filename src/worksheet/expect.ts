@@ -6,10 +6,11 @@ import { DEFAULT_VARIABLE, readLimitCells } from '../density/limits';
 import type { PlainShape } from '../density/shape';
 import { InputError } from '../errors';
 import { expectation } from '../exact/expect';
-import { compile } from '../formula/compile';
+import type { PointTape } from '../exact/expectPoints';
+import { pointExpectation } from '../exact/expectPoints';
+import { compile, compileSmooth } from '../formula/compile';
 import { parse } from '../formula/parse';
 import type { GivenMap } from '../formula/given';
-import type { Tape } from '../formula/tape';
 import { onlyShape } from './envelope';
 import { prove } from './proved';
 
@@ -33,8 +34,11 @@ export function expect(
 ): Range {
   const shape = onlyShape(density, limits, givens, PLACES);
   const measured = readQuantity(given(quantity), shape, limits, givens);
-  const { envelope, tape } = prove(shape);
-  const { value, atLeast, atMost } = expectation(envelope, tape, measured, QUANTITY);
+  const proved = prove(shape);
+  const { value, atLeast, atMost } =
+    proved.kind === 'points'
+      ? pointExpectation(proved.shares, proved.smooth, measured, QUANTITY)
+      : expectation(proved.envelope, proved.tape, measured.tape, QUANTITY);
   return [
     ['value', 'at least', 'at most'],
     [value, atLeast, atMost],
@@ -46,7 +50,7 @@ function readQuantity(
   shape: PlainShape,
   limits: Range | null,
   givens: readonly Range[],
-): Tape {
+): PointTape {
   const expected = 'give a formula as text, such as x or MAX(0,x-60)';
   if (range === null) throw new InputError(QUANTITY, 'it is missing', expected);
   passErrors(range);
@@ -56,7 +60,9 @@ function readQuantity(
   const text = String(cell);
   const source = { text, where: 'Quantity', tree: parse(text, 'Quantity') };
   const { variable, named } = namesOf(shape, givenUnlessZero(limits), givens);
-  return compile([source], [variable], named);
+  const tape = compile([source], [variable], named);
+  const smooth = shape.lattice?.isWhole ? compileSmooth([source], [variable], named) : tape;
+  return { tape, smooth };
 }
 
 /** The names that a quantity may use. */

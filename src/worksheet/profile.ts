@@ -6,7 +6,7 @@ import { heightOn } from '../envelope/hat';
 import { InputError } from '../errors';
 import { heightOf } from '../exact/height';
 import { onlyShape } from './envelope';
-import type { Proved } from './proved';
+import type { ProvedCurve, ProvedPoints } from './proved';
 import { prove } from './proved';
 
 const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)', givens: 4 };
@@ -20,6 +20,8 @@ const LEFT_OUT = 0.00005;
  * Points from limit to limit: the density scaled to area 1 with its upper and lower line,
  * and the share of the area below each. Where the limits are unbounded, the central 0.9999
  * of the area; at a pole, from where the pieces begin.
+ * Of a counted quantity a row for each point, at most count of them evenly chosen: density is the
+ * point's share, and share below leaves the point itself out.
  * Shapes: a heading row, then count × 5. Units: x as in the density; heights as share per
  * unit of x; share below as a fraction of 1.
  * Guarantee: none for the density's last digits (it is for looking at); the lines are the
@@ -33,19 +35,43 @@ export function profile(
   givens: readonly Range[],
 ): Range {
   const proved = prove(onlyShape(density, limits, givens, PLACES));
-  const { envelope, area, shares } = proved;
   const n = readCount(givenUnlessZero(count));
+  return [
+    ['x', 'density', 'upper', 'lower', 'share below'],
+    ...(proved.kind === 'points' ? pointRows(proved, n) : curveRows(proved, n)),
+  ];
+}
+
+function curveRows(proved: ProvedCurve, n: number): Range {
+  const { envelope, area, shares } = proved;
   const [from, to] = shownEnds(proved);
   const height = heightOf(envelope);
-  const rows = Array.from({ length: n }, (_, i) => {
+  return Array.from({ length: n }, (_, i) => {
     const x = i === n - 1 ? to : from + (to - from) * (i / (n - 1));
     const { upper, lower } = linesAt(envelope, x);
     return [x, height(x) / area, upper / area, lower / area, shares.below(x)];
   });
-  return [['x', 'density', 'upper', 'lower', 'share below'], ...rows];
 }
 
-function shownEnds({ envelope, shares }: Proved): readonly [from: number, to: number] {
+/** One row a point; where they are more than n, n of them, evenly chosen. */
+function pointRows({ envelope, area, shares }: ProvedPoints, n: number): Range {
+  const { lattice, heights, first: begin } = envelope;
+  const numberAt = (side: 'below' | 'above'): number =>
+    Math.round(lattice.numberOf(shares.quantile(LEFT_OUT, side)));
+  const first = Number.isFinite(lattice.first) ? lattice.first : numberAt('below');
+  const last = Number.isFinite(lattice.last) ? lattice.last : numberAt('above');
+  const nRows = Math.min(n, last - first + 1);
+  return Array.from({ length: nRows }, (_, i) => {
+    const number = first + (nRows > 1 ? Math.round((i / (nRows - 1)) * (last - first)) : 0);
+    const x = lattice.at(number);
+    const [least, most] = [heights.least[number - begin], heights.most[number - begin]];
+    const height = least === undefined ? envelope.heightAt(x) : least / 2 + most! / 2;
+    const share = height / area;
+    return [x, share, (most ?? height) / area, (least ?? 0) / area, shares.below(x)];
+  });
+}
+
+function shownEnds({ envelope, shares }: ProvedCurve): readonly [from: number, to: number] {
   const { from, to, pieces } = envelope;
   return [
     from === -Infinity ? shares.quantile(LEFT_OUT, 'below') : pieces[0]!.from,

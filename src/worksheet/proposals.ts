@@ -72,9 +72,9 @@ function plainLines({
   nRows,
 }: NonNullable<AnyDrawRequest['plain']>): Range | null {
   const { shape, key } = columns[0]!;
-  const { envelope, drawer } = prove(shape);
-  const made = drawer.proposals(key, firstRow, nRows, MOST_LINES);
-  const height = heightOf(envelope);
+  const proved = prove(shape);
+  const made = proved.drawer.proposals(key, firstRow, nRows, MOST_LINES);
+  const height = proved.kind === 'points' ? proved.envelope.heightAt : heightOf(proved.envelope);
   return (
     made && [
       headings(['value']),

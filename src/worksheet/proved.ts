@@ -1,16 +1,21 @@
 /** Proofs and columns of shapes of one variable, each made once while it is kept (cache.ts). */
+import type { Lattice } from '../density/lattice';
 import type { PlainShape } from '../density/shape';
 import { inLine } from '../density/shape';
-import type { Column } from '../draw/column';
 import { Drawer } from '../draw/column';
+import { PointDrawer } from '../draw/points';
+import type { Column, ColumnDrawer } from '../draw/rejection';
 import type { Envelope } from '../envelope/envelope';
+import type { PointEnvelope } from '../envelope/points';
+import { knownPoints, provePoints } from '../envelope/points';
 import { polylineEnvelope } from '../envelope/polyline';
 import { proveEnvelope } from '../envelope/prove';
-import { continuous } from '../exact/continuous';
-import type { Distribution } from '../exact/distribution';
 import { rescaled } from '../exact/rescale';
+import { PointShares } from '../exact/points';
+import type { ExactShares } from '../exact/shares';
 import { Shares } from '../exact/shares';
-import { compile } from '../formula/compile';
+import { bug } from '../errors';
+import { compile, compileSmooth } from '../formula/compile';
 import type { Tape } from '../formula/tape';
 import { powerOfTwo } from '../numeric/float';
 import type { GivenMap } from '../formula/given';
@@ -19,67 +24,136 @@ import { remember } from './cache';
 
 /** What a piece takes in its envelope, guide table and exact shares, generously. */
 const BYTES_PER_PIECE = 2000;
+const BYTES_PER_POINT = 40;
 const BYTES_PER_STEP = 1500;
 
 /** A shape with its proof and what is drawn and told from it. */
-export interface Proved {
+export type Proved = ProvedCurve | ProvedPoints;
+
+interface Told {
   readonly key: string;
+  readonly drawer: ColumnDrawer;
+  /** Exact shares and quantiles, worked out when first asked for. */
+  readonly shares: ExactShares;
+  /** The area under the scaled density, or the sum of its heights, within its proved bounds. */
+  readonly area: number;
+}
+
+/** A continuous quantity. */
+export interface ProvedCurve extends Told {
+  readonly kind: 'curve';
   readonly envelope: Envelope;
-  readonly drawer: Drawer;
   /** The compiled formula; null for a table. */
   readonly tape: Tape | null;
-  /** Exact shares and quantiles, worked out when first asked for. */
-  readonly shares: Shares;
-  /** The area under the scaled density, within its proved bounds. */
-  readonly area: number;
-  /** What columns are compared with. */
-  readonly distribution: Distribution;
+}
+
+/** A counted quantity. */
+export interface ProvedPoints extends Told {
+  readonly kind: 'points';
+  readonly envelope: PointEnvelope;
+  /** The formula as a curve through the points; null for a table. */
+  readonly smooth: Tape | null;
+  readonly shares: PointShares;
 }
 
 /** A drawer that is not kept, for one of so many shapes that they would crowd out all others. @throws {InputError} as prove. */
-export function drawerOf(shape: PlainShape): Drawer {
-  return new Drawer(envelopeOf(shape).envelope);
+export function drawerOf(shape: PlainShape): ColumnDrawer {
+  return proofOf(shape, '').drawer;
 }
 
 /** The proof of a shape. @throws {InputError} when it cannot be proved. */
 export function prove(shape: PlainShape): Proved {
   const key = canonical(shape);
   return remember(key, () => {
-    const { envelope, tape } = inLine(shape.kind === 'formula' ? shape.line : undefined, () =>
-      envelopeOf(shape),
+    const value = inLine(shape.kind === 'formula' ? shape.line : undefined, () =>
+      proofOf(shape, key),
     );
-    const nSteps = tape?.steps.length ?? 0;
+    const tape = value.kind === 'curve' ? value.tape : value.smooth;
+    const nPoints = value.kind === 'points' ? value.envelope.heights.most.length : 0;
     return {
-      value: withShares({ key, envelope, drawer: new Drawer(envelope), tape }),
-      bytes: envelope.pieces.length * BYTES_PER_PIECE + nSteps * BYTES_PER_STEP,
+      value,
+      bytes:
+        value.envelope.pieces.length * BYTES_PER_PIECE +
+        nPoints * BYTES_PER_POINT +
+        (tape?.steps.length ?? 0) * BYTES_PER_STEP,
     };
   });
 }
 
-function withShares(proof: Omit<Proved, 'shares' | 'area' | 'distribution'>): Proved {
-  let known: Pick<Proved, 'shares' | 'area' | 'distribution'> | undefined;
-  const exact = (): NonNullable<typeof known> => {
-    if (known) return known;
-    const { envelope, shift } = rescaled(proof.envelope, proof.tape);
-    const shares = new Shares(envelope);
-    return (known = {
-      shares,
-      area: shares.area / powerOfTwo(shift),
-      distribution: continuous(shares, proof.envelope, proof.tape),
-    });
-  };
+/** The proof of a shape that is known to be continuous. */
+export function proveCurve(shape: PlainShape): ProvedCurve {
+  const proved = prove(shape);
+  if (proved.kind === 'curve') return proved;
+  throw bug('a counted shape where a continuous one belongs');
+}
+
+function proofOf(shape: PlainShape, key: string): Proved {
+  const { lattice } = shape;
+  return lattice ? pointsOf(shape, lattice, key) : curveOf(shape, key);
+}
+
+function curveOf(shape: PlainShape, key: string): ProvedCurve {
+  const tape =
+    shape.kind === 'table' ? null : compile(shape.sources, [shape.variable], shape.givens);
+  const envelope =
+    shape.kind === 'table'
+      ? polylineEnvelope(shape.polyline)
+      : proveEnvelope(tape!, shape.limits.from, shape.limits.to);
+  const exact = once(() => {
+    const { envelope: roomy, shift } = rescaled(envelope, tape);
+    const shares = new Shares(roomy);
+    return { shares, area: shares.area / powerOfTwo(shift) };
+  });
   return {
-    ...proof,
+    key,
+    kind: 'curve',
+    envelope,
+    tape,
+    drawer: new Drawer(envelope),
     get shares() {
       return exact().shares;
     },
     get area() {
       return exact().area;
     },
-    get distribution() {
-      return exact().distribution;
+  };
+}
+
+function pointsOf(shape: PlainShape, lattice: Lattice, key: string): ProvedPoints {
+  const { envelope, smooth } = pointEnvelopeOf(shape, lattice);
+  const exact = once(() => new PointShares(envelope));
+  return {
+    key,
+    kind: 'points',
+    envelope,
+    smooth,
+    drawer: new PointDrawer(envelope),
+    get shares() {
+      return exact();
+    },
+    get area() {
+      return exact().area;
     },
   };
+}
+
+function pointEnvelopeOf(
+  shape: PlainShape,
+  lattice: Lattice,
+): { readonly envelope: PointEnvelope; readonly smooth: Tape | null } {
+  if (shape.kind === 'table') {
+    const { heightAt, exponent } = polylineEnvelope(shape.polyline);
+    return { envelope: knownPoints(lattice, heightAt, exponent), smooth: null };
+  }
+  const { sources, variable, givens } = shape;
+  const tape = compile(sources, [variable], givens);
+  const smooth = lattice.isWhole ? compileSmooth(sources, [variable], givens) : tape;
+  return { envelope: provePoints(tape, smooth, lattice), smooth };
+}
+
+function once<T extends object>(make: () => T): () => T {
+  let made: T | undefined;
+  return () => (made ??= make());
 }
 
 /** The column of a proved shape under a key. */
@@ -95,21 +169,18 @@ export function drawColumn(
   });
 }
 
-function envelopeOf(shape: PlainShape): { envelope: Envelope; tape: Tape | null } {
-  if (shape.kind === 'table') return { envelope: polylineEnvelope(shape.polyline), tape: null };
-  const tape = compile(shape.sources, [shape.variable], shape.givens);
-  const { from, to } = shape.limits;
-  return { envelope: proveEnvelope(tape, from, to), tape };
-}
-
 function canonical(shape: PlainShape): string {
-  if (shape.kind === 'table') return JSON.stringify([shape.polyline.x, shape.polyline.heights]);
+  const { lattice } = shape;
+  const points = lattice && [lattice.step, lattice.first, lattice.last, lattice.at(0)];
+  if (shape.kind === 'table')
+    return JSON.stringify([shape.polyline.x, shape.polyline.heights, points]);
   const { sources, variable, limits, givens } = shape;
   return JSON.stringify([
     sources.map(({ text, where }) => [text, where]),
     variable,
     limits.from,
     limits.to,
+    points,
     canonicalGivens(givens),
   ]);
 }

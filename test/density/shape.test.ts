@@ -152,8 +152,8 @@ describe('limits', () => {
       '',
     ],
     [
-      [['x', 0, 9, 1]],
-      '1 asks for counted values; give 0: only continuous quantities can be drawn so far.',
+      [['x', 0, 9, -1]],
+      '-1 is negative; give the distance of neighbouring values, such as 1, or 0 for a continuous quantity.',
       ', step',
     ],
     [[['x', 0, 9, 'a']], '"a" is not a number; give a number.', ', step'],
@@ -250,8 +250,8 @@ describe('a shape block', () => {
     ],
     [['Sum', 1], '"Sum": it is the name of a formula function; rename the given.', ', '],
     [
-      ['step', 2],
-      'step: 2 asks for counted values; give 0: only continuous quantities can be drawn so far.',
+      ['step', -2],
+      'step: -2 is negative; give the distance of neighbouring values, such as 1, or 0 for a continuous quantity.',
       ', ',
     ],
     [['method', 1], 'method: there is no method 1; use 0, the only one so far.', ', '],

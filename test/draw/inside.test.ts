@@ -1,5 +1,5 @@
 /** Heights in a gap are mostly settled by the bounds inside a piece: the draws may not depend on it. */
-import type { Column } from '../../src/draw/column';
+import type { Column } from '../../src/draw/rejection';
 import { Drawer } from '../../src/draw/column';
 import type { Envelope } from '../../src/envelope/envelope';
 import type { Inside } from '../../src/envelope/piece';

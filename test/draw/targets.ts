@@ -4,13 +4,13 @@
  * of points with a jump and a zero stretch. The numbers are those of test/forms.
  */
 import erf from '@stdlib/math-base-special-erf';
-import type { Column } from '../../src/draw/column';
+import type { Column } from '../../src/draw/rejection';
 import { Drawer } from '../../src/draw/column';
 import type { Envelope } from '../../src/envelope/envelope';
 import { readShapes } from '../../src/density/shape';
 import { blend } from '../../src/index';
 import { keyOf } from '../../src/random/key';
-import { prove } from '../../src/worksheet/proved';
+import { proveCurve } from '../../src/worksheet/proved';
 import { proved, tableEnvelope } from '../envelope/proved';
 import { forms } from '../forms/forms';
 
@@ -156,7 +156,7 @@ function blended(): Envelope {
     limits: 'limits',
     givens: 3,
   });
-  return prove(shapes[0]!).envelope;
+  return proveCurve(shapes[0]!).envelope;
 }
 
 /** A linear pool with two jumps; its cumulative area is elementary. */

@@ -1,4 +1,4 @@
-import { prove } from '../../src/worksheet/proved';
+import { proveCurve } from '../../src/worksheet/proved';
 import { readShapes } from '../../src/density/shape';
 import { checkPoints, wideFuzz } from './wideFuzz';
 
@@ -12,7 +12,7 @@ describe('proveEnvelope on random formulas of the whole vocabulary', () => {
   test('a piece lowered by a millionth is noticed [law]', () => {
     const places = { density: 'density', limits: 'limits', givens: 3 };
     const [shape] = readShapes([['PHI(x)']], [[-2, 2]], [], places).shapes;
-    const { envelope } = prove(shape!);
+    const { envelope } = proveCurve(shape!);
     const lowered = envelope.pieces.map((p) => ({
       ...p,
       upperLeft: p.lowerLeft * (1 - 1e-6),

@@ -1,8 +1,11 @@
 /** The draws against exact bin shares, 10^8 of each density (npm run check:long). */
+import { PointDrawer } from '../../src/draw/points';
 import { keyOf } from '../../src/random/key';
 import { RowStream } from '../../src/random/stream';
 import { FALSE_ALARM, goodnessOfFit } from '../draw/statistics';
 import type { Target } from '../draw/targets';
+import { provedPoints } from '../envelope/pointsFuzz';
+import { COUNTED } from '../worksheet/countedShapes';
 import {
   binsOf,
   blendTarget,
@@ -75,4 +78,40 @@ describe('Drawer.column over 10^8 rows', () => {
     count(tableDraws(target, 100, 1e7), bins.edges, counts);
     expect(goodnessOfFit(counts, bins.shares)).toBeLessThan(FALSE_ALARM);
   });
+});
+
+describe('PointDrawer.column over 10^7 rows', () => {
+  test.each(COUNTED)(
+    'draws of $name follow the exact shares [law]',
+    ({ density, limits, share }) => {
+      const [[, from, to, step]] = limits as [[string, number, number | string, number]];
+      const end = typeof to === 'number' ? to : Infinity;
+      const drawer = new PointDrawer(provedPoints(density, from, end, step));
+      const counts = new Float64Array(201);
+      let nearTies = 0;
+      for (let part = 0; part < 10; part++) {
+        const column = drawer.column(keyOf('plan-2027', density), 1 + part * 1e6, 1e6);
+        for (const value of column.values) counts[Math.min(200, value)]!++;
+        nearTies += column.nearTies;
+      }
+      const shares: number[] = [];
+      for (let k = 0; k <= end && k < 200 && share(k) * 1e7 >= 5; k++) shares.push(share(k));
+      const rest = 1 - shares.reduce((sum, s) => sum + s, 0);
+      // What lies beyond is counted with the last value.
+      shares[shares.length - 1]! += rest;
+      const own = counts.slice(0, shares.length);
+      own[shares.length - 1]! += counts.slice(shares.length).reduce((sum, n) => sum + n, 0);
+      const p = goodnessOfFit(own, shares);
+      console.log(
+        `${density}: ${shares.length} values, p = ${p.toPrecision(3)}, ${nearTies} near-ties`,
+      );
+      expect(p).toBeGreaterThan(FALSE_ALARM);
+      // One draw in fifty of the commonest value moved to the next.
+      const middle = shares.indexOf(Math.max(...shares));
+      const moved = Math.round(own[middle]! / 50);
+      own[middle]! -= moved;
+      own[middle + 1]! += moved;
+      expect(goodnessOfFit(own, shares)).toBeLessThan(FALSE_ALARM);
+    },
+  );
 });

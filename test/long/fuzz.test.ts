@@ -1,5 +1,6 @@
 /** Fuzzing the proof at length (npm run check:long). */
 import { fuzz } from '../envelope/fuzz';
+import { pointsFuzz } from '../envelope/pointsFuzz';
 import { randomOpenShape, randomShape } from '../envelope/randomFormula';
 import { wideFuzz } from '../envelope/wideFuzz';
 
@@ -29,5 +30,16 @@ describe('proveEnvelope on the whole vocabulary, tables and lists', () => {
     console.log(`whole vocabulary: ${proved} proved, ${points} points, ${faults.length} faults`);
     expect(faults).toEqual([]);
     expect(points).toBeGreaterThanOrEqual(10_000_000);
+  });
+});
+
+describe('provePoints on many random formulas and lattices', () => {
+  test('refuses in words or proves heights that no point misses [law]', () => {
+    const { proved, refused, points, hats, faults } = pointsFuzz('lorries', 2000);
+    console.log(
+      `counted: ${proved} proved, ${refused} refused, ${hats} hats, ${points} heights, ${faults.length} faults`,
+    );
+    expect(faults).toEqual([]);
+    expect(proved).toBeGreaterThanOrEqual(1000);
   });
 });

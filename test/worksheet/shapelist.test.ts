@@ -237,8 +237,8 @@ describe('a mistake in a shape list names its line', () => {
     ],
     [
       'a step',
-      small(['from', 'to', 'step', 'rows'], ['a', '1', 0, 9, 1, 100]),
-      'density (argument 1), line 1 "a", step: 1 asks for counted values; give 0: only continuous quantities can be drawn so far.',
+      small(['from', 'to', 'step', 'rows'], ['a', '1', 0, 9, -1, 100]),
+      'density (argument 1), line 1 "a", step: -1 is negative; give the distance of neighbouring values, such as 1, or 0 for a continuous quantity.',
     ],
     [
       'a method there is not',

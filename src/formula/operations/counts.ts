@@ -1,6 +1,8 @@
 /**
- * POISSON.DIST and BINOM.DIST. With the count given they are densities of the rate or
- * the chance, as a posterior needs; with the count as the variable they are steps.
+ * FACT, COMBIN, POISSON.DIST and BINOM.DIST. With the count given the last two are densities
+ * of the rate or the chance, as a posterior needs; with the count as the variable they are
+ * steps. Where only whole numbers count, a curve through the values there serves as well and
+ * tells how they fall far out.
  *
  * Source: OpenFormula 1.2 §6.18, ECMA-376 part 1 §18.17.7; masses are written around
  * their peak (Loader 2000, "Fast and accurate computation of binomial probabilities").
@@ -15,16 +17,19 @@ import { boundedRatio } from '../../numeric/stirling';
 import type { Operation } from '../operation';
 import { Defined } from '../operation';
 import type { Maker, Row } from '../row';
-import { DIVIDE, MULTIPLY, SUBTRACT } from './arithmetic';
+import { ADD, DIVIDE, MULTIPLY, SUBTRACT } from './arithmetic';
 import { betaDensity, isShare } from './betas';
 import { betaShareAt, gammaShareAt } from './cumulative';
-import { COMBINATIONS } from './gamma';
+import { EXP } from './exponential';
+import { COMBINATIONS, FACTORIAL, GAMMA, GAMMALN } from './gamma';
 import { gammaDensity, whereNotNegative } from './gammas';
 import { checkShape, isCumulative, wholeConstant } from './parameter';
 import { raise } from './power';
 import { INT } from './rounding';
 import { where } from './undefined';
 
+/** Up to this many factors COMBIN is written as their product. */
+const MOST_FACTORS = 64;
 /** Up to this many trials a binomial mass is written as it stands. */
 const FEW_TRIALS = 900;
 
@@ -157,8 +162,17 @@ function poissonSteps(make: Maker, count: number, mean: number, isBelow: boolean
   return make.apply(operation, make.apply(INT, count));
 }
 
+/** EXP(k ln(mean) − mean − ln Γ(k + 1)). */
+function poissonCurve(make: Maker, count: number, mean: number): number {
+  checkShape(make, 'mean', mean);
+  const log = make.apply(MULTIPLY, count, make.call('LN', mean));
+  const factorial = make.apply(GAMMALN, make.apply(ADD, count, make.number(1)));
+  return make.apply(EXP, make.apply(SUBTRACT, make.apply(SUBTRACT, log, mean), factorial));
+}
+
 function poisson(make: Maker, [count, mean, flag]: readonly number[]): number {
   const isBelow = isCumulative(make, flag!);
+  if (make.isCount(count!) && !isBelow) return poissonCurve(make, count!, mean!);
   if (!make.isConstant(count!)) return poissonSteps(make, count!, mean!, isBelow);
   const k = wholeConstant(make, 'count', count!, 0);
   const density = gammaDensity(make, mean!, make.number(k));
@@ -225,7 +239,29 @@ function binomial(make: Maker, args: readonly number[]): number {
   return where(make, isShare(make, chance, rest), value, outside);
 }
 
+function factorial(make: Maker, [n]: readonly number[]): number {
+  return make.isCount(n!)
+    ? make.apply(GAMMA, make.apply(ADD, n!, make.number(1)))
+    : make.apply(FACTORIAL, make.apply(INT, n!));
+}
+
+function combinations(make: Maker, [n, k]: readonly number[]): number {
+  const chosen = make.exactValue(k!);
+  const isFew = chosen !== undefined && chosen >= 0 && chosen <= MOST_FACTORS;
+  if (!make.isCount(n!) || !isFew)
+    return make.apply(COMBINATIONS, make.apply(INT, n!), make.apply(INT, k!));
+  // n(n − 1) … (n − k + 1) / k!
+  let product = make.number(1);
+  for (let i = 0; i < Math.floor(chosen); i++) {
+    const factor = make.apply(SUBTRACT, n!, make.number(i));
+    product = make.apply(MULTIPLY, product, make.apply(DIVIDE, factor, make.number(i + 1)));
+  }
+  return product;
+}
+
 export const COUNT_ROWS: readonly Row[] = [
+  { name: 'FACT', least: 1, most: 1, rewrite: factorial },
+  { name: 'COMBIN', least: 2, most: 2, rewrite: combinations },
   { name: 'POISSON.DIST', least: 3, most: 3, rewrite: poisson },
   { name: 'BINOM.DIST', least: 4, most: 4, rewrite: binomial },
 ];
