@@ -20,3 +20,4 @@ export { above, below, quantile } from './worksheet/shares';
 export { stratified } from './worksheet/stratified';
 export { summary } from './worksheet/summary';
 export { thin } from './worksheet/thin';
+export { total } from './worksheet/total';

@@ -28,6 +28,7 @@ import {
   stratified,
   summary,
   thin,
+  total,
 } from '../../src/index';
 import type { Range } from '../../src/index';
 import metadata from './functions.json';
@@ -86,6 +87,10 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     each(density, limits, seed, label, lines, givens),
   STRATIFIED: ([density = null, limits = null, rows = null, seed = null, label = null], givens) =>
     stratified(density, limits, rows, seed, label, givens),
+  TOTAL: (
+    [counts = null, density = null, limits = null, each = null, seed = null, label = null],
+    givens,
+  ) => total(counts, density, limits, each, seed, label, givens),
   PICK: ([table = null, weights = null, rows = null, seed = null, label = null]) =>
     pick(table, weights, rows, seed, label),
   THIN: ([table = null, weights = null, seed = null, label = null, bound = null]) =>

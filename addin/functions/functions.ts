@@ -300,6 +300,32 @@ export function stratified(
 }
 
 /**
+ * Draws as many values for each row as its count says, such as the losses of a season with that many events, and gives their total, the largest of them and the count. Raising one count only adds draws to that row; all other rows stay as they are. A heading row, then one row a count, in the unit of x (or of each). Without draws total and largest are 0.
+ * @customfunction TOTAL
+ * @cancelable
+ * @param counts One column of whole numbers from 0 to 1000000, such as draws of a counted quantity; together at most 100000000.
+ * @param density How large one of them is: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to, seed, label and constants.
+ * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
+ * @param each A formula in x that every draw is put through, such as MIN(x,50000) for a cover of at most 50000. Left out: x itself.
+ * @param seed Any text or number except blank and 0. Needed unless a block has it.
+ * @param label Name of the quantity. Each label has its own random numbers. Needed unless a block has it.
+ * @param givens What the names in the formulas stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
+ */
+export function total(
+  counts: any[][],
+  density: any[][],
+  limits?: any[][],
+  each?: any[][],
+  seed?: any[][],
+  label?: any[][],
+  givens?: any[][][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('TOTAL', [counts, density, limits, each, seed, label], givens, invocation);
+}
+
+/**
  * Picks whole rows of a table at random, such as past seasons, each with a chance in proportion to its weight; a row can come more than once. The table's heading row if it has one, then the picked rows with their texts and numbers as they stand.
  * @customfunction PICK
  * @param table The rows to pick from, with or without a heading row. A blank counts as 0.

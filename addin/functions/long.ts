@@ -1,6 +1,7 @@
 /**
  * Which calls may take so long that they belong in a Worker: proofs in several
- * variables, and formulas as long as a page. All others are done before a Worker
+ * variables or over many counted points, formulas as long as a page, totals over
+ * millions of draws. All others are done before a Worker
  * would have read its task.
  */
 import type { Range } from '../../src/index';
@@ -10,12 +11,21 @@ import type { Arguments } from './reply';
 /** Characters of a formula beyond which its proof may take longer than a tenth of a second. */
 const LONG_FORMULA = 500;
 
+/** Counted points beyond which a proof, and draws beyond which a total, may take longer than that. */
+const MANY_POINTS = 50_000;
+const MANY_DRAWS = 1_000_000;
+
 /** Whether a call is worth a Worker. Guarantee: none; the answer is the same either way. */
 export function takesLong(name: string, args: Arguments): boolean {
   const parameters = catalogue.find((entry) => entry.name === name)?.parameters ?? [];
   const at = (parameter: string): Range | null =>
     args[parameters.findIndex((each) => each.name === parameter)] ?? null;
-  return hasSeveralVariables(at('limits')) || hasLongFormula(at('density'));
+  return (
+    hasSeveralVariables(at('limits')) ||
+    hasManyPoints(at('limits')) ||
+    hasLongFormula(at('density')) ||
+    (name === 'TOTAL' && sumOf(at('counts')) > MANY_DRAWS)
+  );
 }
 
 /** Rows name | from | to, below a heading or not. */
@@ -25,6 +35,21 @@ function hasSeveralVariables(limits: Range | null): boolean {
   );
   const isHeading = typeof named[0]?.[1] === 'string' && typeof named[0][2] === 'string';
   return named.length - (isHeading ? 1 : 0) > 1;
+}
+
+/** A row name | from | to | step with numbers; where an end is open the points are few or the proof refuses. */
+function hasManyPoints(limits: Range | null): boolean {
+  return (limits ?? []).some(([, from, to, step]) => {
+    if (typeof from !== 'number' || typeof to !== 'number' || typeof step !== 'number')
+      return false;
+    return step > 0 && (to - from) / step > MANY_POINTS;
+  });
+}
+
+function sumOf(counts: Range | null): number {
+  return (counts ?? [])
+    .flat()
+    .reduce<number>((sum, count) => sum + (typeof count === 'number' ? count : 0), 0);
 }
 
 function hasLongFormula(density: Range | null): boolean {

@@ -14,6 +14,9 @@
  * are picked or thinned do not share the numbers of draws under the same seed and label. So do
  * purposes 4, "shuffle", and 5, "shift", for the strata of a stratified column.
  *
+ * Purpose 6, "total", gives a row a key of its own, words 0 and 1 of the block of that row, under
+ * which its draws are numbered like rows: draw j of row i is the same however many others there are.
+ *
  * Purposes from 16 on, "place", serve proposals of several variables: with words 0 and 1 as of
  * a further number, block b of a proposal has purpose 16 + b and gives numbers 2b and 2b + 1.
  *
@@ -22,7 +25,8 @@
  * is a fresh proposal and uses both; attempt 0 continues the row's first number and uses only v.
  *
  * Two words w, w′ make one number with 53 random bits, a multiple of 2^-53 in [0, 1).
- * Rows are whole numbers below 2^32, attempts likewise.
+ * Rows are whole numbers below 2^32, attempts below 2^31; from there on the further numbers are the
+ * low bits of a place that one number does not tell finely enough (draw/points.ts).
  */
 import type { Key } from './key';
 import { fillFractions, fraction, philox4x32 } from './philox';
@@ -35,6 +39,7 @@ export const PURPOSE = {
   thin: 3,
   shuffle: 4,
   shift: 5,
+  total: 6,
   place: 16,
 } as const;
 
@@ -54,17 +59,17 @@ export class RowStream {
   }
 
   /**
-   * Writes the first numbers of rows firstRow … firstRow + count − 1 to out[0 … count − 1].
+   * Writes the first numbers of rows firstRow … firstRow + count − 1 to out from `at` on.
    * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
    */
-  fillFirst(firstRow: number, out: Float64Array, count: number): void {
+  fillFirst(firstRow: number, out: Float64Array, count: number, at = 0): void {
     let filled = 0;
-    if (count > 0 && firstRow & 1) out[filled++] = this.first(firstRow);
+    if (count > 0 && firstRow & 1) out[at + filled++] = this.first(firstRow);
     const pairs = (count - filled) >>> 1;
     const pair = (firstRow + filled) >>> 1;
-    fillFractions(pair, this.purpose, this.method, this.k0, this.k1, out, filled, pairs);
+    fillFractions(pair, this.purpose, this.method, this.k0, this.k1, out, at + filled, pairs);
     filled += 2 * pairs;
-    if (filled < count) out[filled] = this.first(firstRow + filled);
+    if (filled < count) out[at + filled] = this.first(firstRow + filled);
   }
 
   /**
@@ -100,3 +105,12 @@ export class RowStream {
     return this.pair[row & 1]!;
   }
 }
+
+/** The key of a row's own draws. Guarantee: the same bits on every engine; two rows share one with a chance of 2^-64. */
+export function keyOfRow([k0, k1]: Key, row: number, method = 0): Key {
+  philox4x32(row, 0, PURPOSE.total, method, k0, k1, ownBlock);
+  return [ownBlock[0]!, ownBlock[1]!];
+}
+
+/** Scratch of keyOfRow; it holds nothing between calls. */
+const ownBlock = new Uint32Array(4);

@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { keyOf } from '../../src/random/key';
 import type { Key } from '../../src/random/key';
 import { fraction, philox4x32 } from '../../src/random/philox';
-import { PURPOSE, RowStream } from '../../src/random/stream';
+import { correlation, Z_FALSE_ALARM } from '../draw/statistics';
+import { keyOfRow, PURPOSE, RowStream } from '../../src/random/stream';
 
 const LAST_ROW = 1048575;
 const KEY = keyOf('plan-2027', 'harvest');
@@ -101,6 +102,45 @@ describe('RowStream.fillFirst', () => {
     expect([...firsts(new RowStream(KEY), 4)]).toEqual([
       0.9090590199718377, 0.24680380653975742, 0.2868423290592992, 0.023871608462282312,
     ]);
+  });
+});
+
+describe('keyOfRow', () => {
+  it('keyOfRow(key, row, method) is words 0 and 1 of block (row, 0, 6, method) [law]', () => {
+    fc.assert(
+      fc.property(key, row, fc.integer({ min: 0, max: 9 }), ([k0, k1], i, method) => {
+        const words = new Uint32Array(4);
+        philox4x32(i, 0, PURPOSE.total, method, k0, k1, words);
+        expect(keyOfRow([k0, k1], i, method)).toEqual([words[0], words[1]]);
+      }),
+    );
+  });
+
+  it('the draws of neighbouring rows under their keys are uncorrelated [law]', () => {
+    const n = 100_000;
+    const [a, b] = [7, 8].map((i) => firsts(new RowStream(keyOfRow(KEY, i)), n));
+    const limit = Z_FALSE_ALARM / Math.sqrt(n);
+    expect(Math.abs(correlation(a!, b!))).toBeLessThan(limit);
+    expect(correlation(a!, firsts(new RowStream(keyOfRow(KEY, 7)), n))).toBeGreaterThan(limit);
+  });
+});
+
+describe('RowStream.fillFirst at a place', () => {
+  it('fillFirst(row, out, count, at) writes the same numbers from there on [law]', () => {
+    fc.assert(
+      fc.property(
+        row,
+        fc.integer({ min: 0, max: 9 }),
+        fc.integer({ min: 0, max: 5 }),
+        (i, n, at) => {
+          const stream = new RowStream(KEY);
+          const [plain, moved] = [new Float64Array(n), new Float64Array(n + at + 2)];
+          stream.fillFirst(i, plain, n);
+          stream.fillFirst(i, moved, n, at);
+          expect(Array.from(moved)).toEqual([...Array<number>(at).fill(0), ...plain, 0, 0]);
+        },
+      ),
+    );
   });
 });
 

@@ -85,6 +85,7 @@ describe('undercurve call', () => {
       ],
     ],
     EACH: [BLOCK, null, null, null, [['m'], [3], [4]]],
+    TOTAL: [[[2], [0], [3]], BLOCK],
     PICK: [[['early'], ['late'], ['none']], [[2], [1], [0]], 5, 'plan-2027', 'harvest'],
     THIN: [[['early'], ['late'], ['none']], [[1], [1], [0]], 'plan-2027', 'harvest', 1],
     SUMMARY: [[['harvest'], [31], [28], [40]]],

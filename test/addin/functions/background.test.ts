@@ -117,6 +117,10 @@ describe('takesLong(name, args)', () => {
     ['two variables of EXPECT', 'EXPECT', [[['early*late>=400']], PLANS, [['early']]], true],
     ['a formula as long as a page', 'ENVELOPE', [[[`EXP(-x)${'+x*0'.repeat(200)}`]]], true],
     ['a function without limits', 'PICK', [PLANS, PLANS], false],
+    ['a few counted values', 'DRAW', [[['1']], [['x', 0, 1000, 1]]], false],
+    ['many counted values', 'DRAW', [[['1']], [['x', 0, 1000, 0.01]]], true],
+    ['a total of a few draws', 'TOTAL', [[[500], [400]], TABLE], false],
+    ['a total of millions of draws', 'TOTAL', [[[1e6], [1e6]], TABLE], true],
   ])('of %s [law]', (_, name, args, expected) => {
     expect(takesLong(name, args)).toBe(expected);
   });
