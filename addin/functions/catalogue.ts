@@ -6,6 +6,7 @@
 import {
   above,
   acceptance,
+  alignRanks,
   below,
   bestOf,
   blend,
@@ -19,11 +20,13 @@ import {
   fromData,
   fromPercentiles,
   InputError,
+  linkedShares,
   pairedChange,
   pick,
   profile,
   proposals,
   quantile,
+  ranks,
   rowsNeeded,
   stratified,
   summary,
@@ -95,6 +98,11 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     pick(table, weights, rows, seed, label),
   THIN: ([table = null, weights = null, seed = null, label = null, bound = null]) =>
     thin(table, weights, seed, label, bound),
+  LINKEDSHARES: ([correlations = null, rows = null, seed = null, label = null]) =>
+    linkedShares(correlations, rows, seed, label),
+  ALIGNRANKS: ([columns = null, correlations = null, seed = null, label = null]) =>
+    alignRanks(columns, correlations, seed, label),
+  RANKS: ([columns = null, confidence = null]) => ranks(columns, confidence),
   BLEND: ([shares = null], shapes) => blend(shares, shapes),
   SUMMARY: ([values = null, shares = null, confidence = null, weights = null]) =>
     summary(values, shares, confidence, weights),

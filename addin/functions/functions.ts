@@ -435,3 +435,47 @@ export function pairedChange(before: any[][], after: any[][], confidence?: any[]
 export function bestOf(table: any[][], largest: any[][], confidence?: any[][]): any[][] {
   return answer('BESTOF', [table, largest, confidence], null);
 }
+
+/**
+ * Makes shares that belong together, such as those of harvest and price: give each column to QUANTILE as share, and the inputs are linked where they are born, each still exactly distributed. Bare shares between 0 and 1, one column for each row of the matrix; a row depends on its own number alone. The link is that of normal scores: extremes of two columns coincide no more than those of normal ones.
+ * @customfunction LINKEDSHARES
+ * @param rankcorrelations A square of rank correlations (Spearman's) from -1 to 1, the same on both sides of the diagonal, 1 on it; names in a first row and column are passed over. Impossible ones are refused, with the nearest that are possible.
+ * @param rows How many rows, 1 to 1048575, or two cells: first row and last row.
+ * @param seed Any text or number except blank and 0. The same seed gives the same shares.
+ * @param label Name of the link. Each label has its own random numbers, apart from those of draws.
+ */
+export function linkedShares(
+  rankcorrelations: any[][],
+  rows: any[][],
+  seed: any[][],
+  label: any[][],
+): any[][] {
+  return answer('LINKEDSHARES', [rankcorrelations, rows, seed, label], null);
+}
+
+/**
+ * Puts columns in another order so that their rank correlations come near wished ones (Iman and Conover 1982). The first column stays, each other one keeps its values; where a rank correlation would miss by more than 0.05 the answer is an error that says what can be reached. The rows as a whole decide, so that one more row changes the order. Bare values in the unit of each column.
+ * @customfunction ALIGNRANKS
+ * @param columns Columns of numbers with or without a heading row, at least 2 rows. A blank counts as 0.
+ * @param rankcorrelations A square of rank correlations (Spearman's) from -1 to 1, one row and one column for each column, 1 on the diagonal; names in a first row and column are passed over.
+ * @param seed Any text or number except blank and 0. The same seed gives the same order.
+ * @param label Name of the alignment. Each label has its own random numbers, apart from those of draws.
+ */
+export function alignRanks(
+  columns: any[][],
+  rankcorrelations: any[][],
+  seed: any[][],
+  label: any[][],
+): any[][] {
+  return answer('ALIGNRANKS', [columns, rankcorrelations, seed, label], null);
+}
+
+/**
+ * Tells how columns move together: the rank correlation (Spearman's) of every two of them, from -1 to 1, with intervals for independent rows, and which columns move exactly together, as those do that were drawn under the same label. A heading row, then one row for each column.
+ * @customfunction RANKS
+ * @param columns Columns of numbers with or without a heading row, at least 2 rows. A blank counts as 0.
+ * @param confidence Confidence of the intervals as a fraction. Left out: 0.95.
+ */
+export function ranks(columns: any[][], confidence?: any[][]): any[][] {
+  return answer('RANKS', [columns, confidence], null);
+}

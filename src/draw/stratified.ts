@@ -3,7 +3,7 @@
  * and each row has one stratum of its own.
  *
  * Row i has the number (s + v) / n with s = (π(i) + S) mod n: π a permutation of 0 … n − 1 that the
- * key shuffles (Fisher and Yates, in the form of Durstenfeld 1964), S a whole number that is uniform
+ * key shuffles (shuffle.ts), S a whole number that is uniform
  * on 0 … n − 1, v the row's own first number.
  * Each row alone is distributed exactly: S and v are independent of one another and of π, so
  * whatever π is, s is uniform on 0 … n − 1 and (s + v) / n uniform on [0, 1), as the first number of
@@ -18,6 +18,7 @@
 import type { Key } from '../random/key';
 import { PURPOSE, RowStream } from '../random/stream';
 import type { Column, ColumnDrawer } from './rejection';
+import { shuffle } from './shuffle';
 
 const GRID = 9007199254740992;
 const BELOW_ONE = 1 - 1 / GRID;
@@ -43,17 +44,9 @@ export function drawStratified(drawer: ColumnDrawer, key: Key, n: number, method
 
 /** The strata, from 0, of rows 1 … n. */
 export function strataOf(key: Key, n: number, method = 0): Int32Array {
-  const numbers = new Float64Array(n);
-  new RowStream(key, method, PURPOSE.shuffle).fillFirst(1, numbers, n);
-  const strata = new Int32Array(n);
   const shift = shiftOf(key, n, method);
-  for (let i = 0; i < n; i++) strata[i] = (i + shift) % n;
-  for (let i = n - 1; i > 0; i--) {
-    const j = (numbers[i]! * (i + 1)) | 0;
-    const other = strata[j]!;
-    strata[j] = strata[i]!;
-    strata[i] = other;
-  }
+  const strata = Int32Array.from({ length: n }, (_, i) => (i + shift) % n);
+  shuffle(strata, key, PURPOSE.shuffle, method);
   return strata;
 }
 

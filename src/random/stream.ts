@@ -17,6 +17,9 @@
  * Purpose 6, "total", gives a row a key of its own, words 0 and 1 of the block of that row, under
  * which its draws are numbered like rows: draw j of row i is the same however many others there are.
  *
+ * Purposes from 4096 on, "link", hold one number a row for each of the linked shares, and those from
+ * 8192 on, "align", one a row for the shuffle of each aligned column.
+ *
  * Purposes from 16 on, "place", serve proposals of several variables: with words 0 and 1 as of
  * a further number, block b of a proposal has purpose 16 + b and gives numbers 2b and 2b + 1.
  *
@@ -41,6 +44,8 @@ export const PURPOSE = {
   shift: 5,
   total: 6,
   place: 16,
+  link: 4096,
+  align: 8192,
 } as const;
 
 /** The numbers of one key, first ones for one purpose; holds no position, so calls may come in any order. */

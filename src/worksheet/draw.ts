@@ -3,6 +3,7 @@ import type { Range } from '../density/cells';
 import { drawColumn, prove } from './proved';
 import { readAnyDrawRequest } from './request';
 import { drawRows, proveSeveral } from './several';
+import { sideBySide } from './spill';
 
 /**
  * Draws that follow the density exactly.
@@ -28,7 +29,5 @@ export function draw(
     : request.plain.columns.map(
         ({ shape, key }) => drawColumn(prove(shape), key, firstRow, nRows).values,
       );
-  // One column is the common case, and takes a third of the time when made by itself.
-  if (drawn.length === 1) return Array.from(drawn[0]!, (value) => [value]);
-  return Array.from({ length: nRows }, (_, i) => drawn.map((values) => values[i]!));
+  return sideBySide(drawn);
 }

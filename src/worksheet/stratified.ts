@@ -4,6 +4,7 @@ import { drawStratified } from '../draw/stratified';
 import { InputError } from '../errors';
 import { prove } from './proved';
 import { DRAW_PLACES, readDrawRequest } from './request';
+import { sideBySide } from './spill';
 
 /**
  * Draws whose rows are spread evenly over the density, so that averages have less noise.
@@ -33,5 +34,5 @@ export function stratified(
   const drawn = columns.map(
     ({ shape, key }) => drawStratified(prove(shape).drawer, key, nRows).values,
   );
-  return Array.from({ length: nRows }, (_, i) => drawn.map((values) => values[i]!));
+  return sideBySide(drawn);
 }

@@ -87,6 +87,25 @@ describe('undercurve call', () => {
     EACH: [BLOCK, null, null, null, [['m'], [3], [4]]],
     TOTAL: [[[2], [0], [3]], BLOCK],
     PICK: [[['early'], ['late'], ['none']], [[2], [1], [0]], 5, 'plan-2027', 'harvest'],
+    LINKEDSHARES: [
+      [
+        [1, 0.6],
+        [0.6, 1],
+      ],
+      5,
+      'plan-2027',
+      'links',
+    ],
+    ALIGNRANKS: [
+      Array.from({ length: 40 }, (_, i) => [i, i * i]),
+      [
+        [1, 0.6],
+        [0.6, 1],
+      ],
+      'plan-2027',
+      'links',
+    ],
+    RANKS: [Array.from({ length: 40 }, (_, i) => [i, (i * 7) % 40])],
     THIN: [[['early'], ['late'], ['none']], [[1], [1], [0]], 'plan-2027', 'harvest', 1],
     SUMMARY: [[['harvest'], [31], [28], [40]]],
     EXCEEDANCE: [[['harvest'], [31], [28], [40]], 30],
