@@ -14,7 +14,7 @@ import type { Matrix } from '../numeric/matrix';
 import { correlationFactor, matrixOf, solveLower } from '../numeric/matrix';
 import { nearestCorrelation } from '../numeric/nearest';
 import { normalQuantile } from '../numeric/normal';
-import { averageRanks, correlationOfRanks, orderOf } from '../numeric/ranks';
+import { asTheyStand, averageRanks, orderOf, rankCorrelations } from '../numeric/ranks';
 import type { Key } from '../random/key';
 import { PURPOSE } from '../random/stream';
 import { scoreCorrelations } from './rankcorrelation';
@@ -46,17 +46,18 @@ export function alignRanks(
   const orders = columns.map((column, j) => startingOrder(column, j, key, method));
   const scores = scoreColumns(orders);
   const sorted = columns.map((column, j) => (j === 0 ? column : column.slice().sort()));
-  const identity = Int32Array.from({ length: n }, (_, i) => i);
+  const identity = asTheyStand(n);
   const ranks = sorted.map((column, j) => averageRanks(column, j === 0 ? orders[0]! : identity));
   let wanted = scoreCorrelations(wished);
   let best: { readonly aligned: Aligned; readonly miss: number } | null = null;
   for (let turn = 0; turn < MAX_TURNS; turn++) {
     const adjusted = adjustedScores(scores, wanted);
     if (adjusted === null) break;
-    const places = adjusted.map(orderOf);
+    const places = adjusted.slice(1).map(orderOf);
     const placed = (of: readonly Float64Array[]): Float64Array[] =>
-      of.map((values, j) => (j === 0 ? values : inOrder(values, places[j]!)));
-    const reached = rankCorrelations(placed(ranks));
+      of.map((values, j) => (j === 0 ? values : inOrder(values, places[j - 1]!)));
+    const between = rankCorrelations(placed(ranks));
+    const reached = matrixOf(columns.length, (i, j) => between[i]![j] ?? 0);
     const miss = largestMiss(reached, wished);
     if (best === null || miss < best.miss)
       best = { aligned: { columns: placed(sorted), ranks: reached }, miss };
@@ -68,12 +69,15 @@ export function alignRanks(
 
 /** The rows of a column from the least score to the largest. */
 function startingOrder(column: Float64Array, j: number, key: Key, method: number): Int32Array {
-  const shuffled = Int32Array.from(column, (_, i) => i);
+  const shuffled = asTheyStand(column.length);
   shuffle(shuffled, key, PURPOSE.align + j, method);
   if (j > 0) return shuffled;
   // Equal values of the first column stand in no order.
-  const order = orderOf(Float64Array.from(shuffled, (i) => column[i]!));
-  return order.map((k) => shuffled[k]!);
+  const values = new Float64Array(column.length);
+  for (let k = 0; k < values.length; k++) values[k] = column[shuffled[k]!]!;
+  const order = orderOf(values);
+  for (let k = 0; k < order.length; k++) order[k] = shuffled[order[k]!]!;
+  return order;
 }
 
 /** The scores Φ⁻¹(i/(n + 1)) of each column, row by row. */
@@ -128,18 +132,6 @@ function product(a: Float64Array, b: Float64Array): number {
   let sum = 0;
   for (let i = 0; i < a.length; i++) sum += a[i]! * b[i]!;
   return sum;
-}
-
-function rankCorrelations(ranks: readonly Float64Array[]): Matrix {
-  const reached = matrixOf(ranks.length, () => 1);
-  for (let i = 0; i < ranks.length; i++) {
-    for (let j = 0; j < i; j++) {
-      const value = correlationOfRanks(ranks[i]!, ranks[j]!) ?? 0;
-      reached[i]![j] = value;
-      reached[j]![i] = value;
-    }
-  }
-  return reached;
 }
 
 function largestMiss(reached: Matrix, wished: Matrix): number {

@@ -1,7 +1,7 @@
 /** RANKS: how columns move together, with intervals. */
 import type { Cell, Range } from '../density/cells';
 import { rankInterval } from '../evidence/rankinterval';
-import { averageRanks, correlationOfRanks } from '../numeric/ranks';
+import { averageRanks, rankCorrelations } from '../numeric/ranks';
 import { nameOf, numberColumns } from './columns';
 import { endCells, intervalName, readConfidence } from './confidence';
 
@@ -23,15 +23,7 @@ export function ranks(columns: Range | null, confidence: Range | null): Range {
   const own = numberColumns(columns, COLUMNS, 2);
   const level = readConfidence(confidence, CONFIDENCE);
   const names = own.columns.map((column, j) => nameOf(column, j, own.columns.length));
-  const of = own.columns.map(({ values }) => averageRanks(values));
-  const matrix: (number | null)[][] = of.map(() => []);
-  of.forEach((first, i) => {
-    for (let j = 0; j <= i; j++) {
-      const value = correlationOfRanks(first, of[j]!);
-      matrix[i]![j] = value;
-      matrix[j]![i] = value;
-    }
-  });
+  const matrix = rankCorrelations(own.columns.map(({ values }) => averageRanks(values)));
   const interval = intervalName(level);
   const heading = [
     'rank correlation',
