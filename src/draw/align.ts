@@ -69,9 +69,11 @@ export function alignRanks(
 
 /** The rows of a column from the least score to the largest. */
 function startingOrder(column: Float64Array, j: number, key: Key, method: number): Int32Array {
+  const own = j === 0 ? orderOf(column) : null;
+  if (own !== null && !own.some((i, k) => k > 0 && column[i] === column[own[k - 1]!])) return own;
   const shuffled = asTheyStand(column.length);
   shuffle(shuffled, key, PURPOSE.align + j, method);
-  if (j > 0) return shuffled;
+  if (own === null) return shuffled;
   // Equal values of the first column stand in no order.
   const values = new Float64Array(column.length);
   for (let k = 0; k < values.length; k++) values[k] = column[shuffled[k]!]!;
