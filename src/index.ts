@@ -6,6 +6,7 @@ export { alignRanks } from './worksheet/alignranks';
 export { bestOf } from './worksheet/bestof';
 export { blend } from './worksheet/blend';
 export { cases } from './worksheet/cases';
+export { check } from './worksheet/check';
 export { draw } from './worksheet/draw';
 export { each } from './worksheet/each';
 export { envelope } from './worksheet/envelope';

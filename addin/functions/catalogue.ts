@@ -11,6 +11,7 @@ import {
   bestOf,
   blend,
   cases,
+  check,
   draw,
   each,
   envelope,
@@ -112,6 +113,8 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     rowsNeeded(values, share, halfwidth, confidence),
   PAIREDCHANGE: ([before = null, after = null, confidence = null]) =>
     pairedChange(before, after, confidence),
+  CHECK: ([values = null, density = null, limits = null], givens) =>
+    check(values, density, limits, givens),
   BESTOF: ([table = null, largest = null, confidence = null]) => bestOf(table, largest, confidence),
 };
 

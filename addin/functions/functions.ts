@@ -426,6 +426,23 @@ export function pairedChange(before: any[][], after: any[][], confidence?: any[]
 }
 
 /**
+ * Checks whether columns of values look like independent draws of a shape: one overall line in plain words, then exact percentiles, mean and standard deviation beside the drawn ones with the range that is allowed, then tests of the whole (largest distance of shares, tails, cells of equal share, order of rows, repeats, rows outside the limits) with their p-values. Of 100 columns that follow their shape at most one shows any sign against it; no sign proves nothing. It says whether the values follow the shape, not whether the shape is right. Assumes independent rows that are not rounded: it does not apply to STRATIFIED columns.
+ * @customfunction CHECK
+ * @param values One or more columns of numbers, with or without a heading row: all against one shape, or as many as there are shapes.
+ * @param density The shape that the values should follow: a formula, a table of points, a shape block or a shape list, as for DRAW.
+ * @param limits Two cells, from and to, or a row name, from, to; as for DRAW.
+ * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ */
+export function check(
+  values: any[][],
+  density: any[][],
+  limits?: any[][],
+  givens?: any[][][],
+): any[][] {
+  return answer('CHECK', [values, density, limits], givens);
+}
+
+/**
  * Compares cases that were worked out for the same scenarios: for each the mean and its place among the means, the chance to be the best of its row, and the average regret, which is how far it is from the best of the same row. A heading row, then one row a case. The figures rest on the stated shapes; they do not replace judgement about what is not in them. Assumes independent rows: for STRATIFIED columns the intervals are too wide.
  * @customfunction BESTOF
  * @param table One column a case and one row a scenario, with or without a heading row of case names.

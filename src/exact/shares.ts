@@ -11,10 +11,18 @@ import type { Envelope } from '../envelope/envelope';
 import { middle } from '../numeric/float';
 import type { Cell } from './cells';
 import { cellsOf } from './cells';
+import type { SharesOfValues } from './distribution';
+import { areasUpTo } from './primitive';
+import { endpointIntegral, smoothIntegral } from './quadrature';
 
 export type Side = 'below' | 'above';
 
 const MOST_STEPS = 120;
+/** Parts of a cell below this share of it have their area taken by itself, for its digits. */
+const TINY = 1e-6;
+/** A cell whose area the rule for smooth stretches gives to this is one. */
+const SMOOTH = 1e-12;
+const PRECISE = 1e-15;
 
 /** The exact answers of one density. */
 export interface ExactShares {
@@ -84,6 +92,56 @@ export class Shares implements ExactShares {
       : this.pointAt((1 - share) * total, side === 'below' ? 'above' : 'below');
   }
 
+  /** The shares on both sides of rising values: as `below` and `above`, but for many at a time. */
+  ofRising(values: Float64Array): SharesOfValues {
+    const { cells, before, after } = this;
+    const { from, to } = this.envelope;
+    const n = values.length;
+    const total = before[cells.length]!;
+    const below = new Float64Array(n);
+    const above = new Float64Array(n);
+    const places = new Float64Array(n);
+    const areas = new Float64Array(n);
+    let k = 0;
+    for (; k < n && !(values[k]! > from); k++) above[k] = 1;
+    for (let i = 0; i <= cells.length && k < n; i++) {
+      const cell = cells[i];
+      const start = cell?.from ?? to;
+      const end = cell?.to ?? Infinity;
+      for (; k < n && values[k]! <= start && values[k]! < to; k++) {
+        below[k] = before[i]! / total;
+        above[k] = after[i]! / total;
+      }
+      if (cell === undefined) break;
+      const first = k;
+      for (; k < n && values[k]! < end; k++) places[k] = cell.parameterOf(values[k]!);
+      areasUpTo(cell, places, first, k, areas);
+      for (let j = first; j < k; j++) {
+        const area = Math.min(cell.area, areas[j]!);
+        const isTiny = Math.min(area, cell.area - area) < TINY * cell.area;
+        if (isTiny) {
+          below[j] = this.below(values[j]!);
+          above[j] = this.above(values[j]!);
+          continue;
+        }
+        below[j] = (before[i]! + area) / total;
+        above[j] = (after[i + 1]! + (cell.area - area)) / total;
+      }
+    }
+    for (; k < n; k++) below[k] = 1;
+    return { below, above };
+  }
+
+  /**
+   * The mean of a weight under the density, by quadrature.
+   * Domain: a weight that is smooth but at the ends of pieces, and whose mean is finite.
+   */
+  meanOf(weight: (x: number) => number): number {
+    const { cells, before } = this;
+    const total = before[cells.length]!;
+    return cells.reduce((sum, cell) => sum + moment(cell, weight) / total, 0);
+  }
+
   private pointAt(area: number, side: Side): number {
     const { cells, before, after } = this;
     const last = cells.length - 1;
@@ -106,6 +164,22 @@ export class Shares implements ExactShares {
     if (area >= cell.area) return isBelow ? cell.to : cell.from;
     return cell.placeAt(parameterAt(cell, area, isBelow));
   }
+}
+
+/** The integral of weight · density over a cell. */
+function moment(
+  { start, end, area, from, slopeAt, placeAt }: Cell,
+  weight: (x: number) => number,
+): number {
+  const at = (u: number): number => {
+    const slope = slopeAt(u);
+    return slope === 0 ? 0 : slope * weight(placeAt(u));
+  };
+  const isSmooth =
+    start === from && Math.abs(smoothIntegral(slopeAt, start, end).value - area) <= SMOOTH * area;
+  return isSmooth
+    ? smoothIntegral(at, start, end).value
+    : endpointIntegral(at, start, end, PRECISE).value;
 }
 
 /** Newton's method for the parameter, within a bracket that narrows. */

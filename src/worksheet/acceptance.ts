@@ -17,7 +17,15 @@ import { drawColumn, prove } from './proved';
 import type { ColumnRequest, DrawRequest } from './request';
 import { readAnyDrawRequest } from './request';
 import { diagnoseSeveral } from './severalacceptance';
-import { CAUTION, densityLines, givenLines, intervalLines, type Line, shortened } from './lines';
+import {
+  CAUTION,
+  densityLines,
+  givenLines,
+  intervalLines,
+  joined,
+  type Line,
+  shortened,
+} from './lines';
 
 /**
  * The diagnostics of a draw, its inputs as read first.
@@ -44,21 +52,6 @@ export function acceptance(
   if (several) return diagnoseSeveral(several);
   const tables = request.columns.map((column) => diagnose(column, request));
   return joined(tables);
-}
-
-/** One line for each item of any column, in order; blank where a column has none. */
-function joined(tables: readonly (readonly Line[])[]): Range {
-  const items: string[] = [];
-  for (const lines of tables) {
-    let after = -1;
-    for (const [item] of lines) {
-      const known = items.indexOf(item);
-      if (known < 0) items.splice(after + 1, 0, item);
-      after = known < 0 ? after + 1 : known;
-    }
-  }
-  const columns = tables.map((lines) => new Map(lines));
-  return items.map((item) => [item, ...columns.map((column) => column.get(item) ?? null)]);
 }
 
 function diagnose(

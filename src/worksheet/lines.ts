@@ -1,5 +1,5 @@
-/** Lines of ACCEPTANCE that shapes of one variable and of several share. */
-import type { Cell } from '../density/cells';
+/** Lines of ACCEPTANCE that shapes of one variable and of several share, and lines of items side by side. */
+import type { Cell, Range } from '../density/cells';
 import { wilson } from '../evidence/proportion';
 import type { Source } from '../formula/compile';
 import type { Given, GivenMap } from '../formula/given';
@@ -52,4 +52,27 @@ export function intervalLines(nRows: number, proposals: number): readonly Line[]
 
 export function shortened(text: string): string {
   return text.length <= 60 ? text : `${text.slice(0, 59)}…`;
+}
+
+/** One row for each item of any table, in order; blanks where a table has none of it. All its rows are as long. */
+export function joined(
+  tables: readonly (readonly (readonly [item: string, ...cells: Cell[]])[])[],
+): Range {
+  const items: string[] = [];
+  for (const lines of tables) {
+    let after = -1;
+    for (const [item] of lines) {
+      const known = items.indexOf(item);
+      if (known < 0) items.splice(after + 1, 0, item);
+      after = known < 0 ? after + 1 : known;
+    }
+  }
+  const columns = tables.map((lines) => ({
+    cells: new Map(lines.map(([item, ...cells]) => [item, cells])),
+    blanks: lines[0]!.slice(1).map(() => null),
+  }));
+  return items.map((item) => [
+    item,
+    ...columns.flatMap(({ cells, blanks }) => cells.get(item) ?? blanks),
+  ]);
 }

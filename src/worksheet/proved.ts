@@ -10,6 +10,9 @@ import type { PointEnvelope } from '../envelope/points';
 import { knownPoints, provePoints } from '../envelope/points';
 import { polylineEnvelope } from '../envelope/polyline';
 import { proveEnvelope } from '../envelope/prove';
+import { continuous } from '../exact/continuous';
+import { counted } from '../exact/counted';
+import type { Distribution } from '../exact/distribution';
 import { rescaled } from '../exact/rescale';
 import { PointShares } from '../exact/points';
 import type { ExactShares } from '../exact/shares';
@@ -37,6 +40,8 @@ interface Told {
   readonly shares: ExactShares;
   /** The area under the scaled density, or the sum of its heights, within its proved bounds. */
   readonly area: number;
+  /** What columns are compared with. */
+  readonly distribution: Distribution;
 }
 
 /** A continuous quantity. */
@@ -102,7 +107,11 @@ function curveOf(shape: PlainShape, key: string): ProvedCurve {
   const exact = once(() => {
     const { envelope: roomy, shift } = rescaled(envelope, tape);
     const shares = new Shares(roomy);
-    return { shares, area: shares.area / powerOfTwo(shift) };
+    return {
+      shares,
+      area: shares.area / powerOfTwo(shift),
+      distribution: continuous(shares, envelope, tape),
+    };
   });
   return {
     key,
@@ -116,12 +125,18 @@ function curveOf(shape: PlainShape, key: string): ProvedCurve {
     get area() {
       return exact().area;
     },
+    get distribution() {
+      return exact().distribution;
+    },
   };
 }
 
 function pointsOf(shape: PlainShape, lattice: Lattice, key: string): ProvedPoints {
   const { envelope, smooth } = pointEnvelopeOf(shape, lattice);
-  const exact = once(() => new PointShares(envelope));
+  const exact = once(() => {
+    const shares = new PointShares(envelope);
+    return { shares, distribution: counted(shares) };
+  });
   return {
     key,
     kind: 'points',
@@ -129,10 +144,13 @@ function pointsOf(shape: PlainShape, lattice: Lattice, key: string): ProvedPoint
     smooth,
     drawer: new PointDrawer(envelope),
     get shares() {
-      return exact();
+      return exact().shares;
     },
     get area() {
-      return exact().area;
+      return exact().shares.area;
+    },
+    get distribution() {
+      return exact().distribution;
     },
   };
 }

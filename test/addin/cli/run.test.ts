@@ -114,6 +114,7 @@ describe('undercurve call', () => {
       [[31], [28], [40]],
       [[33], [28], [41]],
     ],
+    CHECK: [[[3], [4.5], [4]], BLOCK],
     BESTOF: [
       [
         ['two', 'three'],
