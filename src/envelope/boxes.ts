@@ -20,13 +20,12 @@ import type { Tape } from '../formula/tape';
 import * as elementary from '../numeric/elementary';
 import { addDown, addUp, mulDown, mulUp, powerOfTwo } from '../numeric/float';
 import * as I from '../numeric/interval';
-import { expm1 } from '../numeric/special';
 import { shortNumber } from '../numeric/text';
 import { findBoxExponent } from './boxscale';
 import * as refusal from './boxrefusal';
 import { LEAST_ACCEPTANCE, WANTED_ACCEPTANCE } from './prove';
 import type { Plane } from './plane';
-import { planeOver } from './plane';
+import { planeOver, tiltedMean } from './plane';
 import type { Box } from './space';
 import { Space } from './space';
 
@@ -472,13 +471,6 @@ export class BoxProver {
 }
 
 const LN_2 = 0.6931471805599453;
-
-/** The mean of e^(a·t) over −½ ≤ t ≤ ½: sinh(a/2)/(a/2). */
-function tiltedMean(a: number): number {
-  const half = Math.abs(a) / 2;
-  // e^half (1 − e^-2half) / (2 half)
-  return half < 1e-8 ? 1 : (elementary.exp(half) * -expm1.at(-2 * half)) / (2 * half);
-}
 
 function byPlace(a: Box, b: Box): number {
   for (let i = 0; i < a.lo.length; i++) {

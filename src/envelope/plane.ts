@@ -12,7 +12,9 @@
  */
 import type { Encloser } from '../formula/enclose';
 import { Defined } from '../formula/operation';
+import * as elementary from '../numeric/elementary';
 import * as I from '../numeric/interval';
+import { expm1 } from '../numeric/special';
 import { addDown, addUp, mulUp, ulp } from '../numeric/float';
 import type { Box, Space } from './space';
 
@@ -20,6 +22,8 @@ export interface Plane {
   readonly centre: readonly number[];
   /** Along each axis; 0 along counted ones. */
   readonly slopes: readonly number[];
+  /** ln f at the centre. */
+  readonly at: I.Interval;
   /** Bounds of ln f less the plane's rise from the centre, over the box. */
   readonly logLo: number;
   readonly logHi: number;
@@ -27,6 +31,22 @@ export interface Plane {
   readonly meanLo: number;
   /** What the bounds owe to the axes, for choosing where to halve. */
   readonly owed: readonly number[];
+}
+
+/** The mean of e^(a·t) over −½ ≤ t ≤ ½: sinh(a/2)/(a/2). */
+export function tiltedMean(a: number): number {
+  const half = Math.abs(a) / 2;
+  // e^half (1 − e^-2half) / (2 half)
+  return half < 1e-8 ? 1 : (elementary.exp(half) * -expm1.at(-2 * half)) / (2 * half);
+}
+
+/** The mean of t under e^(a·t) over −½ ≤ t ≤ ½: coth(a/2)/2 − 1/a. */
+export function tiltedPlace(a: number): number {
+  // Where the two terms cancel, the series: its next term is below 10^-13 of the first.
+  if (Math.abs(a) < 0.01) return (a / 12) * (1 - (a * a) / 60);
+  const fall = expm1.at(-Math.abs(a));
+  const place = (2 + fall) / (-2 * fall) - 1 / Math.abs(a);
+  return a < 0 ? -place : place;
 }
 
 /** Halvings of the bound between the least and the largest eigenvalue that is known. */
@@ -121,6 +141,7 @@ function tangent(
   return {
     centre,
     slopes: own,
+    at,
     logLo: addDown(at.lo, -fall),
     logHi: addUp(at.hi, rise),
     meanLo: addDown(at.lo, -sag),

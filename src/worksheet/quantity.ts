@@ -6,6 +6,7 @@ import { DEFAULT_VARIABLE, readLimitCells } from '../density/limits';
 import type { PlainShape } from '../density/shape';
 import { InputError } from '../errors';
 import type { PointTape } from '../exact/expectPoints';
+import type { Source } from '../formula/compile';
 import { compile, compileSmooth } from '../formula/compile';
 import type { GivenMap } from '../formula/given';
 import { parse } from '../formula/parse';
@@ -18,14 +19,11 @@ export interface QuantityPlaces {
   readonly name: string;
 }
 
-/** @throws {InputError} when it is missing or cannot be read. */
-export function readQuantity(
+/** The formula as a source. @throws {InputError} when it is missing or cannot be parsed. */
+export function readSource(
   range: Range | null,
-  shape: PlainShape,
-  limits: Range | null,
-  givens: readonly Range[],
-  places: QuantityPlaces,
-): PointTape {
+  places: Pick<QuantityPlaces, 'quantity' | 'name'>,
+): Source {
   const own = given(range);
   const expected = 'give a formula as text, such as x or MAX(0,x-60)';
   if (own === null) throw new InputError(places.quantity, 'it is missing', expected);
@@ -34,7 +32,18 @@ export function readQuantity(
   if (!isText(cell) && typeof cell !== 'number')
     throw new InputError(places.quantity, `${quoted(cell)} is not a formula`, expected);
   const text = String(cell);
-  const source = { text, where: places.name, tree: parse(text, places.name) };
+  return { text, where: places.name, tree: parse(text, places.name) };
+}
+
+/** @throws {InputError} when it is missing or cannot be read. */
+export function readQuantity(
+  range: Range | null,
+  shape: PlainShape,
+  limits: Range | null,
+  givens: readonly Range[],
+  places: QuantityPlaces,
+): PointTape {
+  const source = readSource(range, places);
   const { variable, named } = namesOf(shape, givenUnlessZero(limits), givens, places);
   const tape = compile([source], [variable], named);
   const smooth = shape.lattice?.isWhole ? compileSmooth([source], [variable], named) : tape;
