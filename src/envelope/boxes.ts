@@ -69,7 +69,7 @@ export interface BoxEnvelope extends Joint {
 }
 
 /** Most boxes for 1, 2, 3 … variables. */
-const MAX_BOXES = [4096, 4096, 16384, 16384, 16384, 16384];
+const MAX_BOXES = [4096, 4096, 16384, 16384, 32768, 65536];
 /** From so many boxes on a lower acceptance will do: the rest costs more to prove than to draw. */
 const MANY_BOXES = 2048;
 const ENOUGH_ACCEPTANCE = 0.95;
