@@ -12,7 +12,10 @@
 import type { BoxEnvelope, ProvedBox } from '../envelope/boxes';
 import { bug } from '../errors';
 import { Encloser } from '../formula/enclose';
+import type { Estimator } from '../formula/estimate';
+import { estimatorOf } from '../formula/estimate';
 import { evaluator } from '../formula/evaluate';
+import type { Tape } from '../formula/tape';
 import { Defined } from '../formula/operation';
 import * as elementary from '../numeric/elementary';
 import * as I from '../numeric/interval';
@@ -45,19 +48,39 @@ export interface BoxProposal {
 /** At an acceptance of 0.01 a row needs this many with a chance far below 10^-1000. */
 const MAX_ATTEMPTS = 1_000_000;
 /** Boxes that one number tells apart; more are told by two, so that shares keep their digits. */
-const MOST_AT_ONCE = 2048;
+const MOST_AT_ONCE = 4096;
 /** Room for the rounding of an upper bound at a place. */
 const ROUNDING = 1e-11;
 
-/** Numbers of an attempt: two for the box, one an axis, one for the height. */
-const FOR_BOX = 2;
+/** Covers the rounding of the sum of an estimate and its bound. */
+const SETTLED = 1 + 1e-15;
+
+/** Numbers of an attempt: one for the box, one an axis, one for the height, and one more for the box where two are needed. */
+const FOR_BOX = 1;
+
+/** A formula at a place: quickly where that settles a question, else by its enclosure. */
+interface AtPlace {
+  readonly estimator: Estimator | null;
+  readonly encloser: Encloser;
+  readonly at: (...place: number[]) => number;
+}
+
+function atPlace(tape: Tape, exponent = 0): AtPlace {
+  return {
+    // Scaled heights are the encloser's business.
+    estimator: exponent === 0 ? estimatorOf(tape) : null,
+    encloser: new Encloser(tape, exponent),
+    at: evaluator(tape),
+  };
+}
 
 export class BoxDrawer {
   private readonly chooser: Chooser;
-  private readonly conditions: readonly { encloser: Encloser; at: (...x: number[]) => number }[];
-  private readonly rest: Encloser | null;
-  private readonly heightAt: ((...x: number[]) => number) | null;
+  private readonly conditions: readonly AtPlace[];
+  private readonly rest: AtPlace | null;
   private readonly axes: readonly AxisPlaces[];
+  private readonly sure: Float64Array;
+  private readonly nNumbers: number;
   private readonly numbers: Float64Array;
   private readonly place: Float64Array;
   private readonly value = I.interval();
@@ -66,14 +89,12 @@ export class BoxDrawer {
   constructor(private readonly envelope: BoxEnvelope) {
     const { boxes, conditions, rest, exponent, space } = envelope;
     this.chooser = new Chooser(boxes.map(({ upperMass }) => upperMass));
-    this.conditions = conditions.map(({ tape }) => ({
-      encloser: new Encloser(tape),
-      at: evaluator(tape),
-    }));
-    this.rest = rest && new Encloser(rest, exponent);
-    this.heightAt = rest && exponent === 0 ? evaluator(rest) : null;
+    this.conditions = conditions.map(({ tape }) => atPlace(tape));
+    this.rest = rest && atPlace(rest, exponent);
     this.axes = Array.from({ length: space.n }, (_, i) => new AxisPlaces(envelope, i));
-    this.numbers = new Float64Array(FOR_BOX + space.n + 2);
+    this.sure = Float64Array.from(boxes, ({ sure }) => sure);
+    this.nNumbers = FOR_BOX + space.n + (this.chooser.needsTwo ? 2 : 1);
+    this.numbers = new Float64Array(this.nNumbers + 1);
     this.place = new Float64Array(space.n);
   }
 
@@ -126,12 +147,12 @@ export class BoxDrawer {
   private attempt(stream: RowStream, row: number, attempt: number): Verdict {
     const { numbers, axes, place } = this;
     const n = axes.length;
-    stream.place(row, attempt, numbers, FOR_BOX + n + 1);
-    const at = this.chooser.choose(numbers[0]!, numbers[1]!);
+    stream.place(row, attempt, numbers, this.nNumbers);
+    const at = this.chooser.choose(numbers[0]!, numbers[FOR_BOX + n + 1]!);
     for (let i = 0; i < n; i++) place[i] = axes[i]!.placeFor(at, numbers[FOR_BOX + i]!);
-    const box = this.envelope.boxes[at]!;
     const v = numbers[FOR_BOX + n]!;
-    if (v < box.sure) return SURE;
+    if (v < this.sure[at]!) return SURE;
+    const box = this.envelope.boxes[at]!;
     const upper = this.upperAt(box);
     this.drawnHeight = v * upper;
     return this.holds(box.open) && this.isUnder(v * upper, upper) ? KEPT : REJECTED;
@@ -150,7 +171,12 @@ export class BoxDrawer {
     const { place, value } = this;
     for (let j = 0; j < this.conditions.length; j++) {
       if (!(open & (1 << j))) continue;
-      const { encloser, at } = this.conditions[j]!;
+      const { estimator, encloser, at } = this.conditions[j]!;
+      if (estimator) {
+        estimator.estimate(place);
+        if (estimator.value === 1) continue;
+        if (estimator.value === 0) return false;
+      }
       const state = encloser.densityAtPoint(place, value);
       if (state === Defined.Everywhere && value.lo === 1) continue;
       if (state === Defined.Everywhere && value.hi === 0) return false;
@@ -164,7 +190,15 @@ export class BoxDrawer {
   private isUnder(height: number, upper: number): boolean {
     if (this.rest === null) return true;
     const { place, value } = this;
-    this.rest.densityAtPoint(place, value);
+    const { estimator, encloser } = this.rest;
+    if (estimator) {
+      estimator.estimate(place);
+      const { value: v, error } = estimator;
+      // A height above the upper bound is looked at once more, by its enclosure.
+      if (v - error >= height * SETTLED && v + error <= upper) return true;
+      if (v + error < height / SETTLED) return false;
+    }
+    encloser.densityAtPoint(place, value);
     if (value.lo > upper * (1 + ROUNDING))
       throw bug(`breach: the density at ${Array.from(place).join(', ')} lies above the envelope`);
     if (value.lo >= height) return true;
@@ -175,8 +209,8 @@ export class BoxDrawer {
 
   private heightThere(place: ArrayLike<number>): number {
     if (this.rest === null) return 1;
-    if (this.heightAt) return Math.max(0, this.heightAt(...Array.from(place)));
-    this.rest.densityAtPoint(place, this.value);
+    if (this.envelope.exponent === 0) return Math.max(0, this.rest.at(...Array.from(place)));
+    this.rest.encloser.densityAtPoint(place, this.value);
     return Math.max(0, this.value.lo / 2 + this.value.hi / 2);
   }
 }
@@ -231,6 +265,11 @@ class Chooser {
   private readonly outer: Picker;
   private readonly inner: readonly Picker[] | null;
   private readonly size: number;
+
+  /** True if both numbers count. */
+  get needsTwo(): boolean {
+    return this.inner !== null;
+  }
 
   constructor(weights: readonly number[]) {
     const isFew = weights.length <= MOST_AT_ONCE;

@@ -69,12 +69,16 @@ export interface BoxEnvelope extends Joint {
 }
 
 /** Most boxes for 1, 2, 3 … variables. */
-const MAX_BOXES = [4096, 4096, 16384, 16384, 32768, 65536];
-/** From so many boxes on a lower acceptance will do: the rest costs more to prove than to draw. */
-const MANY_BOXES = 2048;
-const ENOUGH_ACCEPTANCE = 0.95;
+const MAX_BOXES = [4096, 16384, 16384, 16384, 32768, 65536];
+/** With more boxes a lower acceptance will do: the rest costs more to prove than to draw. */
+const ENOUGH = [
+  { boxes: 8192, acceptance: 0.8 },
+  { boxes: 4096, acceptance: 0.9 },
+  { boxes: 2048, acceptance: 0.95 },
+  { boxes: 0, acceptance: WANTED_ACCEPTANCE },
+];
 /** Steps of formulas worked over boxes, after which refinement ends: some seconds. */
-const MAX_WORK = 60_000_000;
+const MAX_WORK = 12_000_000;
 /** A sign that cannot be settled is taken for rounding up to this share of the peak. */
 const SIGN_TOLERANCE = 1e-12;
 const MAX_SIGN_STEPS = 20_000;
@@ -139,7 +143,7 @@ export class BoxProver {
 
   private refineOnce(): void {
     const isSpent = this.parts.size >= this.maxBoxes || this.spent >= MAX_WORK;
-    const wanted = this.parts.size < MANY_BOXES ? WANTED_ACCEPTANCE : ENOUGH_ACCEPTANCE;
+    const wanted = ENOUGH.find(({ boxes }) => this.parts.size >= boxes)!.acceptance;
     const isGood = this.urgent.length === 0 && this.lowerMass >= wanted * this.upperMass;
     const part = isSpent || isGood ? undefined : (this.urgent.pop() ?? this.byGap.pop());
     if (part === undefined) {
@@ -389,8 +393,9 @@ export class BoxProver {
     );
     const least = Math.min(...open);
     const best = axes.filter((_, k) => open[k] === least);
-    const weight = (i: number): number =>
-      owed && owed[i]! < Infinity ? owed[i]! : space.share(box, i);
+    // Where a condition is open the widest axis serves it best, whatever the rest owes.
+    const tells = box.open === 0 && owed?.some((each) => each > 0 && each < Infinity);
+    const weight = (i: number): number => (tells ? owed![i]! : space.share(box, i));
     return best.reduce((a, b) => (weight(b) > weight(a) ? b : a));
   }
 

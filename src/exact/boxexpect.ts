@@ -29,7 +29,7 @@ import * as I from '../numeric/interval';
 import type { Expectation } from './expect';
 
 /** Steps of formulas worked over boxes, and what a box costs besides: a second or two. */
-const MAX_WORK = 8_000_000;
+const MAX_WORK = 3_000_000;
 const WORK_OF_A_BOX = 40;
 const LN_2 = 0.6931471805599453;
 /** Covers the rounding of exponentials, products and sums behind a mass. */

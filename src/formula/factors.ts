@@ -36,7 +36,8 @@ function partsOf(source: Source): readonly Source[] {
   const { tree, where } = source;
   const text = withoutBrackets(source.text.trim().replace(/^=/, ''));
   const texts =
-    tree.kind === 'operator' && tree.operator === '*'
+    // In a chain of * and / every * may come last: a*b/c is a times b/c.
+    tree.kind === 'operator' && (tree.operator === '*' || tree.operator === '/')
       ? splitText(text, ({ value }) => value === '*')
       : tree.kind === 'call' && isCalled(tree.callee, 'AND')
         ? argumentsOf(text)
