@@ -10,7 +10,7 @@
 import type { Interval } from './proportion';
 import { chanceInterval } from './proportion';
 import type { Shares } from './weights';
-import { pull, rowsWorth } from './weights';
+import { rowsWorth, squaredPull } from './weights';
 
 export interface Chance {
   readonly chance: number;
@@ -33,7 +33,7 @@ export function chanceOf(
   for (let i = 0; i < nRows; i++) {
     const share = shares[i]!;
     if (share > 0) nCounting++;
-    const squared = pull(share) * pull(share);
+    const squared = squaredPull(share);
     if (!isTrue(i)) squaresFalse += squared;
     else if (share > 0) {
       count++;

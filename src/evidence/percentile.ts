@@ -10,27 +10,24 @@
  */
 import { sampleQuantile } from '../density/histogram';
 import { ranksAround } from './orderstatistics';
-import type { Sample } from './sample';
+import { pullsUpTo, type Sample } from './sample';
 import type { Ends } from './student';
 import { NO_ENDS } from './student';
-import { pull } from './weights';
 
 /** The value at a share. Domain: 0 ≤ share ≤ 1. */
-export function percentile({ values, shares }: Sample, share: number): number {
-  if (shares === null) return sampleQuantile(values, share);
-  const n = values.length;
-  if (n === 1) return values[0]!;
-  const wanted = share * (1 - (shares[0]! + shares[n - 1]!) / 2);
-  let reached = 0;
-  for (let i = 1; i < n; i++) {
-    const step = (shares[i - 1]! + shares[i]!) / 2;
-    if (reached + step >= wanted) {
-      const [from, to] = [values[i - 1]!, values[i]!];
-      return from + (to - from) * Math.min(1, (wanted - reached) / step);
-    }
-    reached += step;
-  }
-  return values[n - 1]!;
+export function percentile({ values, shares, sums }: Sample, share: number): number {
+  if (shares === null || sums === null) return sampleQuantile(values, share);
+  const last = values.length - 1;
+  const middle = (i: number): number => sums.shares[i]! - shares[i]! / 2;
+  const wanted = middle(0) + share * (middle(last) - middle(0));
+  const i = Math.max(
+    1,
+    firstOf(values.length, (at) => middle(at) >= wanted),
+  );
+  if (i > last) return values[last]!;
+  const [from, to] = [values[i - 1]!, values[i]!];
+  const part = (wanted - middle(i - 1)) / (middle(i) - middle(i - 1));
+  return from + (to - from) * Math.min(1, Math.max(0, part));
 }
 
 /**
@@ -39,44 +36,49 @@ export function percentile({ values, shares }: Sample, share: number): number {
  * weights near it.
  */
 export function percentileInterval(sample: Sample, share: number, confidence: number): Ends {
-  const { values, shares } = sample;
-  const n = effectiveRows(sample, share);
-  if (n < 1) return NO_ENDS;
-  const { lower, upper } = ranksAround(n, share, confidence);
+  const { values, sums } = sample;
+  const n = values.length;
+  if (sums === null) {
+    const { lower, upper } = ranksAround(n, share, confidence);
+    return {
+      lo: lower < 1 ? null : values[lower - 1]!,
+      hi: upper > n ? null : values[upper - 1]!,
+    };
+  }
+  const worth = effectiveRows(sample, sums.shares, share);
+  if (worth < 1) return NO_ENDS;
+  const { lower, upper } = ranksAround(worth, share, confidence);
+  // The last row with at most the lower share before it, the first with the upper share up to it.
+  const lo = firstOf(n, (i) => sums.shares[i]! > (lower - 1) / worth);
+  const hi = firstOf(n, (i) => sums.shares[i]! >= upper / worth);
   return {
-    lo: lower < 1 ? null : shares === null ? values[lower - 1]! : lowerAt(sample, (lower - 1) / n),
-    hi: upper > n ? null : shares === null ? values[upper - 1]! : upperAt(sample, upper / n),
+    lo: lower < 1 ? null : values[Math.min(lo, n - 1)]!,
+    hi: upper > worth ? null : values[Math.min(hi, n - 1)]!,
   };
 }
 
 /** How many rows of equal weight would tell the share below the percentile as well. */
-function effectiveRows({ values, shares }: Sample, share: number): number {
-  if (shares === null) return values.length;
-  let [below, squaredBelow, squaredAbove] = [0, 0, 0];
-  for (let i = 0; i < values.length; i++) {
-    const own = pull(shares[i]!) * pull(shares[i]!);
-    // Half a row on either side of the percentile does not matter.
-    if (below < share) squaredBelow += own;
-    else squaredAbove += own;
-    below += shares[i]!;
-  }
+function effectiveRows(sample: Sample, upTo: Float64Array, share: number): number {
+  const n = sample.values.length;
+  // Half a row on either side of the percentile does not matter.
+  const below = pullsUpTo(
+    sample,
+    firstOf(n, (i) => upTo[i]! > share),
+  );
+  const above = pullsUpTo(sample, n) - below;
   const miss = 1 - share;
-  const variance = squaredBelow * miss * miss + squaredAbove * share * share;
-  return Math.floor(Math.min(values.length, (share * miss) / variance));
+  const variance = below * miss * miss + above * share * share;
+  return Math.floor(Math.min(n, (share * miss) / variance));
 }
 
-/** The last value with at most that share before it. */
-function lowerAt({ values, shares }: Sample, share: number): number {
-  let before = 0;
-  let i = 0;
-  while (i + 1 < values.length && before + shares![i]! <= share) before += shares![i++]!;
-  return values[i]!;
-}
-
-/** The first value with at least that share up to it. */
-function upperAt({ values, shares }: Sample, share: number): number {
-  let upTo = shares![0]!;
-  let i = 0;
-  while (i + 1 < values.length && upTo < share) upTo += shares![++i]!;
-  return values[i]!;
+/** The first of 0 … n − 1 from which on something is true; n if it never is. */
+function firstOf(n: number, isTrue: (i: number) => boolean): number {
+  let lo = 0;
+  let hi = n;
+  while (lo < hi) {
+    const mid = (lo + hi) >>> 1;
+    if (isTrue(mid)) hi = mid;
+    else lo = mid + 1;
+  }
+  return lo;
 }

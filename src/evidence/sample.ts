@@ -5,7 +5,8 @@
  *
  * Source: derived here. Not handled: dependent rows.
  */
-import { rowsWorth, type Shares } from './weights';
+import { orderOf } from './order';
+import { rowsWorth, squaredPull, type Shares } from './weights';
 
 /** Values with what each counts for. */
 export interface Rows {
@@ -17,7 +18,17 @@ export interface Rows {
 }
 
 /** Rows whose values rise. */
-export type Sample = Rows & { readonly isRising: true };
+export interface Sample extends Rows {
+  /** What is known beside each row with weights; null when all are alike. */
+  readonly sums: Sums | null;
+}
+
+interface Sums {
+  /** The share of all rows up to this one. */
+  readonly shares: Float64Array;
+  /** The squared pulls (weights.ts) of all rows up to this one. */
+  readonly pulls: Float64Array;
+}
 
 /** A column whose rows all count alike, in the order it has. */
 export function rowsOf(values: Float64Array): Rows {
@@ -26,37 +37,45 @@ export function rowsOf(values: Float64Array): Rows {
 
 /** Sorts a column; rows of share 0 drop out. Domain: finite numbers, at least one row left. */
 export function sampleOf(column: Float64Array, shares: Shares | null): Sample {
-  if (shares === null) {
-    return { ...rowsOf(column.slice().sort()), isRising: true };
+  if (shares === null) return { ...rowsOf(column.slice().sort()), sums: null };
+  const order = orderOf(column);
+  let n = 0;
+  for (const i of order) if (shares[i]! > 0) order[n++] = i;
+  const [values, own] = [new Float64Array(n), new Float64Array(n)];
+  for (let k = 0; k < n; k++) {
+    values[k] = column[order[k]!]!;
+    own[k] = shares[order[k]!]!;
   }
-  const isLeft = (_: number, i: number): boolean => shares[i]! > 0;
-  const kept = column.filter(isLeft);
-  const own = shares.filter((share) => share > 0);
-  const values = kept.slice().sort();
+  shareOutTies(values, own);
   return {
     values,
-    shares: inOrderOf(values, kept, own),
-    rowsWorth: rowsWorth(own, values.length),
-    isRising: true,
+    shares: own,
+    rowsWorth: rowsWorth(own, n),
+    sums: { shares: runningSum(own, (share) => share), pulls: runningSum(own, squaredPull) },
   };
 }
 
-/**
- * The shares beside the sorted values. Equal values get the average of their shares, so that
- * their order does not matter; places are found by bisection, since sorting pairs takes longer
- * than all the rest.
- */
-function inOrderOf(sorted: Float64Array, column: Float64Array, shares: Shares): Shares {
-  const n = sorted.length;
-  const ordered = new Float64Array(n);
-  const counts = new Uint32Array(n);
-  for (let i = 0; i < n; i++) {
-    const first = firstPlaceOf(column[i]!, sorted);
-    ordered[first]! += shares[i]!;
-    counts[first]!++;
+/** The squared pulls of the first `count` rows. */
+export function pullsUpTo({ values, sums }: Sample, count: number): number {
+  const n = values.length;
+  return sums === null ? count * squaredPull(1 / n) : count === 0 ? 0 : sums.pulls[count - 1]!;
+}
+
+function runningSum(shares: Shares, of: (share: number) => number): Float64Array {
+  const sums = new Float64Array(shares.length);
+  let sum = 0;
+  for (let i = 0; i < shares.length; i++) sums[i] = sum += of(shares[i]!);
+  return sums;
+}
+
+/** Gives equal values the average of their shares, so that their order does not matter. */
+function shareOutTies(values: Float64Array, shares: Shares): void {
+  const n = values.length;
+  for (let first = 0, end = 0; first < n; first = end) {
+    let sum = 0;
+    for (; end < n && values[end] === values[first]; end++) sum += shares[end]!;
+    for (let i = first; i < end; i++) shares[i] = sum / (end - first);
   }
-  for (let i = 0; i < n; i += counts[i]!) ordered.fill(ordered[i]! / counts[i]!, i, i + counts[i]!);
-  return ordered;
 }
 
 /** The first place of the sorted values that is not below x. */

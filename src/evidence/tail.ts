@@ -6,7 +6,7 @@
  * Journal 9, from memory; derived in test/evidence/tail.test.ts). Not handled: dependent rows;
  * tails so heavy that they have no variance.
  */
-import type { Sample } from './sample';
+import { pullsUpTo, type Sample } from './sample';
 import type { Ends, Student } from './student';
 import { NO_ENDS } from './student';
 import { pull } from './weights';
@@ -59,12 +59,14 @@ function tailMean(sample: Sample, share: number, student: Student, fromTop: bool
   if (scale === 0) return { mean, interval: { lo: mean, hi: mean } };
   const average = off / scale;
   let squared = 0;
-  for (let i = 0; i < n; i++) {
+  for (let i = 0; i < last; i++) {
     const own = shares === null ? even : shares[at(i)]!;
-    const beyond = i < last ? (values[at(i)]! - end) / scale : 0;
-    const moved = pull(own) * (beyond - average);
+    const moved = pull(own) * ((values[at(i)]! - end) / scale - average);
     squared += moved * moved;
   }
+  const all = pullsUpTo(sample, n);
+  const rest = fromTop ? pullsUpTo(sample, n - last) : all - pullsUpTo(sample, last);
+  squared += rest * average * average;
   const error = (scale * Math.sqrt((squared * (n - 1)) / n)) / share;
   return { mean, interval: student.interval(mean, error, worth - 1) };
 }

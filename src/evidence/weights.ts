@@ -22,9 +22,14 @@ export function sharesOf(weights: ArrayLike<number>): Shares | null {
   }
   if (most === least) return null;
   // Scaled first, so that no sum overflows.
+  const shares = new Float64Array(weights.length);
   let whole = 0;
-  for (let i = 0; i < weights.length; i++) whole += weights[i]! / most;
-  return Float64Array.from(weights, (weight) => weight / most / whole);
+  for (let i = 0; i < weights.length; i++) {
+    shares[i] = weights[i]! / most;
+    whole += shares[i]!;
+  }
+  for (let i = 0; i < weights.length; i++) shares[i]! /= whole;
+  return shares;
 }
 
 /**
@@ -35,6 +40,10 @@ export function sharesOf(weights: ArrayLike<number>): Shares | null {
  */
 export function pull(share: number): number {
   return share / (1 - share);
+}
+
+export function squaredPull(share: number): number {
+  return pull(share) * pull(share);
 }
 
 /** How many rows of equal weight would tell as much: (sum of weights)² over sum of squares. */

@@ -13,6 +13,8 @@ export interface Column {
   readonly values: Float64Array;
   /** How many of the last rows are 0 or blank. */
   readonly zerosAtEnd: number;
+  /** The place of the i-th row, for messages: `values (argument 1), row 3`. */
+  readonly placeOf: (i: number) => string;
 }
 
 export interface Columns {
@@ -94,7 +96,12 @@ function readColumns(range: Range | null, where: string): Columns {
     let end = nRows;
     // FALSE at the end is an answer like any other.
     while (end > 0 && values[end - 1] === 0 && rows[end - 1 + first]![j] !== false) end--;
-    return { heading: first === 1 && isText(cell) ? cell : '', values, zerosAtEnd: nRows - end };
+    return {
+      heading: first === 1 && isText(cell) ? cell : '',
+      values,
+      zerosAtEnd: nRows - end,
+      placeOf: (i) => placeOf(i + first, j),
+    };
   });
   return { columns, nRows, areTruths: reader.areTruths(rows, first) };
 }

@@ -22,7 +22,7 @@ type Line = readonly [item: string, value: Cell];
  * Units: chances as fractions of 1.
  * Guarantee: exact intervals (Clopper and Pearson) where fewer than 30 rows count or fewer than 30
  * do not, else Wilson's; both for independent rows.
- * @throws {InputError} as columnsOfEither and readWeights; for numbers without a threshold, and TRUE and FALSE with one.
+ * @throws {InputError} as columnsOfEither and sharesForRows; for numbers without a threshold, and TRUE and FALSE with one.
  * @throws {CellErrorPassed} when a cell holds an error value.
  */
 export function exceedance(

@@ -32,7 +32,7 @@ type Figure = readonly [item: string, value: Cell, lo: Cell, hi: Cell];
  * Units: those of the values. An end that the rows are too few to tell is `unbounded`.
  * Guarantee: percentiles without weights are covered with at least the confidence, whatever the shape;
  * the other intervals near it for independent rows.
- * @throws {InputError} as numberColumns and readWeights, for shares not between 0 and 1, and for less than two rows' worth.
+ * @throws {InputError} as numberColumns and sharesForRows, for shares not between 0 and 1, and for less than two rows' worth.
  * @throws {CellErrorPassed} when a cell holds an error value.
  */
 export function summary(

@@ -3,7 +3,7 @@ import type { Cell, Range } from '../density/cells';
 import { counted, given, passErrors } from '../density/cells';
 import { InputError } from '../errors';
 import { type Shares, sharesOf } from '../evidence/weights';
-import type { Line } from './numbers';
+import { numberColumn } from './columns';
 import { numberLine } from './numbers';
 
 export const TABLE = 'table (argument 1)';
@@ -27,7 +27,8 @@ export function readWeighted(table: Range | null, weights: Range | null): Weight
   const own = given(table);
   if (own === null) throw new InputError(TABLE, 'it is missing', 'give a range of rows');
   passErrors(own);
-  const { numbers, placeOf } = readWeights(weights, WEIGHTS);
+  const { numbers, placeOf } = numberLine(weights, WEIGHTS, 'give one weight for each row');
+  requireWeights(numbers, placeOf, WEIGHTS);
   const nHeadings = own.length - numbers.length;
   if (nHeadings !== 0 && nHeadings !== 1) {
     throw new InputError(
@@ -44,34 +45,34 @@ export function readWeighted(table: Range | null, weights: Range | null): Weight
   };
 }
 
-/** @throws {InputError} for text or a negative number among the weights, and when all are 0. */
-export function readWeights(range: Range | null, where: string): Line {
-  const weights = numberLine(range, where, 'give one weight for each row');
-  const { numbers, placeOf } = weights;
-  const negative = numbers.findIndex((weight) => weight < 0);
-  if (negative >= 0) {
-    throw new InputError(
-      placeOf(negative),
-      `${numbers[negative]} is negative`,
-      'give weights of 0 or more',
-    );
+/** @throws {InputError} for a negative number among the weights, and when all are 0. */
+function requireWeights(
+  weights: ArrayLike<number>,
+  placeOf: (i: number) => string,
+  where: string,
+): void {
+  let some = false;
+  for (let i = 0; i < weights.length; i++) {
+    const weight = weights[i]!;
+    if (weight < 0)
+      throw new InputError(placeOf(i), `${weight} is negative`, 'give weights of 0 or more');
+    some ||= weight > 0;
   }
-  if (!numbers.some((weight) => weight > 0))
-    throw new InputError(where, 'all of them are 0', 'give at least one weight above 0');
-  return weights;
+  if (!some) throw new InputError(where, 'all of them are 0', 'give at least one weight above 0');
 }
 
 /**
  * Each row's part of the whole; null without weights or with weights that are all alike.
- * @throws {InputError} as readWeights, and when there is not one weight for each row.
+ * @throws {InputError} as numberColumn, for a negative weight, when all are 0, and when there is not one for each row.
  */
 export function sharesForRows(range: Range | null, where: string, nRows: number): Shares | null {
   if (given(range) === null) return null;
-  const { numbers } = readWeights(range, where);
-  if (numbers.length === nRows) return sharesOf(numbers);
+  const { values, placeOf } = numberColumn(range, where, 1);
+  requireWeights(values, placeOf, where);
+  if (values.length === nRows) return sharesOf(values);
   throw new InputError(
     where,
-    `${counted(numbers.length, 'weight')} for ${counted(nRows, 'row')} of values`,
+    `${counted(values.length, 'weight')} for ${counted(nRows, 'row')} of values`,
     'give one weight for each row',
   );
 }
