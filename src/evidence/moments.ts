@@ -4,7 +4,8 @@
  * Sources: two passes with a correction, Chan, Golub & LeVeque (1983), American Statistician 37;
  * errors of weighted means by the jackknife, weights.ts, which for equal weights is s / √n;
  * interval of a standard deviation without normality: Bonett (2006), Computational Statistics &
- * Data Analysis 50, with the mean in place of his trimmed mean (all from memory).
+ * Data Analysis 50, with the mean in place of his trimmed mean, and Student's t with the degrees
+ * of freedom of Satterthwaite (1946), Biometrics Bulletin 2 (all from memory).
  * Not handled: dependent rows; values beyond 1e300.
  */
 import { exp, ln } from '../numeric/elementary';
@@ -20,8 +21,12 @@ export interface Moments {
   /** With n − 1 in the denominator; for weights what that becomes. */
   readonly standardDeviation: number;
   readonly skewness: number;
+  /** Without weights skewness / √n. */
+  readonly skewnessOfMean: number;
   /** The squared relative standard error of the variance, times rows' worth: kurtosis − 1. */
   readonly varianceNoise: number;
+  /** The degrees of freedom that this error itself is known with. */
+  readonly varianceDegrees: number;
   readonly rowsWorth: number;
 }
 
@@ -48,29 +53,38 @@ export function momentsOf({ values, shares, rowsWorth }: Rows): Moments {
   let scale = 0;
   for (let i = 0; i < n; i++) scale = Math.max(scale, Math.abs(values[i]! - mean));
   if (!(scale > 0)) {
-    return { mean, error: 0, standardDeviation: 0, skewness: 0, varianceNoise: 0, rowsWorth };
+    return {
+      ...{ mean, error: 0, standardDeviation: 0 },
+      ...{ skewness: 0, skewnessOfMean: 0, varianceNoise: 0, varianceDegrees: n, rowsWorth },
+    };
   }
-  let [second, third, squared, squaredSecond, squares, pulled] = [0, 0, 0, 0, 0, 0];
+  let [second, third, squares, pulled, cubed] = [0, 0, 0, 0, 0];
   for (let i = 0; i < n; i++) {
     const share = shares === null ? even : shares[i]!;
     const z = (values[i]! - mean) / scale;
     const zz = z * z;
     second += share * zz;
     third += share * zz * z;
-    const own = share * share;
-    squared += own * zz;
-    squaredSecond += own * zz * zz;
-    squares += own;
+    squares += share * share;
     const moved = pull(share) * z;
     pulled += moved * moved;
+    cubed += moved * moved * moved;
   }
-  const fourth = squaredSecond - 2 * second * squared + second * second * squares;
+  let [noise, fourth] = [0, 0];
+  for (let i = 0; i < n; i++) {
+    const z = (values[i]! - mean) / scale;
+    const moved = (shares === null ? even : shares[i]!) * ((z * z) / second - 1);
+    noise += moved * moved;
+    fourth += moved * moved * moved * moved;
+  }
   return {
     mean,
     error: scale * Math.sqrt((pulled * (n - 1)) / n),
     standardDeviation: scale * Math.sqrt(second / (1 - squares)),
     skewness: third / (second * Math.sqrt(second)),
-    varianceNoise: (rowsWorth * fourth) / (second * second),
+    skewnessOfMean: cubed / (pulled * Math.sqrt(pulled)),
+    varianceNoise: rowsWorth * noise,
+    varianceDegrees: fourth > 0 ? (2 * noise * noise) / fourth : n,
     rowsWorth,
   };
 }
@@ -82,10 +96,11 @@ export function meanInterval({ mean, error, rowsWorth }: Moments, student: Stude
 
 /** Bonett's interval: on the logarithm of the variance, with the kurtosis that the rows show. */
 export function deviationInterval(moments: Moments, student: Student): Ends {
-  const { standardDeviation, varianceNoise, rowsWorth: n } = moments;
+  const { standardDeviation, varianceNoise, varianceDegrees, rowsWorth: n } = moments;
   if (standardDeviation === 0) return { lo: 0, hi: 0 };
   if (n < FEWEST_FOR_DEVIATION) return NO_ENDS;
-  const t = student.quantile(n - 1);
+  if (!(varianceDegrees >= 1)) return NO_ENDS;
+  const t = student.quantile(Math.min(n - 1, varianceDegrees));
   if (!(n > t)) return NO_ENDS;
   const small = n / (n - t);
   const error = small * Math.sqrt((varianceNoise + 3 / n) / (n - 1));
@@ -94,9 +109,9 @@ export function deviationInterval(moments: Moments, student: Student): Ends {
 }
 
 /**
- * Whether so skewed a column has too few rows for the t interval of its mean.
+ * Whether so skewed or unevenly weighted a column has too few rows for the t interval of its mean.
  * Source: Cochran (1977), §2.15: more than 25 skewness² rows (a crude rule, from memory).
  */
-export function isTooSkewed({ skewness, rowsWorth }: Moments): boolean {
-  return rowsWorth <= 25 * skewness * skewness;
+export function isTooSkewed({ skewnessOfMean }: Moments): boolean {
+  return 25 * skewnessOfMean * skewnessOfMean >= 1;
 }

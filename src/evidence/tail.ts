@@ -3,7 +3,8 @@
  *
  * Source: the mean of a share of the order statistics, its error from the influence of a row,
  * min(x − q, 0) / share with q the percentile (Manistre & Hancock 2005, North American Actuarial
- * Journal 9, from memory; derived in test/evidence/tail.test.ts). Not handled: dependent rows;
+ * Journal 9, from memory; derived in test/evidence/tail.test.ts). Degrees of freedom of a sum of
+ * squares: Satterthwaite (1946), Biometrics Bulletin 2 (from memory). Not handled: dependent rows;
  * tails so heavy that they have no variance.
  */
 import { pullsUpTo, type Sample } from './sample';
@@ -17,7 +18,7 @@ export interface TailMean {
 }
 
 /** Rows' worth in the tail from which an interval is given. */
-export const FEWEST_IN_TAIL = 20;
+export const FEWEST_IN_TAIL = 50;
 
 /** The mean of the lowest `share`; a row that lies across its end counts in part. Domain: 0 < share < 1. */
 export function lowestMean(sample: Sample, share: number, student: Student): TailMean {
@@ -58,15 +59,18 @@ function tailMean(sample: Sample, share: number, student: Student, fromTop: bool
   const scale = Math.abs(values[at(0)]! - end);
   if (scale === 0) return { mean, interval: { lo: mean, hi: mean } };
   const average = off / scale;
-  let squared = 0;
+  let [squared, fourth] = [0, 0];
   for (let i = 0; i < last; i++) {
     const own = shares === null ? even : shares[at(i)]!;
     const moved = pull(own) * ((values[at(i)]! - end) / scale - average);
     squared += moved * moved;
+    fourth += moved * moved * moved * moved;
   }
   const all = pullsUpTo(sample, n);
   const rest = fromTop ? pullsUpTo(sample, n - last) : all - pullsUpTo(sample, last);
   squared += rest * average * average;
   const error = (scale * Math.sqrt((squared * (n - 1)) / n)) / share;
-  return { mean, interval: student.interval(mean, error, worth - 1) };
+  // As many degrees of freedom as the noise of the squares leaves.
+  const degrees = Math.min(worth - 1, (2 * squared * squared) / fourth);
+  return { mean, interval: student.interval(mean, error, degrees) };
 }

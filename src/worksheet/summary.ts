@@ -122,7 +122,7 @@ function noteOn(moments: Moments, zerosAtEnd: number): string {
     notes.push('all rows are alike: the intervals cannot tell what other rows would show');
   else if (isTooSkewed(moments))
     notes.push(
-      `so skewed (skewness ${moments.skewness.toPrecision(2)}) that the interval of the mean may be too narrow for so few rows`,
+      `so skewed (skewness ${moments.skewness.toPrecision(2)}) or unevenly weighted that the interval of the mean may be too narrow`,
     );
   return notes.length === 0 ? 'none' : notes.join('; ');
 }

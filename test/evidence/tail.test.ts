@@ -57,16 +57,16 @@ describe('lowestMean and highestMean', () => {
         const rest = w === null ? sampleOf(own, null) : weighted(own, w);
         return tail(rest, 0.2, student).mean;
       });
-      const degrees = weights === null ? 99 : 92;
-      const error = (interval.hi! - interval.lo!) / 2 / student.quantile(degrees);
-      expect(Math.abs(error / by - 1)).toBeLessThan(0.05);
+      // The degrees of freedom are between 30 and 99, where t varies by 3 %.
+      const error = (interval.hi! - interval.lo!) / 2 / student.quantile(50);
+      expect(Math.abs(error / by - 1)).toBeLessThan(0.08);
     },
   );
 
-  it('have no interval with fewer than 20 rows’ worth in the tail [law]', () => {
+  it('have no interval with fewer than 50 rows’ worth in the tail [law]', () => {
     const sample = sampleOf(counts, null);
-    expect(lowestMean(sample, 0.19, student).interval).toEqual({ lo: null, hi: null });
-    expect(lowestMean(sample, 0.2, student).interval.lo).not.toBeNull();
+    expect(lowestMean(sample, 0.49, student).interval).toEqual({ lo: null, hi: null });
+    expect(lowestMean(sample, 0.5, student).interval.lo).not.toBeNull();
   });
 
   it('of values that are all alike have nothing to doubt [law]', () => {

@@ -106,7 +106,7 @@ describe('summary', () => {
   it('notes a skewness that the rows are too few for, and rows that are all alike [law]', () => {
     const rare = [...Array<number>(49).fill(1), 500];
     expect(cellsOf(summary(rangeOf(rare), null, null, null), 'note')[0]).toBe(
-      'so skewed (skewness 6.9) that the interval of the mean may be too narrow for so few rows',
+      'so skewed (skewness 6.9) or unevenly weighted that the interval of the mean may be too narrow',
     );
     const same = summary([[4], [4], [4]], null, null, null);
     expect(cellsOf(same, 'mean')).toEqual([4, 4, 4]);
