@@ -130,7 +130,12 @@ function page() {
       minimize: false,
       splitChunks: { cacheGroups: { grid: ownBundle('grid', /[\\/]@odoo[\\/]/) } },
     },
-    resolve: { extensions: ['.ts', '.js', '.json'], mainFields: ['module', 'main'] },
+    resolve: {
+      extensions: ['.ts', '.js', '.json'],
+      mainFields: ['module', 'main'],
+      // Its main file, which part of @stdlib asks for, is for Node.
+      alias: { debug$: 'debug/src/browser.js' },
+    },
     module: {
       rules: [
         { test: /\.ts$/, loader: 'swc-loader' },
