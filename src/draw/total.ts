@@ -7,8 +7,8 @@
  * matter to the memory. Sums carry their rounding errors along (Neumaier 1974).
  */
 import type { Key } from '../random/key';
-import { keyOfRow, RowStream } from '../random/stream';
-import type { ColumnDrawer } from './rejection';
+import { OwnStream } from '../random/stream';
+import type { ColumnDrawer, NumberSource } from './rejection';
 
 /** Draws that are held at a time. */
 const BLOCK = 65_536;
@@ -17,15 +17,6 @@ const BLOCK = 65_536;
 export interface Totals {
   readonly totals: Float64Array;
   readonly largest: Float64Array;
-}
-
-/** A row, from 0, and those of its draws that a block holds. */
-interface Stretch {
-  readonly row: number;
-  readonly stream: RowStream;
-  readonly firstDraw: number;
-  readonly at: number;
-  readonly n: number;
 }
 
 /**
@@ -42,13 +33,16 @@ export function drawTotals(
   const totals = new Float64Array(counts.length);
   const carries = new Float64Array(counts.length);
   const largest = new Float64Array(counts.length);
-  for (const block of blocksOf(counts, key, method)) {
-    const { values } = drawer.draws(sourceOf(block), block.at(-1)!.at + block.at(-1)!.n);
-    for (const { row, firstDraw, at, n } of block) {
+  const block = new Block(counts, key, method);
+  while (block.fill()) {
+    const { values } = drawer.draws(block, block.size);
+    for (let stretch = 0; stretch < block.nStretches; stretch++) {
+      const row = block.rows[stretch]!;
+      const end = block.starts[stretch + 1]!;
       let sum = totals[row]!;
       let carry = carries[row]!;
-      let most = firstDraw === 0 ? -Infinity : largest[row]!;
-      for (let i = at; i < at + n; i++) {
+      let most = block.firstDraws[stretch] === 0 ? -Infinity : largest[row]!;
+      for (let i = block.starts[stretch]!; i < end; i++) {
         const value = measure ? measure(values[i]!, row) : values[i]!;
         const next = sum + value;
         carry += Math.abs(sum) >= Math.abs(value) ? sum - next + value : value - next + sum;
@@ -63,56 +57,70 @@ export function drawTotals(
   return { totals: totals.map((sum, row) => sum + carries[row]!), largest };
 }
 
-/** The draws of all rows in order, cut into blocks. */
-function* blocksOf(
-  counts: readonly number[],
-  key: Key,
-  method: number,
-): Generator<readonly Stretch[]> {
-  let block: Stretch[] = [];
-  let filled = 0;
-  for (let row = 0; row < counts.length; row++) {
-    const count = counts[row]!;
-    if (count === 0) continue;
-    const stream = new RowStream(keyOfRow(key, row + 1, method), method);
-    for (let done = 0; done < count;) {
-      const n = Math.min(count - done, BLOCK - filled);
-      block.push({ row, stream, firstDraw: done, at: filled, n });
-      filled += n;
-      done += n;
-      if (filled < BLOCK) continue;
-      yield block;
-      block = [];
-      filled = 0;
-    }
-  }
-  if (filled > 0) yield block;
-}
+/** The draws of all rows in order, so many at a time: stretches of draws of one row each. */
+class Block implements NumberSource {
+  size = 0;
+  nStretches = 0;
+  /** The row, from 0, of each stretch, its first draw, and where it starts; then where the last one ends. */
+  readonly rows = new Int32Array(BLOCK);
+  readonly firstDraws = new Int32Array(BLOCK);
+  readonly starts = new Int32Array(BLOCK + 1);
+  private readonly numbers = new Float64Array(BLOCK + 1);
+  private readonly stream: OwnStream;
+  /** The row and draw that come next. */
+  private row = 0;
+  private draw = 0;
 
-/** The numbers of a block's draws, each under its row's own key. */
-function sourceOf(block: readonly Stretch[]): {
-  fillFirst: (from: number, out: Float64Array, count: number) => void;
-  further: (i: number, attempt: number, out: Float64Array) => void;
-} {
-  let current = 0;
-  const stretchAt = (i: number): Stretch => {
-    if (block[current]!.at > i) current = 0;
-    while (block[current]!.at + block[current]!.n <= i) current++;
-    return block[current]!;
-  };
-  return {
-    fillFirst(from, out, count) {
-      for (let filled = 0; filled < count;) {
-        const { stream, firstDraw, at, n } = stretchAt(from + filled);
-        const skipped = from + filled - at;
-        const size = Math.min(n - skipped, count - filled);
-        stream.fillFirst(firstDraw + skipped, out, size, filled);
-        filled += size;
-      }
-    },
-    further(i, attempt, out) {
-      const { stream, firstDraw, at } = stretchAt(i);
-      stream.further(firstDraw + i - at, attempt, out);
-    },
-  };
+  constructor(
+    private readonly counts: readonly number[],
+    key: Key,
+    method: number,
+  ) {
+    this.stream = new OwnStream(key, method);
+  }
+
+  /** Takes the next draws; false when there are none left. */
+  fill(): boolean {
+    const { counts, rows, firstDraws, starts, numbers, stream } = this;
+    let [size, nStretches] = [0, 0];
+    for (; this.row < counts.length && size < BLOCK; this.row++, this.draw = 0) {
+      const n = Math.min(counts[this.row]! - this.draw, BLOCK - size);
+      if (n === 0) continue;
+      rows[nStretches] = this.row;
+      firstDraws[nStretches] = this.draw;
+      starts[nStretches++] = size;
+      stream.select(this.row + 1);
+      stream.fillFirst(this.draw, numbers, size, n);
+      size += n;
+      if (this.draw + n === counts[this.row]!) continue;
+      this.draw += n;
+      break;
+    }
+    starts[nStretches] = size;
+    this.size = size;
+    this.nStretches = nStretches;
+    return size > 0;
+  }
+
+  fillFirst(from: number, out: Float64Array, count: number): void {
+    out.set(this.numbers.subarray(from, from + count));
+  }
+
+  further(i: number, attempt: number, out: Float64Array): void {
+    const stretch = this.stretchOf(i);
+    this.stream.select(this.rows[stretch]! + 1);
+    this.stream.further(this.firstDraws[stretch]! + i - this.starts[stretch]!, attempt, out);
+  }
+
+  /** The stretch that holds draw i of the block. */
+  private stretchOf(i: number): number {
+    let lo = 0;
+    let hi = this.nStretches - 1;
+    while (lo < hi) {
+      const middle = (lo + hi + 1) >> 1;
+      if (this.starts[middle]! <= i) lo = middle;
+      else hi = middle - 1;
+    }
+    return lo;
+  }
 }

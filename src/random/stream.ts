@@ -64,17 +64,17 @@ export class RowStream {
   }
 
   /**
-   * Writes the first numbers of rows firstRow … firstRow + count − 1 to out from `at` on.
+   * Writes the first numbers of rows firstRow … firstRow + count − 1 to out[0 … count − 1].
    * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
    */
-  fillFirst(firstRow: number, out: Float64Array, count: number, at = 0): void {
+  fillFirst(firstRow: number, out: Float64Array, count: number): void {
     let filled = 0;
-    if (count > 0 && firstRow & 1) out[at + filled++] = this.first(firstRow);
+    if (count > 0 && firstRow & 1) out[filled++] = this.first(firstRow);
     const pairs = (count - filled) >>> 1;
     const pair = (firstRow + filled) >>> 1;
-    fillFractions(pair, this.purpose, this.method, this.k0, this.k1, out, at + filled, pairs);
+    fillFractions(pair, this.purpose, this.method, this.k0, this.k1, out, filled, pairs);
     filled += 2 * pairs;
-    if (filled < count) out[at + filled] = this.first(firstRow + filled);
+    if (filled < count) out[filled] = this.first(firstRow + filled);
   }
 
   /**
@@ -111,11 +111,52 @@ export class RowStream {
   }
 }
 
-/** The key of a row's own draws. Guarantee: the same bits on every engine; two rows share one with a chance of 2^-64. */
-export function keyOfRow([k0, k1]: Key, row: number, method = 0): Key {
-  philox4x32(row, 0, PURPOSE.total, method, k0, k1, ownBlock);
-  return [ownBlock[0]!, ownBlock[1]!];
-}
+/** The numbers of draws of which each row has its own: one row is at hand at a time. */
+export class OwnStream {
+  private ownK0 = 0;
+  private ownK1 = 0;
+  private readonly block = new Uint32Array(4);
 
-/** Scratch of keyOfRow; it holds nothing between calls. */
-const ownBlock = new Uint32Array(4);
+  constructor(
+    private readonly key: Key,
+    private readonly method = 0,
+  ) {}
+
+  /** Takes a row in hand by its key. Two rows share one with a chance of 2^-64. */
+  select(row: number): void {
+    const { block, key } = this;
+    philox4x32(row, 0, PURPOSE.total, this.method, key[0], key[1], block);
+    this.ownK0 = block[0]!;
+    this.ownK1 = block[1]!;
+  }
+
+  /**
+   * Writes the first numbers of draws firstDraw … firstDraw + count − 1 of the row at hand to out
+   * from `at` on, and may write one number more behind them.
+   * Guarantee: those of a RowStream under the row's key.
+   */
+  fillFirst(firstDraw: number, out: Float64Array, at: number, count: number): void {
+    let [draw, place, left] = [firstDraw, at, count];
+    if (left > 0 && draw & 1) {
+      this.fillPairs(draw >>> 1, this.pair, 0, 1);
+      out[place++] = this.pair[1]!;
+      draw++;
+      left--;
+    }
+    this.fillPairs(draw >>> 1, out, place, (left + 1) >>> 1);
+  }
+
+  /** Writes u and v of an attempt of a draw of the row at hand to out[0] and out[1]. */
+  further(draw: number, attempt: number, out: Float64Array): void {
+    const { block } = this;
+    philox4x32(draw, attempt, PURPOSE.further, this.method, this.ownK0, this.ownK1, block);
+    out[0] = fraction(block[0]!, block[1]!);
+    out[1] = fraction(block[2]!, block[3]!);
+  }
+
+  private readonly pair = new Float64Array(2);
+
+  private fillPairs(pair: number, out: Float64Array, at: number, pairs: number): void {
+    fillFractions(pair, PURPOSE.first, this.method, this.ownK0, this.ownK1, out, at, pairs);
+  }
+}

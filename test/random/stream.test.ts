@@ -3,7 +3,7 @@ import { keyOf } from '../../src/random/key';
 import type { Key } from '../../src/random/key';
 import { fraction, philox4x32 } from '../../src/random/philox';
 import { correlation, Z_FALSE_ALARM } from '../draw/statistics';
-import { keyOfRow, PURPOSE, RowStream } from '../../src/random/stream';
+import { OwnStream, PURPOSE, RowStream } from '../../src/random/stream';
 
 const LAST_ROW = 1048575;
 const KEY = keyOf('plan-2027', 'harvest');
@@ -105,42 +105,48 @@ describe('RowStream.fillFirst', () => {
   });
 });
 
-describe('keyOfRow', () => {
-  it('keyOfRow(key, row, method) is words 0 and 1 of block (row, 0, 6, method) [law]', () => {
-    fc.assert(
-      fc.property(key, row, fc.integer({ min: 0, max: 9 }), ([k0, k1], i, method) => {
-        const words = new Uint32Array(4);
-        philox4x32(i, 0, PURPOSE.total, method, k0, k1, words);
-        expect(keyOfRow([k0, k1], i, method)).toEqual([words[0], words[1]]);
-      }),
-    );
-  });
+describe('OwnStream', () => {
+  const rowKey = ([k0, k1]: Key, i: number, method = 0): Key => {
+    const words = new Uint32Array(4);
+    philox4x32(i, 0, PURPOSE.total, method, k0, k1, words);
+    return [words[0]!, words[1]!];
+  };
 
-  it('the draws of neighbouring rows under their keys are uncorrelated [law]', () => {
-    const n = 100_000;
-    const [a, b] = [7, 8].map((i) => firsts(new RowStream(keyOfRow(KEY, i)), n));
-    const limit = Z_FALSE_ALARM / Math.sqrt(n);
-    expect(Math.abs(correlation(a!, b!))).toBeLessThan(limit);
-    expect(correlation(a!, firsts(new RowStream(keyOfRow(KEY, 7)), n))).toBeGreaterThan(limit);
-  });
-});
-
-describe('RowStream.fillFirst at a place', () => {
-  it('fillFirst(row, out, count, at) writes the same numbers from there on [law]', () => {
+  it('select(row) has the numbers of a RowStream under words 0 and 1 of block (row, 0, 6, method) [law]', () => {
+    const small = fc.integer({ min: 0, max: 9 });
     fc.assert(
       fc.property(
+        key,
         row,
-        fc.integer({ min: 0, max: 9 }),
-        fc.integer({ min: 0, max: 5 }),
-        (i, n, at) => {
-          const stream = new RowStream(KEY);
-          const [plain, moved] = [new Float64Array(n), new Float64Array(n + at + 2)];
-          stream.fillFirst(i, plain, n);
-          stream.fillFirst(i, moved, n, at);
-          expect(Array.from(moved)).toEqual([...Array<number>(at).fill(0), ...plain, 0, 0]);
+        small,
+        fc.integer({ min: 0, max: 1e6 }),
+        small,
+        (own, i, method, draw, n) => {
+          const stream = new OwnStream(own, method);
+          const plain = new RowStream(rowKey(own, i, method), method);
+          const [wanted, out] = [new Float64Array(n), new Float64Array(n + 4)];
+          plain.fillFirst(draw, wanted, n);
+          stream.select(i === 1 ? 2 : 1);
+          stream.select(i);
+          stream.fillFirst(draw, out, 2, n);
+          // One number may follow.
+          expect(Array.from(out.slice(0, n + 2))).toEqual([0, 0, ...wanted]);
+          expect(out[n + 3]).toBe(0);
+          const pairs = [new Float64Array(2), new Float64Array(2)];
+          plain.further(draw, method, pairs[0]!);
+          stream.further(draw, method, pairs[1]!);
+          expect(pairs[1]).toEqual(pairs[0]);
         },
       ),
     );
+  });
+
+  it('the draws of neighbouring rows are uncorrelated [law]', () => {
+    const n = 100_000;
+    const [a, b] = [7, 8].map((i) => firsts(new RowStream(rowKey(KEY, i)), n));
+    const limit = Z_FALSE_ALARM / Math.sqrt(n);
+    expect(Math.abs(correlation(a!, b!))).toBeLessThan(limit);
+    expect(correlation(a!, firsts(new RowStream(rowKey(KEY, 7)), n))).toBeGreaterThan(limit);
   });
 });
 
