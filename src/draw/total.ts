@@ -4,7 +4,8 @@
  * of one row only adds draws to that row.
  *
  * Draws are made in blocks across rows and summed as they come, so that their number does not
- * matter to the memory. Sums carry their rounding errors along (Neumaier 1974).
+ * matter to the memory. Sums carry their rounding errors along (Knuth, The Art of Computer
+ * Programming 2, 4.2.2, theorem B, which has no branch to guess).
  */
 import type { Key } from '../random/key';
 import { OwnStream } from '../random/stream';
@@ -45,7 +46,8 @@ export function drawTotals(
       for (let i = block.starts[stretch]!; i < end; i++) {
         const value = measure ? measure(values[i]!, row) : values[i]!;
         const next = sum + value;
-        carry += Math.abs(sum) >= Math.abs(value) ? sum - next + value : value - next + sum;
+        const added = next - sum;
+        carry += sum - (next - added) + (value - added);
         sum = next;
         if (value > most) most = value;
       }

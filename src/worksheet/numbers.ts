@@ -19,12 +19,11 @@ export function numberLine(range: Range | null, where: string, expected: string)
   const unit = own.length === 1 ? 'column' : 'row';
   const placeOf = (i: number): string =>
     cells.length === 1 ? where : `${where}, ${unit} ${i + first + 1}`;
-  const numbers: number[] = [];
+  const numbers = new Array<number>(cells.length - first);
   for (let i = first; i < cells.length; i++) {
     const cell = cells[i]!;
-    // A place is a new text: for long lines it is made only where it is needed.
-    const isPlain = typeof cell === 'number' && cell !== 0;
-    numbers.push(isPlain ? cell : numberIn(cell, placeOf(i - first)));
+    // A place is a new text: for long lines it is made only where it is needed. −0 + 0 is 0.
+    numbers[i - first] = typeof cell === 'number' ? cell + 0 : numberIn(cell, placeOf(i - first));
   }
   return { numbers, placeOf };
 }

@@ -30,6 +30,7 @@ const label = (): Range => [[`press ${round++}`]];
 
 const runs: (readonly [string, number, () => unknown])[] = [
   ['sorting', 1, () => Float64Array.from(numbers).sort()],
+  ['(sorting by a comparison)', 1, () => Array.from(numbers).sort((a, b) => a - b)],
   ['PICK', 1, () => pick(table, column, [[N]], SEED, label())],
   ['THIN', 1, () => thin(table, column, SEED, label(), [[9]])],
   [
