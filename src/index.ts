@@ -8,6 +8,7 @@ export { blend } from './worksheet/blend';
 export { cases } from './worksheet/cases';
 export { check } from './worksheet/check';
 export { draw } from './worksheet/draw';
+export { drivers } from './worksheet/drivers';
 export { each } from './worksheet/each';
 export { envelope } from './worksheet/envelope';
 export { exceedance } from './worksheet/exceedance';

@@ -13,6 +13,7 @@ import {
   cases,
   check,
   draw,
+  drivers,
   each,
   envelope,
   exceedance,
@@ -113,6 +114,7 @@ const computations: Record<string, (at: readonly Argument[], rest: readonly Rang
     rowsNeeded(values, share, halfwidth, confidence),
   PAIREDCHANGE: ([before = null, after = null, confidence = null]) =>
     pairedChange(before, after, confidence),
+  DRIVERS: ([inputs = null, output = null]) => drivers(inputs, output),
   CHECK: ([values = null, density = null, limits = null], givens) =>
     check(values, density, limits, givens),
   BESTOF: ([table = null, largest = null, confidence = null]) => bestOf(table, largest, confidence),

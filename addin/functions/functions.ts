@@ -426,6 +426,16 @@ export function pairedChange(before: any[][], after: any[][], confidence?: any[]
 }
 
 /**
+ * Tells which input columns move an output that was worked out from them row by row: for each input the rank correlation and the first-order share of the output's variance (what would go, on average, if that input were known), each with its 95 % interval, the largest share first; then what the shares make together. What is left is what inputs do jointly, or what is not among them; where inputs are linked, their shares overlap. Assumes independent rows, 1,000 or more for shares worth reading; for STRATIFIED columns the intervals are too wide. The shares rest on the stated shapes and the model in the workbook; they do not replace judgement about what is not in them.
+ * @customfunction DRIVERS
+ * @param inputs One column for each input, with or without a heading row.
+ * @param output One column of as many rows, in the same order.
+ */
+export function drivers(inputs: any[][], output: any[][]): any[][] {
+  return answer('DRIVERS', [inputs, output], null);
+}
+
+/**
  * Checks whether columns of values look like independent draws of a shape: one overall line in plain words, then exact percentiles, mean and standard deviation beside the drawn ones with the range that is allowed, then tests of the whole (largest distance of shares, tails, cells of equal share, order of rows, repeats, rows outside the limits) with their p-values. Of 100 columns that follow their shape at most one shows any sign against it; no sign proves nothing. It says whether the values follow the shape, not whether the shape is right. Assumes independent rows that are not rounded: it does not apply to STRATIFIED columns.
  * @customfunction CHECK
  * @param values One or more columns of numbers, with or without a heading row: all against one shape, or as many as there are shapes.

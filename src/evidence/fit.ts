@@ -11,6 +11,7 @@ import betaQuantile from '@stdlib/stats-base-dists-beta-quantile';
 import { sampleQuantile } from '../density/histogram';
 import type { Lattice } from '../density/lattice';
 import type { Distribution } from '../exact/distribution';
+import { averageRanks, inOrder, orderOf } from '../numeric/ranks';
 import { andersonDarlingDistance, andersonDarlingPValue } from './andersondarling';
 import { cellsFor, chiSquareOf, chiSquarePValue, equalCells, pointCells } from './chisquare';
 import { criticalValue } from './critical';
@@ -25,10 +26,9 @@ import {
   varianceStatistic,
 } from './momentfit';
 import { momentsOf } from './moments';
-import { inOrder, orderOf, ranksOf, ranksWithoutTies } from './order';
 import { repeatsIn } from './repeats';
 import { rowsOf } from './sample';
-import { betaShape, FEWEST_FOR_SERIAL, serialOrder } from './serial';
+import { betaShape, FEWEST_FOR_SERIAL, ranksWithoutTies, serialOrder } from './serial';
 import { allowedShares, sharePValue } from './shareplace';
 
 /** A figure, a text that says why there is none, or nothing. */
@@ -48,7 +48,7 @@ export interface FitLine {
 interface Seen {
   readonly values: Float64Array;
   readonly sorted: Float64Array;
-  readonly order: Uint32Array;
+  readonly order: Int32Array;
   /** Exact shares below and above the sorted values. */
   readonly below: Float64Array;
   readonly above: Float64Array;
@@ -199,8 +199,8 @@ function serialLine(n: number, level: number, hasTies: boolean): Lines {
   if (n < FEWEST_FOR_SERIAL) return () => [untold(item)];
   const shape = betaShape(n);
   const to = 1 - 2 * betaQuantile(level / 2, shape, shape);
-  return ({ sorted, order }) => {
-    const ranks = hasTies ? ranksWithoutTies(sorted, order) : ranksOf(sorted, order);
+  return ({ values, sorted, order }) => {
+    const ranks = hasTies ? ranksWithoutTies(sorted, order) : averageRanks(values, order);
     const { correlation, pValue } = serialOrder(ranks);
     return [{ item, exact: 0, drawn: correlation, from: -to, to, pValue }];
   };

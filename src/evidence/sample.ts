@@ -5,7 +5,7 @@
  *
  * Source: derived here. Not handled: dependent rows.
  */
-import { orderOf } from './order';
+import { orderOf } from '../numeric/ranks';
 import { rowsWorth, squaredPull, type Shares } from './weights';
 
 /** Values with what each counts for. */

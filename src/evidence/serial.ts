@@ -8,6 +8,8 @@
  * Not handled: dependence that neighbouring rows do not show.
  */
 import betainc from '@stdlib/math-base-special-betainc';
+import { keyOf } from '../random/key';
+import { RowStream } from '../random/stream';
 
 /** Fewer rows have too few orders. */
 export const FEWEST_FOR_SERIAL = 10;
@@ -50,4 +52,23 @@ export function betaShape(n: number): number {
 /** The variance of the ratio over all orders of n different ranks; its mean is 2. */
 export function varianceOfRatio(n: number): number {
   return (4 * (n - 2) * (5 * n * n - 2 * n - 9)) / (5 * n * (n + 1) * (n - 1) * (n - 1));
+}
+
+/**
+ * Each row's rank from 1, equal values in an order of random numbers that are always the same:
+ * what a column of counted values is judged by.
+ */
+export function ranksWithoutTies(sorted: Float64Array, order: Int32Array): Float64Array {
+  const n = sorted.length;
+  const ranks = new Float64Array(n);
+  const random = new Float64Array(n);
+  new RowStream(keyOf('ranks', 'equal values')).fillFirst(1, random, n);
+  for (let i = 0; i < n;) {
+    let end = i + 1;
+    while (end < n && sorted[end] === sorted[i]) end++;
+    const rows = order.slice(i, end).sort((a, b) => random[a]! - random[b]!);
+    rows.forEach((row, k) => (ranks[row] = i + 1 + k));
+    i = end;
+  }
+  return ranks;
 }

@@ -91,6 +91,13 @@ function settle(values: Float64Array, order: Int32Array, first: number, end: num
   }
 }
 
+/** The values in an order. */
+export function inOrder(values: Float64Array, order: Int32Array): Float64Array {
+  const sorted = new Float64Array(order.length);
+  for (let i = 0; i < order.length; i++) sorted[i] = values[order[i]!]!;
+  return sorted;
+}
+
 /** Rank of each value, from 1; equal values have the mean of their ranks. */
 export function averageRanks(values: Float64Array, order = orderOf(values)): Float64Array {
   const n = values.length;

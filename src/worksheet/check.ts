@@ -7,7 +7,7 @@ import type { FitLine } from '../evidence/fit';
 import { comparisonsOf, fitter } from '../evidence/fit';
 import { shortNumber } from '../numeric/text';
 import type { Column } from './columns';
-import { nameOf, numberColumns, zerosNote } from './columns';
+import { nameOf, numberColumns, unusualZeros, zerosNote } from './columns';
 import { joined } from './lines';
 import { prove } from './proved';
 
@@ -63,12 +63,14 @@ export function check(
 type Row = readonly [item: string, ...cells: Cell[]];
 
 function part(
-  { values, zerosAtEnd }: Column,
+  column: Column,
   lines: readonly FitLine[],
   level: number,
   notes: readonly string[],
 ): readonly Row[] {
-  const all = [...notes, ...(zerosAtEnd > 0 ? [zerosNote(zerosAtEnd)] : [])];
+  const { values, zerosAtEnd } = column;
+  const zeros = unusualZeros(column);
+  const all = [...notes, ...(zeros > 0 ? [zerosNote(zeros)] : [])];
   return [
     [
       'overall',

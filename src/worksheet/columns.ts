@@ -148,3 +148,18 @@ class Reader {
     return true;
   }
 }
+
+/** A run of zeros as long as this is no chance if it has less than this one. */
+const UNUSUAL = 0.001;
+
+/** The zeros at the end, 0 where the column has so many others that they may be rows like any. */
+export function unusualZeros({ values, zerosAtEnd }: Column): number {
+  const before = values.length - zerosAtEnd;
+  let others = 0;
+  for (let i = 0; i < before; i++) if (values[i] === 0) others++;
+  if (others === 0) return zerosAtEnd;
+  const share = others / before;
+  let chance = 1;
+  for (let k = 0; k < zerosAtEnd && chance >= UNUSUAL; k++) chance *= share;
+  return chance < UNUSUAL ? zerosAtEnd : 0;
+}

@@ -2,12 +2,14 @@
  * CHECK and DRIVERS at 100,000 rows beside sorting one such column in the same run. Fails where
  * the promised ratios do not hold.
  */
-import { check, draw } from '../../src/index';
+import { check, draw, drivers } from '../../src/index';
 import { inTurn, median, printTable } from './timing';
 
 const ROWS = 100_000;
 const ROUNDS = 15;
 const MOST_OF_CHECK = 8;
+const MOST_OF_DRIVERS = 40;
+const INPUTS = 10;
 
 const UNBOUNDED = [['unbounded', 'unbounded']];
 const shapes: readonly (readonly [string, (string | number)[][]])[] = [
@@ -34,6 +36,13 @@ for (const [formula, limits] of shapes) {
   const values = draw(density, limits, [[ROWS]], [['plan-2027']], [['bench']], []);
   measure(`CHECK of ${formula}`, () => check(values, density, limits, []), MOST_OF_CHECK);
 }
+
+const labels = [Array.from({ length: INPUTS }, (_, j) => `input ${j + 1}`)];
+const inputs = draw([['1']], [[0, 1]], [[ROWS]], [['plan-2027']], labels, []);
+const output = inputs.map((row) => [
+  row.reduce<number>((sum, x, j) => sum + (j + 1) * (x as number), 0),
+]);
+measure(`DRIVERS of ${INPUTS} inputs`, () => drivers(inputs, output), MOST_OF_DRIVERS);
 
 printTable(lines);
 if (!isFast) process.exitCode = 1;

@@ -1,18 +1,13 @@
-import { serialOrder, varianceOfRatio } from '../../src/evidence/serial';
+import { averageRanks, inOrder, orderOf } from '../../src/numeric/ranks';
+import { ranksWithoutTies, serialOrder, varianceOfRatio } from '../../src/evidence/serial';
 import { Z_FALSE_ALARM } from '../draw/statistics';
 import { uniform } from './samples';
-import { inOrder, orderOf, ranksOf } from '../../src/evidence/order';
 
 function permutations(n: number): number[][] {
   if (n === 0) return [[]];
   return permutations(n - 1).flatMap((rest) =>
     Array.from({ length: n }, (_, i) => [...rest.slice(0, i), n, ...rest.slice(i)]),
   );
-}
-
-function ranksOfColumn(values: Float64Array): Float64Array {
-  const order = orderOf(values);
-  return ranksOf(inOrder(values, order), order);
 }
 
 describe('serialOrder', () => {
@@ -32,7 +27,7 @@ describe('serialOrder', () => {
     const levels = [0.001, 0.01, 0.1, 0.5];
     const counts = levels.map(() => 0);
     for (let r = 0; r < repetitions; r++) {
-      const { pValue } = serialOrder(ranksOfColumn(values.slice(r * n, (r + 1) * n)));
+      const { pValue } = serialOrder(averageRanks(values.slice(r * n, (r + 1) * n)));
       levels.forEach((level, i) => (counts[i]! += pValue < level ? 1 : 0));
     }
     levels.forEach((level, i) => {
@@ -51,5 +46,24 @@ describe('serialOrder', () => {
     const swinging = rising.map((rank, i) => (i % 2 === 0 ? (rank + 1) / 2 : n - rank / 2 + 1));
     expect(serialOrder(swinging).pValue).toBeLessThan(1e-30);
     expect(serialOrder(swinging).correlation).toBeLessThan(-0.4);
+  });
+});
+
+describe('ranksWithoutTies', () => {
+  it('ranks every row, equal values in an order that does not follow the rows [law]', () => {
+    const values = uniform(2000, 'ties').map((u) => Math.floor(u * 3));
+    const order = orderOf(values);
+    const ranks = ranksWithoutTies(inOrder(values, order), order);
+    expect([...ranks].sort((a, b) => a - b)).toEqual(Array.from(ranks, (_, i) => i + 1));
+    values.forEach((value, i) => {
+      const j = (i * 7) % 2000;
+      if (value < values[j]!) expect(ranks[i]).toBeLessThan(ranks[j]!);
+    });
+    expect(serialOrder(ranks).pValue).toBeGreaterThan(1e-6);
+    // Of equal values alone, ranks in the order of the rows would look like a trend.
+    const same = new Float64Array(2000);
+    const rising = orderOf(same);
+    expect(serialOrder(ranksWithoutTies(same, rising)).pValue).toBeGreaterThan(1e-6);
+    expect(serialOrder(Float64Array.from(rising, (row) => row + 1)).pValue).toBeLessThan(1e-100);
   });
 });

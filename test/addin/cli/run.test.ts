@@ -114,6 +114,10 @@ describe('undercurve call', () => {
       [[31], [28], [40]],
       [[33], [28], [41]],
     ],
+    DRIVERS: [
+      Array.from({ length: 20 }, (_, i) => [i, i % 3]),
+      Array.from({ length: 20 }, (_, i) => [i * i]),
+    ],
     CHECK: [[[3], [4.5], [4]], BLOCK],
     BESTOF: [
       [
