@@ -80,6 +80,23 @@ export function lineChart(
   return lines(title, unit, 'density', x, series);
 }
 
+/** Points by two ranges of numbers; the first cell of each is its heading. */
+export function scatterChart(
+  title: string,
+  x: string,
+  y: string,
+  xRange: string,
+  yRange: string,
+  color: string,
+): Definition {
+  return {
+    type: 'scatter',
+    labelsAsText: false,
+    ...common(title, x, y),
+    ...dataOf(xRange, [[y, yRange, color]], true),
+  };
+}
+
 function lines(
   title: string,
   x: string,

@@ -8,6 +8,7 @@ import { drawsSheet } from './draws';
 import { inputsSheet } from './inputs';
 import { judgementSheet } from './judgement';
 import { type Look, styleOf } from './looks';
+import { plansSheet } from './plans';
 import { shapesSheet } from './shapes';
 
 /** The library's data format in which the sample is written; it upgrades older ones itself. */
@@ -23,6 +24,7 @@ export function sampleWorkbook(): object {
     judgementSheet(),
     inputsSheet(),
     answersSheet(),
+    plansSheet(),
   ].map((sheet) =>
     sheet.build(
       (look) => numberIn(looks, look),

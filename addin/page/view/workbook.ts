@@ -26,6 +26,8 @@ const HELP: Readonly<Record<string, string>> = {
   Judgement: 'What people know, made into shapes that can be drawn.',
   Inputs: "A dozen inputs from one formula, and the season's margin.",
   Answers: 'Exact shares, values and means from the shapes, without draws.',
+  Plans:
+    'Several quantities at once: every plan that keeps to the conditions, drawn evenly or weighted.',
 };
 
 export class WorkbookView extends Spreadsheet {
