@@ -52,9 +52,16 @@ async function opened(options: BrowserContextOptions = {}): Promise<Page> {
   return page;
 }
 
-/** Waits until the grid stands. */
+/** The cells of the sample that a Worker answers; copies that lack the sheet have none. */
+const LONG_CELLS = ['A28', 'D28', 'K6', 'N28'];
+
+/** Waits until the grid stands and no answer is under way. */
 async function shown(page: Page): Promise<void> {
   await page.waitForFunction(() => document.querySelector('.o-grid canvas') !== null);
+  await page.waitForFunction(
+    (cells) => cells.every((cell) => window.undercurveWorkbook.read('Plans', cell) !== '#WORKING!'),
+    LONG_CELLS,
+  );
   await settled(page);
 }
 
@@ -94,6 +101,7 @@ describe('the local workbook', () => {
       'Judgement',
       'Inputs',
       'Answers',
+      'Plans',
     ]);
     expect(await message(page)).toMatch(/^A1 Shapes: /);
   });
@@ -180,6 +188,32 @@ describe('the local workbook', () => {
     expect(await message(page)).toBe(
       'Address: "here" is not a cell here; give one such as B8 or Draws!B8.',
     );
+  });
+});
+
+describe('sheet Plans', () => {
+  test('fewer press hours leave the plans that need no more, drawn anew [law]', async () => {
+    const page = await opened();
+    const plans = async () => (await spill(page, 'Plans', 'A28')) as [number, number][];
+    const hoursOf = ([early, late]: [number, number]) => 2 * early + 3 * late;
+    const before = await plans();
+    expect(before).toHaveLength(300);
+    expect(before.some((plan) => hoursOf(plan) > 140)).toBe(true);
+    await type(page, 'Plans!I8', '140');
+    await shown(page);
+    const after = await plans();
+    expect(after).toHaveLength(300);
+    expect(after.every((plan) => hoursOf(plan) <= 140)).toBe(true);
+    expect(itemOf(await spill(page, 'Plans', 'K6'), 'given hours')).toBe(140);
+  });
+
+  test('conditions that no plan satisfies say so [law]', async () => {
+    const page = await opened();
+    await type(page, 'Plans!I8', '1');
+    await shown(page);
+    await page.getByLabel('Cell address').fill('Plans!A28');
+    await page.keyboard.press('Enter');
+    expect(await message(page)).toContain('no plan satisfies the conditions');
   });
 });
 

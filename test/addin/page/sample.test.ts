@@ -36,7 +36,19 @@ const SUGAR = cells('Judgement', 'H19', 'R20', 'AG19');
 const SEASON = cells('Judgement', 'K37', 'S20', 'AM19');
 const JUDGED_DRAWS = cells('Judgement', 'P20', 'Q20', 'R20', 'S20');
 const INPUTS = ['Inputs!L9'];
-const ALL = [APPLES, DOWNTIME, COLD, WAITING, PRICE, DELIVERIES, SUGAR, SEASON, INPUTS].flat();
+const PLANS = cells('Plans', 'A28', 'D28', 'K6', 'N28');
+const ALL = [
+  APPLES,
+  DOWNTIME,
+  COLD,
+  WAITING,
+  PRICE,
+  DELIVERIES,
+  SUGAR,
+  SEASON,
+  INPUTS,
+  PLANS,
+].flat();
 
 const column = (grid: Grid, sheet: string, address: string) =>
   grid.readSpill(sheet, address).map(([cell]) => Number(cell));
@@ -224,6 +236,30 @@ describe('the sample, from judgement to answers', () => {
     }
   });
 
+  test('sampleWorkbook() shows plans that keep to their conditions, and whole crates [law]', () => {
+    const of = (columns: string[], first: number, last: number) =>
+      block(grid, 'Plans', columns, first, last);
+    const drawing = [of(['D', 'E', 'F'], 6, 7), one(300), seed];
+    const [limits, rows, own] = drawing;
+    const givens = of(['H', 'I'], 6, 9);
+    const plans = grid.readSpill('Plans', 'A28');
+    expect(plans).toEqual(
+      call('DRAW', of(['A'], 6, 9), limits!, rows!, own!, one('plans'), givens),
+    );
+    expect(grid.readSpill('Plans', 'D28')).toEqual(
+      call('DRAW', of(['A'], 6, 10), limits!, rows!, own!, one('weighted plans'), givens),
+    );
+    plans.forEach(([early, late], i) => {
+      const store = Number(grid.read('Plans', `C${28 + i}`));
+      expect(Number(early) + Number(late) + store).toBeCloseTo(80, 9);
+      expect(store >= -1e-9 && store <= 35 + 1e-9).toBe(true);
+    });
+    for (const [red, green, yellow] of grid.readSpill('Plans', 'N28')) {
+      expect(Number(red) + Number(green) + Number(yellow)).toBe(24);
+      expect(Number(red)).toBeGreaterThanOrEqual(2 * Number(yellow));
+    }
+  });
+
   test('sampleWorkbook() lists the proposals behind the draws, the last of each row kept [law]', () => {
     const [head, ...lines] = grid.readSpill('Answers', 'A42');
     expect(head).toEqual(['row', 'attempt', 'value', 'height drawn', 'density there', 'kept']);
@@ -247,7 +283,15 @@ describe('an edit of the sample', () => {
       'Draws',
       'B3',
       'other',
-      [...APPLE_DRAWS, ...DOWNTIME, ...COLD_DRAWS, ...WAITING_DRAWS, ...JUDGED_DRAWS, ...INPUTS],
+      [
+        ...APPLE_DRAWS,
+        ...DOWNTIME,
+        ...COLD_DRAWS,
+        ...WAITING_DRAWS,
+        ...JUDGED_DRAWS,
+        ...INPUTS,
+        ...PLANS,
+      ],
     ],
     [
       'the rows',
