@@ -331,7 +331,8 @@ export class BoxProver {
       lower: 0,
       plane: { centre, slopes },
       sure: open === 0 ? elementary.exp(logLo - logHi - 2 * room) : 0,
-      upperMass: mulUp(upper * mean * (1 + ROOM), measure.hi),
+      // The room in `upper` covers the rounding here; more would favour this box over others.
+      upperMass: mulUp(upper * mean, measure.hi),
       lowerMass: mulDown(elementary.exp(meanLo - shift - room) * mean * (1 - ROOM), measure.lo),
     };
   }
