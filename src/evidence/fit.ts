@@ -16,6 +16,8 @@ import { andersonDarlingDistance, andersonDarlingPValue } from './andersondarlin
 import { cellsFor, chiSquareOf, chiSquarePValue, equalCells, pointCells } from './chisquare';
 import { criticalValue } from './critical';
 import { kolmogorovDistance, kolmogorovPValue } from './kolmogorov';
+import type { Meeting } from './lumps';
+import { meetingsIn, neighbourShares, spreadLumps } from './lumps';
 import type { Statistic } from './momentfit';
 import {
   allowedRange,
@@ -52,6 +54,8 @@ interface Seen {
   /** Exact shares below and above the sorted values. */
   readonly below: Float64Array;
   readonly above: Float64Array;
+  /** Where rows of a continuous shape meet. */
+  readonly meetings: readonly Meeting[];
 }
 
 type Lines = (seen: Seen) => readonly FitLine[];
@@ -83,7 +87,10 @@ export function fitter(
   return (values) => {
     const order = orderOf(values);
     const sorted = inOrder(values, order);
-    const seen = { values, sorted, order, ...distribution.sharesOfRising(sorted) };
+    const shares = distribution.sharesOfRising(sorted);
+    const meetings = lattice ? [] : meetingsIn(sorted, shares, distribution);
+    spreadLumps(shares, meetings);
+    const seen = { values, sorted, order, meetings, ...shares };
     return parts.flatMap((lines) => lines(seen));
   };
 }
@@ -101,8 +108,10 @@ function percentileLines(distribution: Distribution, n: number, level: number): 
   return ({ sorted }) => {
     const drawn = SHARES.map((share) => sampleQuantile(sorted, share));
     const { below, above } = distribution.sharesOfRising(Float64Array.from(drawn));
+    const around = distribution.lattice ? [] : neighbourShares(drawn, distribution);
     return frame.map(({ item, exact, from, to }, i) => {
-      const pValue = sharePValue(n, SHARES[i]!, below[i]!, 1 - above[i]!);
+      const lump = around[i]?.isLump ? around[i] : undefined;
+      const pValue = sharePValue(n, SHARES[i]!, lump?.lo ?? below[i]!, lump?.hi ?? 1 - above[i]!);
       return { item, exact, drawn: drawn[i]!, from, to, pValue };
     });
   };
@@ -209,8 +218,8 @@ function serialLine(n: number, level: number, hasTies: boolean): Lines {
 function repeatLine(distribution: Distribution, n: number, level: number): Lines {
   const repeats = repeatsIn(distribution, n);
   const to = repeats.allowed(level);
-  return ({ sorted }) => {
-    const count = repeats.count(sorted);
+  return ({ meetings }) => {
+    const count = repeats.count(meetings);
     return [atMost('rows that repeat an earlier one', 0, count, to, repeats.pValue(count))];
   };
 }

@@ -134,6 +134,11 @@ describe('check', () => {
     );
     expect(line(spill, 'rows that repeat')[1]).toBe(0);
     expect(line(spill, 'rows that repeat')[4]).toBe(1);
+    expect(overall(spill)).toMatch(/^no sign/);
+    const many = drawn(50_000, pole, limits);
+    expect(overall(check(many, pole, limits, []))).toMatch(/^no sign/);
+    const near = drawn(50_000, [['(1-x)^-0.88']], limits);
+    expect(overall(check(near, pole, limits, []))).toMatch(/^signs/);
   });
 
   it('says so where mean and deviation are not finite, or cannot be told [law]', () => {
