@@ -102,6 +102,8 @@ describe('the local workbook', () => {
       'Inputs',
       'Answers',
       'Plans',
+      'Season',
+      'Decision',
     ]);
     expect(await message(page)).toMatch(/^A1 Shapes: /);
   });
@@ -151,6 +153,32 @@ describe('the local workbook', () => {
       'Draws!B8',
     ]);
     expect(await page.locator('.recalculated').innerText()).toMatch(/^8 formulas recalculated/);
+  });
+
+  test('typing another number of presses redraws its column, and the decision follows [law]', async () => {
+    const page = await opened();
+    const before = {
+      taken: await spill(page, 'Season', 'O8'),
+      harvest: await spill(page, 'Season', 'L9'),
+      best: await spill(page, 'Decision', 'A14'),
+    };
+    expect(before.taken[0]).toEqual(['2 presses', '3 presses', '4 presses']);
+    await type(page, 'Season!D30', '5');
+    const after = await spill(page, 'Season', 'O8');
+    expect(after[0]).toEqual(['2 presses', '3 presses', '5 presses']);
+    for (const [j, moves] of [false, false, true].entries()) {
+      const rows = after.slice(1).filter((row, i) => row[j] !== before.taken[i + 1]?.[j]);
+      expect(rows).toHaveLength(moves ? 1000 : 0);
+    }
+    // The rows stay paired: a press more takes more in every scenario.
+    const [four, five] = [before.taken, after].map((table) => table.map((row) => Number(row[2])));
+    expect(four?.slice(1).filter((x, i) => !(x < (five?.[i + 1] ?? 0)))).toEqual([]);
+    expect(await spill(page, 'Season', 'L9')).toEqual(before.harvest);
+    const best = await spill(page, 'Decision', 'A14');
+    expect(best[0]).toEqual(['case', '2 presses', '3 presses', '5 presses']);
+    const means = [before.best, best].map((table) => itemOf(table, 'mean'));
+    expect(means[1]).toBe(means[0]);
+    expect(best[2]?.[3]).not.toBe(before.best[2]?.[3]);
   });
 
   test('typing another seed and number of rows redraws both columns with it [law]', async () => {

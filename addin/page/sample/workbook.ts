@@ -4,11 +4,13 @@
  */
 import { acceptanceSheet } from './acceptance';
 import { answersSheet } from './answers';
+import { decisionSheet } from './decision';
 import { drawsSheet } from './draws';
 import { inputsSheet } from './inputs';
 import { judgementSheet } from './judgement';
 import { type Look, styleOf } from './looks';
 import { plansSheet } from './plans';
+import { seasonSheet } from './season';
 import { shapesSheet } from './shapes';
 
 /** The library's data format in which the sample is written; it upgrades older ones itself. */
@@ -25,6 +27,8 @@ export function sampleWorkbook(): object {
     inputsSheet(),
     answersSheet(),
     plansSheet(),
+    seasonSheet(),
+    decisionSheet(),
   ].map((sheet) =>
     sheet.build(
       (look) => numberIn(looks, look),

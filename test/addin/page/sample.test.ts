@@ -37,18 +37,23 @@ const SEASON = cells('Judgement', 'K37', 'S20', 'AM19');
 const JUDGED_DRAWS = cells('Judgement', 'P20', 'Q20', 'R20', 'S20');
 const INPUTS = ['Inputs!L9'];
 const PLANS = cells('Plans', 'A28', 'D28', 'K6', 'N28');
+const MARGINS = ['Decision!A14'];
+const OVERFLOWS = ['Decision!A28'];
+const HARVEST_CHECK = ['Decision!F15'];
+const LINKED_PRICE = ['Season!M9', ...MARGINS];
+const COLD_DAYS = ['Season!N9', ...MARGINS];
+const PRESSES = ['Season!O8', ...MARGINS, ...OVERFLOWS];
+const EVENT_SIZE = ['Season!S8', ...MARGINS, ...OVERFLOWS];
+const EVENTS = ['Season!R9', ...EVENT_SIZE];
+const LINKS = [
+  ...cells('Season', 'J9', 'L9', 'M9', 'N9'),
+  ...[MARGINS, OVERFLOWS, HARVEST_CHECK].flat(),
+];
+const SCENARIOS = [...new Set([...LINKS, ...PRESSES, ...EVENTS])];
 const ALL = [
-  APPLES,
-  DOWNTIME,
-  COLD,
-  WAITING,
-  PRICE,
-  DELIVERIES,
-  SUGAR,
-  SEASON,
-  INPUTS,
-  PLANS,
-].flat();
+  ...[APPLES, DOWNTIME, COLD, WAITING, PRICE, DELIVERIES, SUGAR, SEASON, INPUTS, PLANS].flat(),
+  ...SCENARIOS,
+];
 
 const column = (grid: Grid, sheet: string, address: string) =>
   grid.readSpill(sheet, address).map(([cell]) => Number(cell));
@@ -270,6 +275,87 @@ describe('the sample, from judgement to answers', () => {
   });
 });
 
+describe('the sample, from links to a decision', () => {
+  const grid = sample();
+  const seed = one('plan-2027');
+  const of = (columns: string[], first: number, last: number) =>
+    block(grid, 'Season', columns, first, last);
+  const N = 1000;
+
+  test('sampleWorkbook() links harvest and price where they are born [law]', () => {
+    const shares = call('LINKEDSHARES', of(['A', 'B', 'C'], 9, 11), one(N), seed, one('link'));
+    expect(grid.readSpill('Season', 'J9')).toEqual(shares);
+    for (const [address, columns, j] of [
+      ['L9', ['A', 'B'], 0],
+      ['M9', ['D', 'E'], 1],
+    ] as const) {
+      const own = shares.map((row) => [row[j]!]);
+      expect(grid.readSpill('Season', address)).toEqual(
+        call('QUANTILE', of([...columns], 14, 18), null, own),
+      );
+    }
+    // Six standard errors of about (1 - 0.36) / √1000.
+    const reached = call('RANKS', block(grid, 'Season', ['L', 'M'], 9, 8 + N));
+    expect(Math.abs(Number(reached[1]?.[2]) + 0.6)).toBeLessThan(0.13);
+  });
+
+  test('sampleWorkbook() draws the days in the cold store given the harvest of the row [law]', () => {
+    const steps = column(grid, 'Season', 'L9').map((x) => [20 * Math.round(x / 20)]);
+    const lines = [['harvest'], ...steps];
+    expect(grid.readSpill('Season', 'N9')).toEqual(
+      call('EACH', of(['A', 'B'], 22, 25), null, seed, one('days'), lines),
+    );
+  });
+
+  test('sampleWorkbook() sums what events of spoilage take [law]', () => {
+    const counts = call('DRAW', of(['A', 'B'], 41, 45), null, one(N), seed, one('events'));
+    expect(grid.readSpill('Season', 'R9')).toEqual(counts);
+    expect(grid.readSpill('Season', 'S8')).toEqual(
+      call('TOTAL', counts, of(['D', 'E'], 41, 44), null, null, seed, one('spoilt')),
+    );
+  });
+
+  test('sampleWorkbook() computes bottles and margin of each number of presses row by row [law]', () => {
+    const rows = Array.from({ length: N }, (_, i) => (address: string) => {
+      const [sheet, letter] = address.split('!');
+      return Number(grid.read(sheet!, `${letter}${9 + i}`));
+    });
+    for (const at of rows) {
+      const delivered = Math.max(0, at('Season!L') - at('Season!S'));
+      for (const [presses, taken, bottled, margin] of [
+        [2, 'O', 'P', 'V'],
+        [3, 'P', 'Q', 'W'],
+        [4, 'Q', 'R', 'X'],
+      ] as const) {
+        const bottles = 0.87 * Math.min(delivered, at(`Season!${taken}`));
+        expect(at(`Decision!${bottled}`)).toBeCloseTo(bottles, 8);
+        const costs = 0.15 * Math.max(0, bottles - 760) + 28 * presses + 0.4 * at('Season!N');
+        expect(at(`Decision!${margin}`)).toBeCloseTo(bottles * (at('Season!M') - 0.32) - costs, 8);
+      }
+    }
+  });
+
+  test('sampleWorkbook() tells the chance of too many bottles and the case to choose [law]', () => {
+    const names = ['2 presses', '3 presses', '4 presses'];
+    const columns = (letters: string[]): Range => [
+      names,
+      ...block(grid, 'Decision', letters, 9, 8 + N),
+    ];
+    expect(grid.readSpill('Decision', 'A28')).toEqual(
+      call('EXCEEDANCE', columns(['P', 'Q', 'R']), one(760)),
+    );
+    const best = call('BESTOF', columns(['V', 'W', 'X']), [[true]]);
+    const shown = grid.readSpill('Decision', 'A14');
+    expect(shown).toEqual(best[0]!.map((_, j) => best.map((row) => row[j])));
+    // Two presses leave apples behind, four cost more than they bring.
+    expect(shown.find(([item]) => item === 'place')).toEqual(['place', 3, 1, 2]);
+  });
+
+  test('sampleWorkbook() finds no sign against the linked harvest [law]', () => {
+    expect(grid.read('Decision', 'F14')).toMatch(/^no sign against the shape/);
+  });
+});
+
 describe('an edit of the sample', () => {
   const shared = sample();
   test.each([
@@ -284,13 +370,8 @@ describe('an edit of the sample', () => {
       'B3',
       'other',
       [
-        ...APPLE_DRAWS,
-        ...DOWNTIME,
-        ...COLD_DRAWS,
-        ...WAITING_DRAWS,
-        ...JUDGED_DRAWS,
-        ...INPUTS,
-        ...PLANS,
+        ...[APPLE_DRAWS, DOWNTIME, COLD_DRAWS, WAITING_DRAWS, JUDGED_DRAWS, INPUTS, PLANS].flat(),
+        ...SCENARIOS,
       ],
     ],
     [
@@ -310,6 +391,14 @@ describe('an edit of the sample', () => {
     ['a threshold', 'Answers', 'E23', '90', ['Answers!E24', 'Answers!E25']],
     ['what a wait costs', 'Answers', 'B35', 'x', ['Answers!B36']],
     ['a line of the inputs', 'Inputs', 'E9', '950', INPUTS],
+    ['a link', 'Season', 'C10', '-0.3', LINKS],
+    ['the shape of the price', 'Season', 'E17', '0.7', LINKED_PRICE],
+    ['the days in the cold store', 'Season', 'B25', '30', COLD_DAYS],
+    ['a number of presses', 'Season', 'D30', '5', PRESSES],
+    ['how often something spoils', 'Season', 'B45', '3', EVENTS],
+    ['how much spoils', 'Season', 'E44', '8', EVENT_SIZE],
+    ['the rows of the season', 'Season', 'B5', '500', SCENARIOS],
+    ['what the store holds', 'Decision', 'B7', '650', [...MARGINS, ...OVERFLOWS]],
     ['an unused cell', 'Shapes', 'J30', '1', []],
     ['the edge of a bin', 'Acceptance', 'AE30', '25', []],
   ])('editing %s recalculates what depends on it and nothing else [law]', (...edit) => {

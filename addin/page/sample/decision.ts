@@ -1,0 +1,144 @@
+/**
+ * Sheet "Decision": how many presses? The scenarios of sheet Season become bottles, an
+ * overflow of the store and a margin by worksheet formulas, one column for each number of
+ * presses; then the chance of an overflow, the case to choose and a check of the draws.
+ * All figures invented.
+ */
+import { barsChart } from './charts';
+import { BLUE } from './looks';
+import { SEASON } from './season';
+import { SheetPlan } from './sheet';
+
+const { firstRow: FIRST, mostRows: MOST_ROWS } = SEASON;
+const HEAD = FIRST - 1;
+const LAST_ROW = HEAD + MOST_ROWS;
+
+const INPUTS: readonly (readonly [string, number, string])[] = [
+  ['yield', 0.87, '1,000 bottles a tonne'],
+  ['store', 760, '1,000 bottles that it holds'],
+  ['elsewhere', 0.15, 'euros a bottle beyond that'],
+  ['cost', 0.32, 'euros a bottle'],
+  ['press', 28, '1,000 euros each'],
+  ['cold store', 0.4, '1,000 euros a day'],
+];
+const INPUTS_ROW = 6;
+const cellOf = (name: string): string =>
+  `$B$${INPUTS_ROW + INPUTS.findIndex(([own]) => own === name)}`;
+
+/** Columns of scenarios: three cases each. */
+const BOTTLES = ['P', 'Q', 'R'];
+const OVERFLOW = ['S', 'T', 'U'];
+const MARGIN = ['V', 'W', 'X'];
+const spillOf = (column: string | undefined): string => `${column}${FIRST}#`;
+const table = (columns: readonly string[]): string =>
+  `VSTACK(${SEASON.cases},HSTACK(${columns.map(spillOf).join(',')}))`;
+
+/** First rows of the answers; their section titles stand above. */
+const BEST_ROW = 14;
+const CHANCES_ROW = 28;
+const CHECK_ROW = 15;
+
+export function decisionSheet(): SheetPlan {
+  const sheet = new SheetPlan('Decision', { columns: 24, rows: LAST_ROW, frozenRows: 0 })
+    .columnWidths([230, 90, 90, 90, 24, 250, 90, 90, 90, 90, 90, 24, 24, 24])
+    .put('A1', 'Decision: how many presses?', 'title')
+    .put(
+      'A2',
+      'Scenarios come from sheet Season. Change a number of presses there, or a yellow cell here.',
+      'note',
+    )
+    .put(
+      'A3',
+      'The draws follow the stated shapes; they do not make the shapes right. No substitute for professional judgement.',
+      'caution',
+    )
+    .put('A5', 'What a season brings and costs', 'section')
+    .putRows('A', INPUTS_ROW, INPUTS)
+    .look(`A${INPUTS_ROW}:A${INPUTS_ROW + 5}`, 'word')
+    .look(`B${INPUTS_ROW}:B${INPUTS_ROW + 5}`, 'input')
+    .look(`C${INPUTS_ROW}:C${INPUTS_ROW + 5}`, 'unit');
+  scenarios(sheet);
+  answers(sheet);
+  return sheet;
+}
+
+function scenarios(sheet: SheetPlan): void {
+  sheet
+    .put('O5', 'The season under each number of presses, a scenario a row', 'section')
+    .put(`O${HEAD - 1}`, 'tonnes', 'unit')
+    .put(`O${HEAD}`, 'delivered')
+    .look(`O${HEAD}:X${HEAD}`, 'head')
+    .put(
+      `O${FIRST}`,
+      `=IF(${SEASON.harvest}>${SEASON.spoilt},${SEASON.harvest}-${SEASON.spoilt},0)`,
+    )
+    .format(`O${FIRST}:X${LAST_ROW}`, '0.0');
+  const heads = [
+    ['P', 'bottles, thousands'],
+    ['S', 'overflow, thousands'],
+    ['V', 'margin, 1,000 euros'],
+  ] as const;
+  for (const [column, text] of heads) sheet.put(`${column}${HEAD - 1}`, text, 'unit');
+  for (const columns of [BOTTLES, OVERFLOW, MARGIN])
+    sheet.put(`${columns[0]}${HEAD}`, `=${SEASON.cases}`);
+  SEASON.presses.forEach((presses, k) => {
+    const [bottles, overflow] = [spillOf(BOTTLES[k]), spillOf(OVERFLOW[k])];
+    const [delivered, taken] = [`O${FIRST}#`, SEASON.taken(k + 1)];
+    sheet
+      .put(
+        `${BOTTLES[k]}${FIRST}`,
+        `=${cellOf('yield')}*IF(${delivered}<${taken},${delivered},${taken})`,
+      )
+      .put(
+        `${OVERFLOW[k]}${FIRST}`,
+        `=IF(${bottles}>${cellOf('store')},${bottles}-${cellOf('store')},0)`,
+      )
+      .put(
+        `${MARGIN[k]}${FIRST}`,
+        `=${bottles}*(${SEASON.price}-${cellOf('cost')})-${overflow}*${cellOf('elsewhere')}-${presses}*${cellOf('press')}-${SEASON.days}*${cellOf('cold store')}`,
+      );
+  });
+}
+
+function answers(sheet: SheetPlan): void {
+  const best = (first: number, last = first): string => `B${BEST_ROW + first}:D${BEST_ROW + last}`;
+  sheet
+    .put(`A${BEST_ROW - 1}`, 'Which case to choose: the margin, 1,000 euros', 'section')
+    .put(`A${BEST_ROW}`, `=TRANSPOSE(UNDERCURVE.BESTOF(${table(MARGIN)},TRUE))`)
+    .look(`A${BEST_ROW}:D${BEST_ROW}`, 'head')
+    .look(`A${BEST_ROW + 1}:A${BEST_ROW + 11}`, 'word')
+    .look(best(1, 11), 'result')
+    .format(best(2, 4), '0.0')
+    .format(best(5, 7), '0.0%')
+    .format(best(8, 10), '0.0')
+    .put(`A${CHANCES_ROW - 1}`, 'The chance of more bottles than the store holds', 'section')
+    .put(`A${CHANCES_ROW}`, `=UNDERCURVE.EXCEEDANCE(${table(BOTTLES)},${cellOf('store')})`)
+    .look(`A${CHANCES_ROW}:D${CHANCES_ROW}`, 'head')
+    .look(`A${CHANCES_ROW + 1}:A${CHANCES_ROW + 14}`, 'word')
+    .look(`B${CHANCES_ROW + 1}:D${CHANCES_ROW + 14}`, 'result')
+    .format(`B${CHANCES_ROW + 4}:D${CHANCES_ROW + 12}`, '0.0%')
+    .put(`F${CHECK_ROW - 2}`, 'Check: the linked harvest against its shape', 'section')
+    .put(`F${CHECK_ROW - 1}`, `=INDEX(F${CHECK_ROW}#,2,2)`, 'verdict')
+    .put(`F${CHECK_ROW}`, `=UNDERCURVE.CHECK(${SEASON.harvest},${SEASON.harvestShape})`)
+    .look(`F${CHECK_ROW}:K${CHECK_ROW}`, 'head')
+    .look(`F${CHECK_ROW + 1}:F${CHECK_ROW + 30}`, 'word')
+    .look(`G${CHECK_ROW + 1}:K${CHECK_ROW + 30}`, 'result')
+    .format(`G${CHECK_ROW + 4}:J${CHECK_ROW + 30}`, '0.00')
+    .format(`K${CHECK_ROW + 2}:K${CHECK_ROW + 30}`, '0.000')
+    .chart({
+      id: 'margin-by-presses',
+      col: 5,
+      row: 3,
+      shift: 0,
+      width: 480,
+      height: 190,
+      data: barsChart({
+        title: 'Mean margin by the number of presses',
+        x: 'case',
+        y: '1,000 euros',
+        labels: `B${BEST_ROW}:D${BEST_ROW}`,
+        values: best(2),
+        color: BLUE,
+      }),
+    });
+}
