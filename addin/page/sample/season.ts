@@ -51,7 +51,7 @@ export function seasonSheet(): SheetPlan {
       'caution',
     )
     .putRows('A', 5, [
-      ['rows', 1000],
+      ['rows', 500],
       ['seed', `=${SEED}`],
     ])
     .look('A5:A6', 'word')

@@ -11,6 +11,11 @@ import { type Grid, gridOf } from './grid';
 
 const log = prepareLibrary();
 const sample = (): Grid => gridOf(sampleWorkbook(), log);
+/** Shapes, Draws and Acceptance, which need none of the other sheets: soon made afresh. */
+const firstSheets = (): Grid => {
+  const whole = sampleWorkbook() as { readonly sheets: readonly object[] };
+  return gridOf({ ...whole, sheets: whole.sheets.slice(0, 3) }, log);
+};
 
 /** The cells that call our functions, by what they depend on. */
 const cells = (sheet: string, ...addresses: string[]) =>
@@ -275,87 +280,6 @@ describe('the sample, from judgement to answers', () => {
   });
 });
 
-describe('the sample, from links to a decision', () => {
-  const grid = sample();
-  const seed = one('plan-2027');
-  const of = (columns: string[], first: number, last: number) =>
-    block(grid, 'Season', columns, first, last);
-  const N = 1000;
-
-  test('sampleWorkbook() links harvest and price where they are born [law]', () => {
-    const shares = call('LINKEDSHARES', of(['A', 'B', 'C'], 9, 11), one(N), seed, one('link'));
-    expect(grid.readSpill('Season', 'J9')).toEqual(shares);
-    for (const [address, columns, j] of [
-      ['L9', ['A', 'B'], 0],
-      ['M9', ['D', 'E'], 1],
-    ] as const) {
-      const own = shares.map((row) => [row[j]!]);
-      expect(grid.readSpill('Season', address)).toEqual(
-        call('QUANTILE', of([...columns], 14, 18), null, own),
-      );
-    }
-    // Six standard errors of about (1 - 0.36) / √1000.
-    const reached = call('RANKS', block(grid, 'Season', ['L', 'M'], 9, 8 + N));
-    expect(Math.abs(Number(reached[1]?.[2]) + 0.6)).toBeLessThan(0.13);
-  });
-
-  test('sampleWorkbook() draws the days in the cold store given the harvest of the row [law]', () => {
-    const steps = column(grid, 'Season', 'L9').map((x) => [20 * Math.round(x / 20)]);
-    const lines = [['harvest'], ...steps];
-    expect(grid.readSpill('Season', 'N9')).toEqual(
-      call('EACH', of(['A', 'B'], 22, 25), null, seed, one('days'), lines),
-    );
-  });
-
-  test('sampleWorkbook() sums what events of spoilage take [law]', () => {
-    const counts = call('DRAW', of(['A', 'B'], 41, 45), null, one(N), seed, one('events'));
-    expect(grid.readSpill('Season', 'R9')).toEqual(counts);
-    expect(grid.readSpill('Season', 'S8')).toEqual(
-      call('TOTAL', counts, of(['D', 'E'], 41, 44), null, null, seed, one('spoilt')),
-    );
-  });
-
-  test('sampleWorkbook() computes bottles and margin of each number of presses row by row [law]', () => {
-    const rows = Array.from({ length: N }, (_, i) => (address: string) => {
-      const [sheet, letter] = address.split('!');
-      return Number(grid.read(sheet!, `${letter}${9 + i}`));
-    });
-    for (const at of rows) {
-      const delivered = Math.max(0, at('Season!L') - at('Season!S'));
-      for (const [presses, taken, bottled, margin] of [
-        [2, 'O', 'P', 'V'],
-        [3, 'P', 'Q', 'W'],
-        [4, 'Q', 'R', 'X'],
-      ] as const) {
-        const bottles = 0.87 * Math.min(delivered, at(`Season!${taken}`));
-        expect(at(`Decision!${bottled}`)).toBeCloseTo(bottles, 8);
-        const costs = 0.15 * Math.max(0, bottles - 760) + 28 * presses + 0.4 * at('Season!N');
-        expect(at(`Decision!${margin}`)).toBeCloseTo(bottles * (at('Season!M') - 0.32) - costs, 8);
-      }
-    }
-  });
-
-  test('sampleWorkbook() tells the chance of too many bottles and the case to choose [law]', () => {
-    const names = ['2 presses', '3 presses', '4 presses'];
-    const columns = (letters: string[]): Range => [
-      names,
-      ...block(grid, 'Decision', letters, 9, 8 + N),
-    ];
-    expect(grid.readSpill('Decision', 'A28')).toEqual(
-      call('EXCEEDANCE', columns(['P', 'Q', 'R']), one(760)),
-    );
-    const best = call('BESTOF', columns(['V', 'W', 'X']), [[true]]);
-    const shown = grid.readSpill('Decision', 'A14');
-    expect(shown).toEqual(best[0]!.map((_, j) => best.map((row) => row[j])));
-    // Two presses leave apples behind, four cost more than they bring.
-    expect(shown.find(([item]) => item === 'place')).toEqual(['place', 3, 1, 2]);
-  });
-
-  test('sampleWorkbook() finds no sign against the linked harvest [law]', () => {
-    expect(grid.read('Decision', 'F14')).toMatch(/^no sign against the shape/);
-  });
-});
-
 describe('an edit of the sample', () => {
   const shared = sample();
   test.each([
@@ -397,7 +321,7 @@ describe('an edit of the sample', () => {
     ['a number of presses', 'Season', 'D30', '5', PRESSES],
     ['how often something spoils', 'Season', 'B45', '3', EVENTS],
     ['how much spoils', 'Season', 'E44', '8', EVENT_SIZE],
-    ['the rows of the season', 'Season', 'B5', '500', SCENARIOS],
+    ['the rows of the season', 'Season', 'B5', '300', SCENARIOS],
     ['what the store holds', 'Decision', 'B7', '650', [...MARGINS, ...OVERFLOWS]],
     ['an unused cell', 'Shapes', 'J30', '1', []],
     ['the edge of a bin', 'Acceptance', 'AE30', '25', []],
@@ -411,7 +335,7 @@ describe('an edit of the sample', () => {
   });
 
   test('editing a point changes its draws and evidence and leaves the other column [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     const before = {
       apples: column(grid, 'Draws', 'B8'),
       downtime: column(grid, 'Draws', 'C8'),
@@ -426,7 +350,7 @@ describe('an edit of the sample', () => {
   });
 
   test('editing the number of rows keeps the rows that stay [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     const before = column(grid, 'Draws', 'B8');
     grid.write('Draws', 'B4', '3000');
     expect(column(grid, 'Draws', 'B8').slice(0, 2000)).toEqual(before);
@@ -438,7 +362,7 @@ describe('an edit of the sample', () => {
   });
 
   test('editing the seed and back gives the same draws again [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     const before = column(grid, 'Draws', 'B8');
     grid.write('Draws', 'B3', 'other');
     expect(column(grid, 'Draws', 'B8')).not.toEqual(before);
@@ -447,7 +371,7 @@ describe('an edit of the sample', () => {
   });
 
   test('undoing an edit brings the draws back [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     const before = column(grid, 'Draws', 'B8');
     grid.write('Shapes', 'B17', '3');
     grid.model.dispatch('REQUEST_UNDO');
@@ -457,7 +381,7 @@ describe('an edit of the sample', () => {
 
 describe('a mistake in the sample', () => {
   test('a formula with an open bracket shows the whole message where it is used [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     grid.write('Shapes', 'E8', 'EXP(-0.5*((x-m)/s)^2');
     const message = '#VALUE! Formula, character 4: "(" is never closed; add ")".';
     expect(grid.read('Draws', 'C8')).toBe('#VALUE!');
@@ -474,7 +398,7 @@ describe('a mistake in the sample', () => {
   });
 
   test('an error cell in the block comes back as that error, its origin named [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     grid.write('Shapes', 'E14', '=1/0');
     expect(grid.message('Draws', 'C8')).toBe(
       '#DIV/0! The divisor must be different from zero. (from Shapes!E14)',
@@ -482,7 +406,7 @@ describe('a mistake in the sample', () => {
   });
 
   test('more rows than the sheet has say so instead of a part of the draws [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     grid.write('Draws', 'B4', '10001');
     expect(grid.message('Draws', 'B8')).toBe(
       '#SPILL! Result: it does not fit below or beside this cell; ask for fewer rows, or add rows to the sheet.',
@@ -490,7 +414,7 @@ describe('a mistake in the sample', () => {
   });
 
   test('a value in the way of the draws says so [law]', () => {
-    const grid = sample();
+    const grid = firstSheets();
     grid.write('Draws', 'B20', '1');
     expect(grid.message('Draws', 'B8')).toContain('a cell in its way is not empty');
   });
