@@ -17,7 +17,7 @@ export class Binomial {
 
   /**
    * Domain: n ≥ 1, whole; 0 < p < 1.
-   * Guarantee: sums of chances within 1e-12 (largest measured 4e-14, n up to 10^6).
+   * Guarantee: sums of chances within 1e-12 (largest measured 2e-15, against 50 digits, n up to 10^5).
    */
   constructor(
     readonly n: number,

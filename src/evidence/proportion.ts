@@ -46,7 +46,7 @@ function wilsonLower(k: number, n: number, z: number): number {
  * The exact interval of the chance behind `successes` in `trials`.
  * Domain: as wilson; both may be fractions, as effective numbers of weighted rows are.
  * Guarantee: each end is missed with a chance of at most (1 − confidence) / 2; ends within 1e-14
- * of themselves (largest measured 6e-16, against 40 digits, for up to 10^6 trials).
+ * of themselves (largest measured 6e-16, for up to 10^6 trials).
  * Source: Clopper & Pearson (1934); Newcombe (1998), method 5.
  */
 export function clopperPearson(successes: number, trials: number, confidence: number): Interval {

@@ -39,20 +39,19 @@ export function rowsOf(values: Float64Array): Rows {
 export function sampleOf(column: Float64Array, shares: Shares | null): Sample {
   if (shares === null) return { ...rowsOf(column.slice().sort()), sums: null };
   const order = orderOf(column);
+  const nRows = order.length;
+  const [values, own] = [new Float64Array(nRows), new Float64Array(nRows)];
   let n = 0;
-  for (const i of order) if (shares[i]! > 0) order[n++] = i;
-  const [values, own] = [new Float64Array(n), new Float64Array(n)];
-  for (let k = 0; k < n; k++) {
-    values[k] = column[order[k]!]!;
-    own[k] = shares[order[k]!]!;
+  for (let k = 0; k < nRows; k++) {
+    const i = order[k]!;
+    const share = shares[i]!;
+    if (share === 0) continue;
+    values[n] = column[i]!;
+    own[n++] = share;
   }
-  shareOutTies(values, own);
-  return {
-    values,
-    shares: own,
-    rowsWorth: rowsWorth(own, n),
-    sums: { shares: runningSum(own, (share) => share), pulls: runningSum(own, squaredPull) },
-  };
+  const left = { values: values.subarray(0, n), shares: own.subarray(0, n) };
+  shareOutTies(left.values, left.shares);
+  return { ...left, rowsWorth: rowsWorth(left.shares, n), sums: sumsOf(left.shares) };
 }
 
 /** The squared pulls of the first `count` rows. */
@@ -61,20 +60,27 @@ export function pullsUpTo({ values, sums }: Sample, count: number): number {
   return sums === null ? count * squaredPull(1 / n) : count === 0 ? 0 : sums.pulls[count - 1]!;
 }
 
-function runningSum(shares: Shares, of: (share: number) => number): Float64Array {
-  const sums = new Float64Array(shares.length);
-  let sum = 0;
-  for (let i = 0; i < shares.length; i++) sums[i] = sum += of(shares[i]!);
-  return sums;
+function sumsOf(shares: Shares): Sums {
+  const n = shares.length;
+  const [upTo, pulls] = [new Float64Array(n), new Float64Array(n)];
+  let [share, pulled] = [0, 0];
+  for (let i = 0; i < n; i++) {
+    upTo[i] = share += shares[i]!;
+    pulls[i] = pulled += squaredPull(shares[i]!);
+  }
+  return { shares: upTo, pulls };
 }
 
 /** Gives equal values the average of their shares, so that their order does not matter. */
 function shareOutTies(values: Float64Array, shares: Shares): void {
   const n = values.length;
-  for (let first = 0, end = 0; first < n; first = end) {
+  for (let first = 0; first + 1 < n; first++) {
+    if (values[first + 1] !== values[first]) continue;
+    let end = first;
     let sum = 0;
     for (; end < n && values[end] === values[first]; end++) sum += shares[end]!;
     for (let i = first; i < end; i++) shares[i] = sum / (end - first);
+    first = end - 1;
   }
 }
 

@@ -43,7 +43,8 @@ export function pull(share: number): number {
 }
 
 export function squaredPull(share: number): number {
-  return pull(share) * pull(share);
+  const moved = pull(share);
+  return moved * moved;
 }
 
 /** How many rows of equal weight would tell as much: (sum of weights)² over sum of squares. */
