@@ -11,7 +11,7 @@ const LABEL = [['downtime']];
 const PLACES = { density: 'density', limits: 'limits', givens: 3 };
 const HOURS = [['EXP(-0.5*((x-m)/1.3)^2)*(1+SIN(3*x)^2)']];
 const LIMITS = [[0, 12]];
-const N = 5000;
+const N = 3000;
 
 /** The least p-value of all comparisons of CHECK, times their number. */
 function leastChance(values: readonly number[], density: Range, m: number): number {
@@ -26,10 +26,10 @@ describe('columns that follow their shape by all comparisons of CHECK', () => {
   it('CASES: every case its own, not that of its neighbour [law]', () => {
     const table: Range = [
       ['presses', 'two', 'three'],
-      ['m', 5, 4.6],
+      ['m', 5, 4.4],
     ];
     const [, ...rows] = cases(HOURS, LIMITS, [[N]], SEED, LABEL, table, []);
-    [5, 4.6].forEach((m, j) => {
+    [5, 4.4].forEach((m, j) => {
       expect(leastChance(numbers(rows, j), HOURS, m)).toBeGreaterThan(FALSE_ALARM);
       expect(leastChance(numbers(rows, 1 - j), HOURS, m)).toBeLessThan(FALSE_ALARM);
     });
@@ -47,11 +47,11 @@ describe('columns that follow their shape by all comparisons of CHECK', () => {
 
   it('STRATIFIED: one row over many seeds, unlike all rows of one seed [law]', () => {
     const givens = [[['m', 4]]];
+    const spills = Array.from({ length: 1500 }, (_, s) =>
+      stratified(HOURS, LIMITS, [[5]], [[`seed ${s}`]], LABEL, givens),
+    );
     for (const row of [0, 4]) {
-      const values = Array.from({ length: 2000 }, (_, s) => {
-        const spill = stratified(HOURS, LIMITS, [[5]], [[`seed ${s}`]], LABEL, givens);
-        return spill[row]![0] as number;
-      });
+      const values = spills.map((spill) => spill[row]![0] as number);
       expect(leastChance(values, HOURS, 4)).toBeGreaterThan(FALSE_ALARM);
       expect(leastChance(values, HOURS, 4.4)).toBeLessThan(FALSE_ALARM);
     }
@@ -66,7 +66,7 @@ describe('columns that follow their shape by all comparisons of CHECK', () => {
     const linked = quantile(HOURS, LIMITS, shares, null, [[['m', 4]]]);
     for (const column of [0, 1]) {
       expect(leastChance(numbers(linked, column), HOURS, 4)).toBeGreaterThan(FALSE_ALARM);
-      expect(leastChance(numbers(linked, column), HOURS, 4.2)).toBeLessThan(FALSE_ALARM);
+      expect(leastChance(numbers(linked, column), HOURS, 4.4)).toBeLessThan(FALSE_ALARM);
     }
   });
 
