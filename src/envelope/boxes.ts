@@ -109,6 +109,8 @@ export class BoxProver {
   private readonly urgent = new FlatQueue<Part>();
   private readonly byGap = new FlatQueue<Part>();
   private readonly parts = new Set<Part>();
+  /** Urgent parts as small as doubles allow. */
+  private readonly stuck: Part[] = [];
   private readonly notes: string[] = [];
   private readonly exponent: number;
   private readonly maxBoxes: number;
@@ -152,7 +154,10 @@ export class BoxProver {
     }
     if (!this.parts.has(part)) return;
     const axis = this.axisOf(part);
-    if (axis < 0) return;
+    if (axis < 0) {
+      if (isUrgent(part)) this.stuck.push(part);
+      return;
+    }
     this.remove(part);
     for (const half of this.space.halves(part.box, axis)) this.add(half, part.box.open);
     if (this.upperMass < this.largestMass / 1000) this.sumAfresh();
@@ -160,11 +165,12 @@ export class BoxProver {
 
   /** @throws {InputError} when the density is negative, zero everywhere, undefined or unbounded somewhere, or accepted too rarely. */
   result(): BoxEnvelope {
+    this.leaveOutStuck();
     const left = this.urgent.pop();
     if (left) this.refuseUrgent(left);
     this.settleSigns();
     this.sumAfresh();
-    const parts = [...this.parts];
+    const parts = [...this.parts].filter(({ box }) => box.upperMass > 0);
     if (parts.length === 0 || this.upperMass === 0) throw refusal.emptyRegion(this.joint.axes);
     const promised = this.lowerMass / this.upperMass;
     const boxes = parts.map(({ box }) => box).sort(byPlace);
@@ -184,6 +190,16 @@ export class BoxProver {
     return { lower: this.lowerMass, upper: this.upperMass };
   }
 
+  /** Drops what is undefined in part and holds next to nothing. @throws {InputError} where it may hold more. */
+  private leaveOutStuck(): void {
+    let mass = 0;
+    for (const part of this.stuck) {
+      mass = addUp(mass, part.box.upperMass);
+      if (!(mass <= NEGLIGIBLE * this.lowerMass)) this.refuseUrgent(part);
+      this.parts.delete(part);
+    }
+  }
+
   private tooRare(boxes: readonly ProvedBox[], promised: number): InputError {
     const equation = this.joint.conditions.find(
       ({ sides }, j) => sides !== null && boxes.every(({ open }) => open & (1 << j)),
@@ -199,7 +215,7 @@ export class BoxProver {
     this.parts.add(part);
     const { upperMass, lowerMass } = part.box;
     const { hi: measure } = this.space.measure(box);
-    if (part.defined !== Defined.Everywhere || upperMass === Infinity) {
+    if (isUrgent(part)) {
       this.urgent.push(part, -measure);
       return;
     }
@@ -211,15 +227,16 @@ export class BoxProver {
 
   private remove(part: Part): void {
     this.parts.delete(part);
-    if (part.defined !== Defined.Everywhere || part.box.upperMass === Infinity) return;
+    if (isUrgent(part)) return;
     this.upperMass -= part.box.upperMass;
     this.lowerMass -= part.box.lowerMass;
   }
 
   private sumAfresh(): void {
     [this.upperMass, this.lowerMass] = [0, 0];
-    for (const { box, defined } of this.parts) {
-      if (defined !== Defined.Everywhere || box.upperMass === Infinity) continue;
+    for (const part of this.parts) {
+      if (isUrgent(part)) continue;
+      const { box } = part;
       this.upperMass = addUp(this.upperMass, box.upperMass);
       this.lowerMass = addDown(this.lowerMass, box.lowerMass);
     }
@@ -239,17 +256,16 @@ export class BoxProver {
     const defined = Math.max(conditions.defined, ofRest) as Defined;
     if (ofRest === Defined.Nowhere) return this.nowhere(box, rest.undefinedReason());
     const least = density.v.lo;
-    if (ofRest === Defined.Everywhere) {
-      if (density.v.hi < 0 && conditions.open === 0) throw this.negative(box);
-      if (density.v.hi <= 0 && conditions.open === 0) return null;
+    const v = I.interval(density.v.lo, density.v.hi);
+    if (ofRest === Defined.Everywhere && v.hi <= 0) {
+      if (conditions.open === 0 && least < 0) {
+        // A box that only touches 0 is not 0: at its centre it shows.
+        rest.densityAtPoint(this.space.centre(box), this.height);
+        if (this.height.hi < 0) throw this.negative(box);
+      }
+      if (least >= 0) return null;
     }
-    return this.bounded(
-      box,
-      conditions.open,
-      defined,
-      I.interval(density.v.lo, density.v.hi),
-      least,
-    );
+    return this.bounded(box, conditions.open, defined, v, least);
   }
 
   private region(
@@ -455,8 +471,9 @@ export class BoxProver {
       const corners = space.corners(box);
       const settled = this.settle(corners, conditions);
       if (settled === null) continue;
-      const { lo, hi } = rest.overBox(corners.lo, corners.hi, []).density.v;
-      if (hi < 0 && settled.open === 0) throw this.negative(box);
+      const { lo } = rest.overBox(corners.lo, corners.hi, []).density.v;
+      rest.densityAtPoint(space.centre(box), this.height);
+      if (this.height.hi < tolerance && settled.open === 0) throw this.negative(box);
       if (lo >= tolerance) {
         if (lo < 0) isRounded = true;
         continue;
@@ -474,6 +491,11 @@ export class BoxProver {
       );
     }
   }
+}
+
+/** True for a part without a bound, or not defined all over. */
+function isUrgent({ defined, box }: Part): boolean {
+  return defined !== Defined.Everywhere || box.upperMass === Infinity;
 }
 
 const LN_2 = 0.6931471805599453;

@@ -18,6 +18,10 @@ const PLANS: Range = [
 ];
 const CONDITIONS: Range = [['early+late<=90'], ['early*late>=least'], ['late>=0.5*early']];
 const GIVENS: Range[] = [[['least', 400]]];
+const SQUARE: Range = [
+  ['early', 0, 80],
+  ['late', 0, 80],
+];
 const SEED = [['plan-2027']];
 const LABEL = [['plans']];
 const CRATES: Range = ['a', 'b', 'q'].map((name) => [name, 0, 40, 1]);
@@ -191,6 +195,16 @@ describe('several variables, wrong input', () => {
           ],
         ),
       'limits (argument 2): 2 rows and 2 columns; give several variables a row name, from, to each.',
+    ],
+    [
+      'a density that is negative in boxes that touch 0',
+      () => drawn([['(early-40)*(late-40)']], SQUARE),
+      'Density: it is negative at early = 20, late = 60 (-400); heights must be 0 or more; use MAX(0, …) if that is meant.',
+    ],
+    [
+      'a pole in a corner',
+      () => drawn([['1/(early+late)']], SQUARE),
+      'Density: it cannot be bounded for early from 0 to 5e-324, late from 0 to 5e-324; keep the limits away from there.',
     ],
     [
       'a name twice',
