@@ -33,14 +33,21 @@ const spillOf = (column: string | undefined): string => `${column}${FIRST}#`;
 const table = (columns: readonly string[]): string =>
   `VSTACK(${SEASON.cases},HSTACK(${columns.map(spillOf).join(',')}))`;
 
+/** The unknowns of the middle case, each below its name. */
+const DRIVING = `VSTACK({"harvest","price","days","taken","spoilt"},HSTACK(${[
+  ...[SEASON.harvest, SEASON.price, SEASON.days],
+  ...[SEASON.taken(2), SEASON.spoilt],
+].join(',')}))`;
+
 /** First rows of the answers; their section titles stand above. */
 const BEST_ROW = 14;
 const CHANCES_ROW = 28;
+const DRIVERS_ROW = 40;
 const CHECK_ROW = 15;
 
 export function decisionSheet(): SheetPlan {
   const sheet = new SheetPlan('Decision', { columns: 24, rows: LAST_ROW, frozenRows: 0 })
-    .columnWidths([230, 90, 90, 90, 24, 250, 90, 90, 90, 90, 90, 24, 24, 24])
+    .columnWidths([230, 90, 90, 90, 24, 250, 90, 90, 90, 90, 90, 90, 90, 24])
     .put('A1', 'Decision: how many presses?', 'title')
     .put(
       'A2',
@@ -117,6 +124,12 @@ function answers(sheet: SheetPlan): void {
     .look(`A${CHANCES_ROW + 1}:A${CHANCES_ROW + 14}`, 'word')
     .look(`B${CHANCES_ROW + 1}:D${CHANCES_ROW + 14}`, 'result')
     .format(`B${CHANCES_ROW + 4}:D${CHANCES_ROW + 12}`, '0.0%')
+    .put(`F${DRIVERS_ROW - 2}`, 'What moves the margin of the middle case', 'section')
+    .put(`F${DRIVERS_ROW}`, `=UNDERCURVE.DRIVERS(${DRIVING},${spillOf(MARGIN[1])})`)
+    .look(`F${DRIVERS_ROW}:M${DRIVERS_ROW}`, 'head')
+    .look(`F${DRIVERS_ROW + 1}:F${DRIVERS_ROW + 6}`, 'word')
+    .look(`G${DRIVERS_ROW + 1}:M${DRIVERS_ROW + 6}`, 'result')
+    .format(`G${DRIVERS_ROW + 1}:L${DRIVERS_ROW + 6}`, '0.00')
     .put(`F${CHECK_ROW - 2}`, 'Check: the linked harvest against its shape', 'section')
     .put(`F${CHECK_ROW - 1}`, `=INDEX(F${CHECK_ROW}#,2,2)`, 'verdict')
     .put(`F${CHECK_ROW}`, `=UNDERCURVE.CHECK(${SEASON.harvest},${SEASON.harvestShape})`)

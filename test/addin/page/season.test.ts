@@ -103,6 +103,21 @@ describe('the sample, from links to a decision', () => {
     expect(shown.find(([item]) => item === 'place')).toEqual(['place', 3, 1, 2]);
   });
 
+  test('sampleWorkbook() ranks what moves the margin of three presses [law]', () => {
+    const letters = ['L', 'M', 'N', 'P', 'S'];
+    const inputs = [
+      ['harvest', 'price', 'days', 'taken', 'spoilt'],
+      ...cells('Season', letters, 9, 8 + N),
+    ];
+    const margin = cells('Decision', ['W'], 9, 8 + N);
+    const drivers = call('DRIVERS', inputs, margin);
+    // A blank of ours spills as an empty text.
+    expect(grid.readSpill('Decision', 'F40')).toEqual(
+      drivers.map((row) => row.map((cell) => cell ?? '')),
+    );
+    expect(drivers[1]?.[0]).toBe('price');
+  });
+
   test('sampleWorkbook() finds no sign against the linked harvest [law]', () => {
     expect(grid.read('Decision', 'F14')).toMatch(/^no sign against the shape/);
   });
