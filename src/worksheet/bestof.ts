@@ -83,11 +83,11 @@ function compare(
       if (value > best) [best, nBest] = [value, 1];
       else if (value === best) nBest++;
     }
-    values.forEach((own, j) => {
-      const regret = best - sign * own[i]!;
+    for (let j = 0; j < values.length; j++) {
+      const regret = best - sign * values[j]![i]!;
       regrets[j]![i] = regret;
       if (regret === 0) timesBest[j]! += 1 / nBest;
-    });
+    }
   }
   return { timesBest, regrets };
 }
