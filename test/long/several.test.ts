@@ -3,6 +3,7 @@
  * fuzz of the proof, and what takes too long for every run (npm run check:long).
  */
 import { BoxDrawer } from '../../src/draw/several';
+import { expect as mean } from '../../src/index';
 import { keyOf } from '../../src/random/key';
 import { cellTargets, type CellTarget } from '../draw/severalTargets';
 import { FALSE_ALARM, goodnessOfFit, rankCorrelation, Z_FALSE_ALARM } from '../draw/statistics';
@@ -56,14 +57,18 @@ describe('proveBoxes at length', () => {
   const cube = (names: string, from: number, to: number): AxisText[] =>
     [...names].map((name) => [name, from, to] as const);
 
-  // π³/6 and its share of the cube of side 2 (DLMF 5.19.4).
-  test('holds the volume of a ball in six dimensions, and draws agree [published]', () => {
-    const text = 'a^2+b^2+p^2+q^2+s^2+t^2<=1';
-    const envelope = provedBoxes(text, cube('abpqst', -1, 1));
-    const volume = Math.PI ** 3 / 6;
+  // π^(d/2) / Γ(d/2 + 1) (DLMF 5.19.4), and 1/d! for the simplex.
+  test.each<[string, string, AxisText[], number]>([
+    ['a ball', 'a^2+b^2+p^2+q^2<=1', cube('abpq', -1, 1), Math.PI ** 2 / 2],
+    ['a ball', 'a^2+b^2+p^2+q^2+s^2<=1', cube('abpqs', -1, 1), (8 * Math.PI ** 2) / 15],
+    ['a ball', 'a^2+b^2+p^2+q^2+s^2+t^2<=1', cube('abpqst', -1, 1), Math.PI ** 3 / 6],
+    ['a simplex', 'a+b+p+q<=1', cube('abpq', 0, 1), 1 / 24],
+    ['a slice of a cube', 'AND(a+b+p+q>=1,a+b+p+q<=2)', cube('abpq', 0, 1), 11 / 24],
+  ])('holds the volume of %s, %s, and draws agree [published]', (_, text, axes, volume) => {
+    const envelope = provedBoxes(text, axes);
     expect(envelope.lowerMass).toBeLessThan(volume);
     expect(envelope.upperMass).toBeGreaterThan(volume);
-    const n = 1e6;
+    const n = 300_000;
     const { proposals } = new BoxDrawer(envelope).rows(keyOf('plan-2027', text), 1, n);
     const share = volume / envelope.upperMass;
     const deviation = Math.sqrt(proposals * share * (1 - share));
@@ -86,5 +91,32 @@ describe('proveBoxes at length', () => {
     expect(Math.abs(rankCorrelation(columns[0]!, columns[3]!) - ranks)).toBeLessThan(
       Z_FALSE_ALARM / Math.sqrt(n),
     );
+  });
+
+  test.each<[string, string, AxisText[], string, number, number]>([
+    [
+      'the mean distance in the unit square (Santaló 1976, from memory; recomputed)',
+      '1',
+      cube('abpq', 0, 1),
+      'SQRT((a-p)^2+(b-q)^2)',
+      0.5214054331647,
+      2e-3,
+    ],
+    [
+      'the mean of the larger of a normal pair, √((1 − ρ)/π) (Clark 1961, from memory)',
+      'EXP(-0.5*(a^2-1.6*a*b+b^2)/0.36)',
+      cube('ab', -6, 6),
+      'MAX(a,b)',
+      Math.sqrt(0.2 / Math.PI),
+      1e-4,
+    ],
+  ])('EXPECT gives %s [published]', (_, text, axes, quantity, exact, near) => {
+    const limits = axes.map(([name, from, to]) => [name, from, to]);
+    const [, row] = mean([[text]], limits, [[quantity]], []);
+    const [value, atLeast, atMost] = row as [number, number, number];
+    // What the limits at six standard deviations cut off is below 10^-6.
+    expect(atLeast).toBeLessThan(exact + 1e-6);
+    expect(atMost).toBeGreaterThan(exact - 1e-6);
+    expect(Math.abs(value - exact)).toBeLessThan(near);
   });
 });

@@ -22,9 +22,7 @@ interface Region {
 }
 
 /** V_d = π^(d/2) / Γ(d/2 + 1) (DLMF 5.19.4); acceptance in the cube of side 2, recomputed. */
-const BALLS: readonly Region[] = [
-  0.785398163397, 0.523598775598, 0.308425137534, 0.164493406685,
-].map((share, i) => ({
+const BALLS: readonly Region[] = [0.785398163397, 0.523598775598].map((share, i) => ({
   name: `a ball in ${i + 2} dimensions`,
   text: `${sum(i + 2, (name) => `${name}^2`)}<=1`,
   axes: cube(i + 2, -1, 1),
@@ -32,7 +30,7 @@ const BALLS: readonly Region[] = [
 }));
 
 /** 1/d!, elementary. */
-const SIMPLICES: readonly Region[] = [2, 3, 4].map((d) => ({
+const SIMPLICES: readonly Region[] = [2, 3].map((d) => ({
   name: `a simplex in ${d} dimensions`,
   text: `${sum(d, (name) => name)}<=1`,
   axes: cube(d, 0, 1),
@@ -43,7 +41,6 @@ const SIMPLICES: readonly Region[] = [2, 3, 4].map((d) => ({
 const SLICES: readonly Region[] = [
   [3, 1, 4 / 6],
   [3, 2, 1 / 6],
-  [4, 1, 11 / 24],
 ].map(([d, k, volume]) => ({
   name: `slice ${k} of a cube in ${d} dimensions`,
   text: `AND(${sum(d!, (name) => name)}>=${k},${sum(d!, (name) => name)}<=${k! + 1})`,
@@ -139,25 +136,9 @@ const meanOf = (text: string, axes: readonly AxisText[], quantity: string) =>
 
 describe('EXPECT in several variables', () => {
   test.each<[string, string, readonly AxisText[], string, number, number]>([
-    [
-      'the mean distance in the unit square (Santaló 1976, from memory; recomputed)',
-      '1',
-      cube(4, 0, 1),
-      'SQRT((a-p)^2+(b-q)^2)',
-      0.5214054331647,
-      2e-3,
-    ],
     ['the mean square radius of a disc', 'a^2+b^2<=1', cube(2, -1, 1), 'a^2+b^2', 0.5, 2e-4],
     ['the mean of a simplex', 'a+b<=1', cube(2, 0, 1), 'a', 1 / 3, 1e-4],
     ['the covariance of a normal pair', normal(2, 0.8), cube(2, -6, 6), 'a*b', 0.8, 1e-3],
-    [
-      'the mean of the larger of a normal pair, √((1 − ρ)/π) (Clark 1961, from memory)',
-      normal(2, 0.8),
-      cube(2, -6, 6),
-      'MAX(a,b)',
-      Math.sqrt(0.2 / Math.PI),
-      1e-4,
-    ],
   ])('%s [published]', (_, text, axes, quantity, exact, near) => {
     const [value, atLeast, atMost] = meanOf(text, axes, quantity);
     // What the limits at six standard deviations cut off is below 10^-6.
