@@ -123,7 +123,7 @@ function answers(sheet: SheetPlan): void {
     .look(`A${CHANCES_ROW}:D${CHANCES_ROW}`, 'head')
     .look(`A${CHANCES_ROW + 1}:A${CHANCES_ROW + 14}`, 'word')
     .look(`B${CHANCES_ROW + 1}:D${CHANCES_ROW + 14}`, 'result')
-    .format(`B${CHANCES_ROW + 4}:D${CHANCES_ROW + 12}`, '0.0%')
+    .format(`B${CHANCES_ROW + 5}:D${CHANCES_ROW + 13}`, '0.0%')
     .put(`F${DRIVERS_ROW - 2}`, 'What moves the margin of the middle case', 'section')
     .put(`F${DRIVERS_ROW}`, `=UNDERCURVE.DRIVERS(${DRIVING},${spillOf(MARGIN[1])})`)
     .look(`F${DRIVERS_ROW}:M${DRIVERS_ROW}`, 'head')
@@ -134,10 +134,10 @@ function answers(sheet: SheetPlan): void {
     .put(`F${CHECK_ROW - 1}`, `=INDEX(F${CHECK_ROW}#,2,2)`, 'verdict')
     .put(`F${CHECK_ROW}`, `=UNDERCURVE.CHECK(${SEASON.harvest},${SEASON.harvestShape})`)
     .look(`F${CHECK_ROW}:K${CHECK_ROW}`, 'head')
-    .look(`F${CHECK_ROW + 1}:F${CHECK_ROW + 30}`, 'word')
-    .look(`G${CHECK_ROW + 1}:K${CHECK_ROW + 30}`, 'result')
-    .format(`G${CHECK_ROW + 4}:J${CHECK_ROW + 30}`, '0.00')
-    .format(`K${CHECK_ROW + 2}:K${CHECK_ROW + 30}`, '0.000')
+    .look(`F${CHECK_ROW + 1}:F${CHECK_ROW + 21}`, 'word')
+    .look(`G${CHECK_ROW + 1}:K${CHECK_ROW + 21}`, 'result')
+    .format(`G${CHECK_ROW + 4}:J${CHECK_ROW + 21}`, '0.00')
+    .format(`K${CHECK_ROW + 2}:K${CHECK_ROW + 21}`, '0.000')
     .chart({
       id: 'margin-by-presses',
       col: 5,
