@@ -13,10 +13,10 @@ const WHOLE: readonly AxisText[] = ['a', 'b', 'c'].map((name) => [name, 0, 40, 1
 
 describe('proveBoxes', () => {
   test('lies above and below every density of many random ones [law]', () => {
-    const report = boxFuzz('boxes', 15, 2000);
+    const report = boxFuzz('boxes', 6, 2000);
     expect(report.faults).toEqual([]);
-    expect(report.proved).toBeGreaterThan(8);
-    expect(report.points).toBeGreaterThan(15_000);
+    expect(report.proved).toBeGreaterThan(3);
+    expect(report.points).toBeGreaterThan(6_000);
   });
 
   // Heights of 1.02 where at most 1 is proved, and a disc that is a little larger.
