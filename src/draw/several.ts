@@ -75,24 +75,35 @@ function atPlace(tape: Tape, exponent = 0): AtPlace {
 }
 
 export class BoxDrawer {
+  private readonly exponent: number;
   private readonly chooser: Chooser;
   private readonly conditions: readonly AtPlace[];
   private readonly rest: AtPlace | null;
   private readonly axes: readonly AxisPlaces[];
+  /** Of every box, side by side: what the inner loop asks. */
   private readonly sure: Float64Array;
+  private readonly upper: Float64Array;
+  private readonly open: Int32Array;
+  /** Null where no box has a plane. */
+  private readonly planes: readonly ProvedBox['plane'][] | null;
   private readonly nNumbers: number;
   private readonly numbers: Float64Array;
   private readonly place: Float64Array;
   private readonly value = I.interval();
   private nearTies = 0;
 
-  constructor(private readonly envelope: BoxEnvelope) {
+  constructor(envelope: BoxEnvelope) {
     const { boxes, conditions, rest, exponent, space } = envelope;
+    this.exponent = exponent;
     this.chooser = new Chooser(boxes.map(({ upperMass }) => upperMass));
     this.conditions = conditions.map(({ tape }) => atPlace(tape));
     this.rest = rest && atPlace(rest, exponent);
     this.axes = Array.from({ length: space.n }, (_, i) => new AxisPlaces(envelope, i));
     this.sure = Float64Array.from(boxes, ({ sure }) => sure);
+    this.upper = Float64Array.from(boxes, ({ upper }) => upper);
+    this.open = Int32Array.from(boxes, ({ open }) => open);
+    const planes = boxes.map(({ plane }) => plane);
+    this.planes = planes.some((plane) => plane !== null) ? planes : null;
     this.nNumbers = FOR_BOX + space.n + (this.chooser.needsTwo ? 2 : 1);
     this.numbers = new Float64Array(this.nNumbers + 1);
     this.place = new Float64Array(space.n);
@@ -152,17 +163,18 @@ export class BoxDrawer {
     for (let i = 0; i < n; i++) place[i] = axes[i]!.placeFor(at, numbers[FOR_BOX + i]!);
     const v = numbers[FOR_BOX + n]!;
     if (v < this.sure[at]!) return SURE;
-    const box = this.envelope.boxes[at]!;
-    const upper = this.upperAt(box);
+    const upper = this.upperAt(at);
     this.drawnHeight = v * upper;
-    return this.holds(box.open) && this.isUnder(v * upper, upper) ? KEPT : REJECTED;
+    return this.holds(this.open[at]!) && this.isUnder(v * upper, upper) ? KEPT : REJECTED;
   }
 
-  private upperAt({ upper, plane }: ProvedBox): number {
-    if (plane === null) return upper;
+  private upperAt(box: number): number {
+    const upper = this.upper[box]!;
+    const plane = this.planes?.[box];
+    if (!plane) return upper;
+    const { slopes, centre } = plane;
     let rise = 0;
-    for (let i = 0; i < this.place.length; i++)
-      rise += plane.slopes[i]! * (this.place[i]! - plane.centre[i]!);
+    for (let i = 0; i < this.place.length; i++) rise += slopes[i]! * (this.place[i]! - centre[i]!);
     return upper * elementary.exp(rise);
   }
 
@@ -209,7 +221,7 @@ export class BoxDrawer {
 
   private heightThere(place: ArrayLike<number>): number {
     if (this.rest === null) return 1;
-    if (this.envelope.exponent === 0) return Math.max(0, this.rest.at(...Array.from(place)));
+    if (this.exponent === 0) return Math.max(0, this.rest.at(...Array.from(place)));
     this.rest.encloser.densityAtPoint(place, this.value);
     return Math.max(0, this.value.lo / 2 + this.value.hi / 2);
   }
