@@ -7,7 +7,7 @@
  *   bench  the timings                           -> .build/bench   (npm run bench)
  * The add-in's public address is one setting: UNDERCURVE_BASE_URL.
  */
-import { existsSync, readdirSync } from 'node:fs';
+import { chmodSync, existsSync, readdirSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import CopyPlugin from 'copy-webpack-plugin';
 import HtmlPlugin from 'html-webpack-plugin';
@@ -160,11 +160,21 @@ function page() {
   });
 }
 
+/** npx runs the file itself: a build must not take away what makes that possible. */
+function makeExecutable(compiler) {
+  compiler.hooks.afterEmit.tap('executable', () =>
+    chmodSync(at('.build/cli/undercurve.cjs'), 0o755),
+  );
+}
+
 function cli() {
   return bundle('cli', {
     ...forNode('cli'),
     entry: { undercurve: './addin/cli/undercurve.ts' },
-    plugins: [new webpack.BannerPlugin({ banner: '#!/usr/bin/env node', raw: true })],
+    plugins: [
+      new webpack.BannerPlugin({ banner: '#!/usr/bin/env node', raw: true }),
+      { apply: makeExecutable },
+    ],
   });
 }
 

@@ -1,14 +1,14 @@
 /**
  * Totals over many draws a row, such as the losses of a season: row i sums its own draws 0, 1, …
- * n − 1, which have their numbers under a key of the row (random/stream.ts). So raising the count
- * of one row only adds draws to that row.
+ * n − 1, each of which has its own numbers (random/stream.ts). So raising the count of one row only
+ * adds draws to that row.
  *
  * Draws are made in blocks across rows and summed as they come, so that their number does not
  * matter to the memory. Sums carry their rounding errors along (Knuth, The Art of Computer
  * Programming 2, 4.2.2, theorem B, which has no branch to guess).
  */
 import type { Key } from '../random/key';
-import { OwnStream } from '../random/stream';
+import { DrawStream } from '../random/stream';
 import type { ColumnDrawer, NumberSource } from './rejection';
 
 /** Draws that are held at a time. */
@@ -68,7 +68,7 @@ class Block implements NumberSource {
   readonly firstDraws = new Int32Array(BLOCK);
   readonly starts = new Int32Array(BLOCK + 1);
   private readonly numbers = new Float64Array(BLOCK + 1);
-  private readonly stream: OwnStream;
+  private readonly stream: DrawStream;
   /** The row and draw that come next. */
   private row = 0;
   private draw = 0;
@@ -78,7 +78,7 @@ class Block implements NumberSource {
     key: Key,
     method: number,
   ) {
-    this.stream = new OwnStream(key, method);
+    this.stream = new DrawStream(key, method);
   }
 
   /** Takes the next draws; false when there are none left. */
@@ -91,8 +91,7 @@ class Block implements NumberSource {
       rows[nStretches] = this.row;
       firstDraws[nStretches] = this.draw;
       starts[nStretches++] = size;
-      stream.select(this.row + 1);
-      stream.fillFirst(this.draw, numbers, size, n);
+      stream.fillFirst(this.row + 1, this.draw, numbers, size, n);
       size += n;
       if (this.draw + n === counts[this.row]!) continue;
       this.draw += n;
@@ -110,8 +109,8 @@ class Block implements NumberSource {
 
   further(i: number, attempt: number, out: Float64Array): void {
     const stretch = this.stretchOf(i);
-    this.stream.select(this.rows[stretch]! + 1);
-    this.stream.further(this.firstDraws[stretch]! + i - this.starts[stretch]!, attempt, out);
+    const draw = this.firstDraws[stretch]! + i - this.starts[stretch]!;
+    this.stream.further(this.rows[stretch]! + 1, draw, attempt, out);
   }
 
   /** The stretch that holds draw i of the block. */

@@ -57,7 +57,7 @@ export function philox4x32(
 }
 
 /**
- * Writes the blocks of counters (c0, 0, c2, c3), (c0 + 1, 0, c2, c3) … as fractions, two a
+ * Writes the blocks of counters (c0, c1, c2, c3), (c0 + 1, c1, c2, c3) … as fractions, two a
  * block: words 0, 1 to out[at], words 2, 3 to out[at + 1], and so on.
  * Guarantee: multiples of 2^-53 in [0, 1), those of `philox4x32` and `fraction` to the bit.
  * Derived: `philox4x32` with its first two rounds opened up. Only word 0 varies from block to
@@ -67,6 +67,7 @@ export function philox4x32(
  */
 export function fillFractions(
   c0: number,
+  c1: number,
   c2: number,
   c3: number,
   k0: number,
@@ -79,7 +80,7 @@ export function fillFractions(
   const b1 = (k1 + W1) | 0;
   const a2 = (a1 + W0) | 0;
   const b2 = (b1 + W1) | 0;
-  const first0 = timesM1High(c2) ^ k0;
+  const first0 = timesM1High(c2) ^ c1 ^ k0;
   const first1 = imul(c2, M1);
   const second2 = timesM0High(first0) ^ b1;
   const second3 = imul(first0, M0);

@@ -14,8 +14,9 @@
  * are picked or thinned do not share the numbers of draws under the same seed and label. So do
  * purposes 4, "shuffle", and 5, "shift", for the strata of a stratified column.
  *
- * Purpose 6, "total", gives a row a key of its own, words 0 and 1 of the block of that row, under
- * which its draws are numbered like rows: draw j of row i is the same however many others there are.
+ * Purpose 6, "total", serves rows of many draws: draw j of row i is the same however many others
+ * there are. With draws in the place of rows and the row in word 1, first numbers are laid out as
+ * above; further ones have 2^31 + draw in word 0, which nothing else has, and the attempt in word 2.
  *
  * Purposes from 4096 on, "link", hold one number a row for each of the linked shares, and those from
  * 8192 on, "align", one a row for the shuffle of each aligned column.
@@ -28,7 +29,7 @@
  * is a fresh proposal and uses both; attempt 0 continues the row's first number and uses only v.
  *
  * Two words w, w′ make one number with 53 random bits, a multiple of 2^-53 in [0, 1).
- * Rows are whole numbers below 2^32, attempts below 2^31; from there on the further numbers are the
+ * Rows and draws are whole numbers below 2^31, and so are attempts; from there on the further numbers are the
  * low bits of a place that one number does not tell finely enough (draw/points.ts).
  */
 import type { Key } from './key';
@@ -47,6 +48,9 @@ export const PURPOSE = {
   link: 4096,
   align: 8192,
 } as const;
+
+/** 2^31: what word 0 of the further numbers of a draw has above the draw. */
+const FURTHER_DRAW = 0x80000000;
 
 /** The numbers of one key, first ones for one purpose; holds no position, so calls may come in any order. */
 export class RowStream {
@@ -72,7 +76,7 @@ export class RowStream {
     if (count > 0 && firstRow & 1) out[filled++] = this.first(firstRow);
     const pairs = (count - filled) >>> 1;
     const pair = (firstRow + filled) >>> 1;
-    fillFractions(pair, this.purpose, this.method, this.k0, this.k1, out, filled, pairs);
+    fillFractions(pair, 0, this.purpose, this.method, this.k0, this.k1, out, filled, pairs);
     filled += 2 * pairs;
     if (filled < count) out[filled] = this.first(firstRow + filled);
   }
@@ -106,57 +110,53 @@ export class RowStream {
    * is moved there by minimizers, as a new one for each call, which engines optimize badly.)
    */
   private first(row: number): number {
-    fillFractions(row >>> 1, this.purpose, this.method, this.k0, this.k1, this.pair, 0, 1);
+    fillFractions(row >>> 1, 0, this.purpose, this.method, this.k0, this.k1, this.pair, 0, 1);
     return this.pair[row & 1]!;
   }
 }
 
-/** The numbers of draws of which each row has its own: one row is at hand at a time. */
-export class OwnStream {
-  private ownK0 = 0;
-  private ownK1 = 0;
+/** The numbers of rows that have many draws each; holds no position, so calls may come in any order. */
+export class DrawStream {
+  private readonly k0: number;
+  private readonly k1: number;
   private readonly block = new Uint32Array(4);
+  private readonly pair = new Float64Array(2);
 
   constructor(
-    private readonly key: Key,
+    key: Key,
     private readonly method = 0,
-  ) {}
-
-  /** Takes a row in hand by its key. Two rows share one with a chance of 2^-64. */
-  select(row: number): void {
-    const { block, key } = this;
-    philox4x32(row, 0, PURPOSE.total, this.method, key[0], key[1], block);
-    this.ownK0 = block[0]!;
-    this.ownK1 = block[1]!;
+  ) {
+    [this.k0, this.k1] = key;
   }
 
   /**
-   * Writes the first numbers of draws firstDraw … firstDraw + count − 1 of the row at hand to out
-   * from `at` on, and may write one number more behind them.
-   * Guarantee: those of a RowStream under the row's key.
+   * Writes the first numbers of draws firstDraw … firstDraw + count − 1 of a row to out from `at`
+   * on, and may write one number more behind them.
+   * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
    */
-  fillFirst(firstDraw: number, out: Float64Array, at: number, count: number): void {
+  fillFirst(row: number, firstDraw: number, out: Float64Array, at: number, count: number): void {
     let [draw, place, left] = [firstDraw, at, count];
     if (left > 0 && draw & 1) {
-      this.fillPairs(draw >>> 1, this.pair, 0, 1);
+      this.fillPairs(row, draw >>> 1, this.pair, 0, 1);
       out[place++] = this.pair[1]!;
       draw++;
       left--;
     }
-    this.fillPairs(draw >>> 1, out, place, (left + 1) >>> 1);
+    this.fillPairs(row, draw >>> 1, out, place, (left + 1) >>> 1);
   }
 
-  /** Writes u and v of an attempt of a draw of the row at hand to out[0] and out[1]. */
-  further(draw: number, attempt: number, out: Float64Array): void {
+  /**
+   * Writes u and v of an attempt of a draw of a row to out[0] and out[1].
+   * Guarantee: multiples of 2^-53 in [0, 1), the same bits on every engine.
+   */
+  further(row: number, draw: number, attempt: number, out: Float64Array): void {
     const { block } = this;
-    philox4x32(draw, attempt, PURPOSE.further, this.method, this.ownK0, this.ownK1, block);
+    philox4x32(draw | FURTHER_DRAW, row, attempt, this.method, this.k0, this.k1, block);
     out[0] = fraction(block[0]!, block[1]!);
     out[1] = fraction(block[2]!, block[3]!);
   }
 
-  private readonly pair = new Float64Array(2);
-
-  private fillPairs(pair: number, out: Float64Array, at: number, pairs: number): void {
-    fillFractions(pair, PURPOSE.first, this.method, this.ownK0, this.ownK1, out, at, pairs);
+  private fillPairs(row: number, pair: number, out: Float64Array, at: number, pairs: number): void {
+    fillFractions(pair, row, PURPOSE.total, this.method, this.k0, this.k1, out, at, pairs);
   }
 }

@@ -99,17 +99,26 @@ describe('fillFractions', () => {
   it('fillFractions(c0, …) gives the blocks of philox4x32 one after another [law]', () => {
     const runs = fc.nat(40);
     fc.assert(
-      fc.property(word, word, word, word, word, runs, runs, (c0, c2, c3, k0, k1, at, blocks) => {
-        const out = new Float64Array(at + 2 * blocks + 3).fill(-1);
-        fillFractions(c0, c2, c3, k0, k1, out, at, blocks);
-        const expected = new Array<number>(out.length).fill(-1);
-        for (let i = 0; i < blocks; i++) {
-          const [w0, w1, w2, w3] = philox([c0 + i, 0, c2, c3], [k0, k1]);
-          expected[at + 2 * i] = fraction(w0, w1);
-          expected[at + 2 * i + 1] = fraction(w2, w3);
-        }
-        expect([...out]).toEqual(expected);
-      }),
+      fc.property(
+        word,
+        word,
+        word,
+        word,
+        fc.tuple(word, word),
+        runs,
+        runs,
+        (c0, c1, c2, c3, [k0, k1], at, blocks) => {
+          const out = new Float64Array(at + 2 * blocks + 3).fill(-1);
+          fillFractions(c0, c1, c2, c3, k0, k1, out, at, blocks);
+          const expected = new Array<number>(out.length).fill(-1);
+          for (let i = 0; i < blocks; i++) {
+            const [w0, w1, w2, w3] = philox([c0 + i, c1, c2, c3], [k0, k1]);
+            expected[at + 2 * i] = fraction(w0, w1);
+            expected[at + 2 * i + 1] = fraction(w2, w3);
+          }
+          expect([...out]).toEqual(expected);
+        },
+      ),
       { seed: 3, numRuns: 500 },
     );
   });

@@ -3,7 +3,7 @@ import { keyOf } from '../../src/random/key';
 import type { Key } from '../../src/random/key';
 import { fraction, philox4x32 } from '../../src/random/philox';
 import { correlation, Z_FALSE_ALARM } from '../draw/statistics';
-import { OwnStream, PURPOSE, RowStream } from '../../src/random/stream';
+import { DrawStream, PURPOSE, RowStream } from '../../src/random/stream';
 
 const LAST_ROW = 1048575;
 const KEY = keyOf('plan-2027', 'harvest');
@@ -105,48 +105,48 @@ describe('RowStream.fillFirst', () => {
   });
 });
 
-describe('OwnStream', () => {
-  const rowKey = ([k0, k1]: Key, i: number, method = 0): Key => {
-    const words = new Uint32Array(4);
-    philox4x32(i, 0, PURPOSE.total, method, k0, k1, words);
-    return [words[0]!, words[1]!];
-  };
+describe('DrawStream', () => {
+  const draws = fc.nat(1e6);
 
-  it('select(row) has the numbers of a RowStream under words 0 and 1 of block (row, 0, 6, method) [law]', () => {
-    const small = fc.integer({ min: 0, max: 9 });
+  it('fillFirst(row, draw, …) is block (floor(draw / 2), row, 6, method), half by parity [law]', () => {
+    const small = fc.nat(9);
     fc.assert(
-      fc.property(
-        key,
-        row,
-        small,
-        fc.integer({ min: 0, max: 1e6 }),
-        small,
-        (own, i, method, draw, n) => {
-          const stream = new OwnStream(own, method);
-          const plain = new RowStream(rowKey(own, i, method), method);
-          const [wanted, out] = [new Float64Array(n), new Float64Array(n + 4)];
-          plain.fillFirst(draw, wanted, n);
-          stream.select(i === 1 ? 2 : 1);
-          stream.select(i);
-          stream.fillFirst(draw, out, 2, n);
-          // One number may follow.
-          expect(Array.from(out.slice(0, n + 2))).toEqual([0, 0, ...wanted]);
-          expect(out[n + 3]).toBe(0);
-          const pairs = [new Float64Array(2), new Float64Array(2)];
-          plain.further(draw, method, pairs[0]!);
-          stream.further(draw, method, pairs[1]!);
-          expect(pairs[1]).toEqual(pairs[0]);
-        },
-      ),
+      fc.property(key, word, row, draws, small, (k, method, at, draw, n) => {
+        const out = new Float64Array(n + 4);
+        new DrawStream(k, method).fillFirst(at, draw, out, 2, n);
+        const wanted = Array.from({ length: n }, (_, i) => {
+          const block = fractions([(draw + i) >> 1, at, PURPOSE.total, method], k);
+          return block[(draw + i) % 2];
+        });
+        // One number may follow.
+        expect([...out.slice(0, n + 2)]).toEqual([0, 0, ...wanted]);
+        expect(out[n + 3]).toBe(0);
+      }),
+      { seed: 12, numRuns: 1000 },
+    );
+  });
+
+  it('further(row, draw, attempt) is block (2^31 + draw, row, attempt, method) [law]', () => {
+    fc.assert(
+      fc.property(key, word, row, draws, word, (k, method, at, draw, attempt) => {
+        const out = new Float64Array(2);
+        new DrawStream(k, method).further(at, draw, attempt, out);
+        expect([...out]).toEqual(fractions([2 ** 31 + draw, at, attempt, method], k));
+      }),
+      { seed: 14, numRuns: 1000 },
     );
   });
 
   it('the draws of neighbouring rows are uncorrelated [law]', () => {
     const n = 100_000;
-    const [a, b] = [7, 8].map((i) => firsts(new RowStream(rowKey(KEY, i)), n));
+    const of = (at: number) => {
+      const out = new Float64Array(n + 1);
+      new DrawStream(KEY).fillFirst(at, 0, out, 0, n);
+      return out.slice(0, n);
+    };
     const limit = Z_FALSE_ALARM / Math.sqrt(n);
-    expect(Math.abs(correlation(a!, b!))).toBeLessThan(limit);
-    expect(correlation(a!, firsts(new RowStream(rowKey(KEY, 7)), n))).toBeGreaterThan(limit);
+    expect(Math.abs(correlation(of(7), of(8)))).toBeLessThan(limit);
+    expect(correlation(of(7), of(7))).toBeGreaterThan(limit);
   });
 });
 

@@ -260,7 +260,7 @@ describe('total', () => {
     [
       [[3]],
       [['LN(x-1000)']],
-      'each (argument 4): it is undefined or has no bound at x = 6.33107, a draw of row 1; give it a value there with IF, or limits that leave the place out.',
+      'each (argument 4): it is undefined or has no bound at x = 5.51369, a draw of row 1; give it a value there with IF, or limits that leave the place out.',
     ],
   ] as [Range, Range | null, string][])(
     'of %j with each %j says where and what [law]',

@@ -19,7 +19,8 @@ function started(argv: string[], input = '') {
 describe('the undercurve program', () => {
   test('begins with the line that makes it a command [law]', () => {
     expect(readFileSync(program, 'utf8')).toMatch(/^#!\/usr\/bin\/env node\n/);
-    expect(statSync(program).isFile()).toBe(true);
+    // A link of npx runs the file itself; where a system knows no such mark npx makes a script instead.
+    if (process.platform !== 'win32') expect(statSync(program).mode & 0o111).toBe(0o111);
   });
 
   test('call prints rows and ends with 0; standard input gives the same [law]', () => {
