@@ -126,7 +126,7 @@ export function workbookFigures({ inputs, model }: Example, rows: number, log: C
   return figuresIn(gridOf({ sheets: [sheet] }, log).readSpill('model', 'N1'));
 }
 
-/** The same through the functions alone, for more rows than the grid takes. */
+/** The same through the functions alone. */
 export function engineFigures({ inputs, result }: Example, rows: number): Figures {
   const list: Range = [['label', 'density', 'from', 'to'], ...inputs];
   const drawn = draw(list, null, [[rows]], [[SEED]], null, []);
