@@ -129,6 +129,22 @@ describe('correlated normal shapes', () => {
   });
 });
 
+// (2 + √2 + 5 ln(1 + √2))/15 (Santaló 1976, from memory; recomputed); the mean square is 1/3.
+const MEAN_DISTANCE = 0.5214054331647;
+
+describe('two places in the unit square', () => {
+  test('draws have their mean distance [published]', () => {
+    const drawer = new BoxDrawer(provedBoxes('1+0*a', cube(4, 0, 1)));
+    const { columns } = drawer.rows(keyOf('plan-2027', 'distance'), 1, ROWS);
+    const [a, b, p, q] = columns.map((column) => Array.from(column));
+    const squares = a!.map((x, i) => (x - p![i]!) ** 2 + (b![i]! - q![i]!) ** 2);
+    const drawn = squares.reduce((total, square) => total + Math.sqrt(square), 0) / ROWS;
+    const room = Z_FALSE_ALARM * Math.sqrt((1 / 3 - MEAN_DISTANCE ** 2) / ROWS);
+    expect(Math.abs(drawn - MEAN_DISTANCE)).toBeLessThan(room);
+    expect(Math.abs(drawn - 1.05 * MEAN_DISTANCE)).toBeGreaterThan(room);
+  });
+});
+
 const rowsOf = (axes: readonly AxisText[]) =>
   axes.map(([name, from, to, step = 0]) => [name, from, to, step]);
 const meanOf = (text: string, axes: readonly AxisText[], quantity: string) =>
