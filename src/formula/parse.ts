@@ -178,7 +178,9 @@ class Reader {
     while (inner.type === 'UnaryExpression' && inner.operator === '%') inner = inner.arguments[0]!;
     if (inner.type !== 'UnaryExpression' || inner.operator !== '-') return;
     const [start] = span(inner);
-    const end = span(base)[1];
+    const after = this.text.slice(start + 1);
+    // What stands in brackets ends, by its span, before them.
+    const end = start + 1 + balanced(after, span(base)[1] - start - 1).length;
     const caret = /^[\s%]*\^/.exec(this.text.slice(end));
     if (!caret) return;
     const operand = this.text.slice(start + 1, end + caret[0].length - 1).trim();

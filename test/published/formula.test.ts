@@ -84,4 +84,32 @@ describe('formula', () => {
     expect(valueOf('-(x^2)', 3)).toBe(-9);
     expect(valueOf('-3^2', 0)).toBe(9);
   });
+
+  it.each([
+    ['-(x-1)^2', 1, '(x-1)', '2'],
+    ['EXP(-(x-1)^2/2)', 5, '(x-1)', '2'],
+    ['EXP(-((x-1)/2)^2)', 5, '((x-1)/2)', '2'],
+    ['2*-(x+SIN(x))^(1+1)', 3, '(x+SIN(x))', '(1+1)'],
+    ['-SIN(x) ^ 2', 1, 'SIN(x)', '2'],
+    ['-(x)%^2', 1, '(x)%', '2'],
+    ['-(-x)^2', 1, '(-x)', '2'],
+    ['-(3)^2', 1, '(3)', '2'],
+  ])('%s, a bare minus before ^, is refused with the rewrite [law]', (text, at, base, power) => {
+    expect(refusalOf(text)).toBe(
+      `Formula, character ${at}: -${base}^${power} means (-${base})^${power} in a worksheet; ` +
+        `write -(${base}^${power}), or (-${base})^${power} if that is meant.`,
+    );
+  });
+
+  it.each([
+    ['(-(x-1))^2', 4],
+    ['(-(x-1)/2)^2', 1],
+    ['-((x-1)^2)', -4],
+    ['1-(x-1)^2', -3],
+    ['2*(-x)^2', 18],
+    ['(x-1)^-2', 0.25],
+    ['(-(x-1)*(x-2))^2', 4],
+  ])('%s has no bare minus before ^ [law]', (text, value) => {
+    expect(valueOf(text, 3)).toBe(value);
+  });
 });
