@@ -176,6 +176,8 @@ describe('domains', () => {
   const POWER_OF = 'a negative number is raised to a power that is not whole';
   const VARYING = 'a number that is not above 0 is raised to a power that varies';
 
+  const RATE = 'a rate is not above 0';
+
   it.each([
     ['LN(x)', -2, -1, Defined.Nowhere, LOG_OF],
     ['LN(x)', -1, 1, Defined.InPart, LOG_OF],
@@ -199,6 +201,10 @@ describe('domains', () => {
     ['IF(x<0,1,SQRT(x))', -2, -1, Defined.Everywhere, ''],
     ['IF(x<0,SQRT(x),1)', -2, -1, Defined.Nowhere, ROOT_OF],
     ['0*LN(x)', -2, -1, Defined.Nowhere, LOG_OF],
+    ['EXPON.DIST(3,x,FALSE)', 0, 1, Defined.Everywhere, ''],
+    ['EXPON.DIST(3,x,FALSE)', 0, 0, Defined.Nowhere, RATE],
+    ['EXPON.DIST(3,x,FALSE)', -2, -1, Defined.Nowhere, RATE],
+    ['EXPON.DIST(3,x,FALSE)', -1, 1, Defined.InPart, RATE],
   ] as const)('%s from %d to %d is in state %d [law]', (text, a, b, defined, reason) => {
     expect(state(text, a, b)).toEqual([defined, reason]);
   });

@@ -54,6 +54,16 @@ describe('below, above, quantile', () => {
     }
   });
 
+  // With t = 1/x the first two are normal in t: erfc(1) = .15729920705028513 (A&S 7.1.2, recomputed).
+  test.each([
+    ['NORM.DIST(7,5,x,FALSE)*NORM.DIST(3,5,x,FALSE)', 'unbounded', 2, 0.15729920705028513],
+    ['WEIBULL.DIST(3,2,x,FALSE)', 'unbounded', 3, 0.15729920705028513],
+    ['EXPON.DIST(3,x,FALSE)', 20, 1, (1 - 4 * Math.exp(-3)) / (1 - 61 * Math.exp(-60))],
+  ])('below(…) of %s, a parameter from 0 to %s, is exact [published]', (density, to, x, exact) => {
+    const share = Number(below([[density]], [[0, to]], [[x]], [])[0]![0]);
+    expect(Math.abs(share / exact - 1)).toBeLessThan(1e-12);
+  });
+
   test('below(…) of a table takes its ends, and limits truncate it [law]', () => {
     const table = [
       ['x', 'height'],

@@ -1,6 +1,6 @@
 /** What the parameters of distribution functions must be, and the refusals when they are not. */
 import type { Maker } from '../row';
-import { POSITIVE } from './truth';
+import { setTruth, truth } from '../operation';
 import { where } from './undefined';
 
 /** True for TRUE or a number other than 0: the cumulative share is asked for. */
@@ -14,13 +14,21 @@ export function isCumulative(make: Maker, flag: number): boolean {
   );
 }
 
+/** As with a logarithm, the end 0 of a stretch of numbers above it does not count. */
+const IN_DOMAIN = truth({
+  name: 'is above 0',
+  point: (a) => (a > 0 ? 1 : a <= 0 ? 0 : NaN),
+  enclose: (out, a) => setTruth(out, a.lo >= 0 && a.hi > 0, a.hi <= 0),
+  turnsOn: 0,
+});
+
 /** The value where a parameter is above 0: refused if it is a constant that is not. */
 export function whereAbove0(make: Maker, name: string, parameter: number, value: number): number {
   const known = make.enclosure(parameter);
   if (known && known.lo <= 0) {
     throw make.refuse(`a ${name} that is not above 0`, `give a ${name} above 0`);
   }
-  return where(make, make.apply(POSITIVE, parameter), value, `a ${name} is not above 0`);
+  return where(make, make.apply(IN_DOMAIN, parameter), value, `a ${name} is not above 0`);
 }
 
 /** A constant above 0, refused otherwise. */
