@@ -43,8 +43,10 @@ export function drawTotals(
       let sum = totals[row]!;
       let carry = carries[row]!;
       let most = block.firstDraws[stretch] === 0 ? -Infinity : largest[row]!;
-      for (let i = block.starts[stretch]!; i < end; i++) {
-        const value = measure ? measure(values[i]!, row) : values[i]!;
+      const start = block.starts[stretch]!;
+      if (measure) for (let i = start; i < end; i++) values[i] = measure(values[i]!, row);
+      for (let i = start; i < end; i++) {
+        const value = values[i]!;
         const next = sum + value;
         const added = next - sum;
         carry += sum - (next - added) + (value - added);
