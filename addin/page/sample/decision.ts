@@ -45,9 +45,16 @@ const CHANCES_ROW = 28;
 const DRIVERS_ROW = 40;
 const CHECK_ROW = 15;
 
+const BEST_CASES = `B${BEST_ROW}:D${BEST_ROW}`;
+/** The number of the case that comes first, among the three. */
+const FIRST_CASE = `MATCH(1,B${BEST_ROW + 1}:D${BEST_ROW + 1},0)`;
+const VERDICT =
+  `="largest mean margin: "&INDEX(${BEST_CASES},1,${FIRST_CASE})&", the best in "` +
+  `&TEXT(INDEX(B${BEST_ROW + 5}:D${BEST_ROW + 5},1,${FIRST_CASE}),"0%")&" of the scenarios"`;
+
 export function decisionSheet(): SheetPlan {
   const sheet = new SheetPlan('Decision', { columns: 24, rows: LAST_ROW, frozenRows: 0 })
-    .columnWidths([230, 90, 90, 90, 24, 250, 90, 90, 90, 90, 90, 90, 90, 24])
+    .columnWidths([230, 90, 90, 90, 24, 310, 90, 90, 90, 90, 90, 90, 90, 24])
     .put('A1', 'Decision: how many presses?', 'title')
     .put(
       'A2',
@@ -118,6 +125,7 @@ function answers(sheet: SheetPlan): void {
     .format(best(2, 4), '0.0')
     .format(best(5, 7), '0.0%')
     .format(best(8, 10), '0.0')
+    .put(`A${BEST_ROW + 12}`, VERDICT, 'verdict')
     .put(`A${CHANCES_ROW - 1}`, 'The chance of more bottles than the store holds', 'section')
     .put(`A${CHANCES_ROW}`, `=UNDERCURVE.EXCEEDANCE(${table(BOTTLES)},${cellOf('store')})`)
     .look(`A${CHANCES_ROW}:D${CHANCES_ROW}`, 'head')
@@ -125,10 +133,10 @@ function answers(sheet: SheetPlan): void {
     .look(`B${CHANCES_ROW + 1}:D${CHANCES_ROW + 14}`, 'result')
     .format(`B${CHANCES_ROW + 5}:D${CHANCES_ROW + 13}`, '0.0%')
     .put(`F${DRIVERS_ROW - 2}`, 'What moves the margin of the middle case', 'section')
-    .put(`F${DRIVERS_ROW}`, `=UNDERCURVE.DRIVERS(${DRIVING},${spillOf(MARGIN[1])})`)
-    .look(`F${DRIVERS_ROW}:M${DRIVERS_ROW}`, 'head')
-    .look(`F${DRIVERS_ROW + 1}:F${DRIVERS_ROW + 6}`, 'word')
-    .look(`G${DRIVERS_ROW + 1}:M${DRIVERS_ROW + 6}`, 'result')
+    .put(`F${DRIVERS_ROW}`, `=TRANSPOSE(UNDERCURVE.DRIVERS(${DRIVING},${spillOf(MARGIN[1])}))`)
+    .look(`F${DRIVERS_ROW}:L${DRIVERS_ROW}`, 'head')
+    .look(`F${DRIVERS_ROW + 1}:F${DRIVERS_ROW + 7}`, 'word')
+    .look(`G${DRIVERS_ROW + 1}:L${DRIVERS_ROW + 7}`, 'result')
     .format(`G${DRIVERS_ROW + 1}:L${DRIVERS_ROW + 6}`, '0.00')
     .put(`F${CHECK_ROW - 2}`, 'Check: the linked harvest against its shape', 'section')
     .put(`F${CHECK_ROW - 1}`, `=INDEX(F${CHECK_ROW}#,2,2)`, 'verdict')
@@ -149,7 +157,7 @@ function answers(sheet: SheetPlan): void {
         title: 'Mean margin by the number of presses',
         x: 'case',
         y: '1,000 euros',
-        labels: `B${BEST_ROW}:D${BEST_ROW}`,
+        labels: BEST_CASES,
         values: best(2),
         color: BLUE,
       }),

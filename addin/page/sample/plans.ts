@@ -25,7 +25,7 @@ const range = (column: string): string => `Plans!${column}${FIRST_DRAW - 1}:${co
 
 export function plansSheet(): SheetPlan {
   return new SheetPlan('Plans', { columns: 20, rows: LAST_DRAW + 2, frozenRows: 0 })
-    .columnWidths([210, 90, 90, 90, 90, 90, 30, 110, 80, 30, 330, 130, 30, 190, 80, 80, 80, 80])
+    .columnWidths([210, 90, 90, 90, 90, 90, 30, 110, 80, 30, 450, 210, 30, 190, 80, 80, 80, 80])
     .put('A1', 'Plans: which splits of the harvest are possible', 'title')
     .put(
       'A2',

@@ -28,6 +28,9 @@ const HELP: Readonly<Record<string, string>> = {
   Answers: 'Exact shares, values and means from the shapes, without draws.',
   Plans:
     'Several quantities at once: every plan that keeps to the conditions, drawn evenly or weighted.',
+  Season: 'Inputs that belong together, a scenario a row: linked, chained, by case, summed.',
+  Decision:
+    'From draws to an answer: which case, how sure, what moves it, and a check of the draws.',
 };
 
 export class WorkbookView extends Spreadsheet {

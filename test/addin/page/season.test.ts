@@ -31,6 +31,9 @@ const of = (columns: string[], first: number, last: number) =>
 const numbers = (sheet: string, column: string): number[] =>
   cells(sheet, [column], 9, 8 + N).map(([cell]) => Number(cell));
 
+/** Rows as columns. */
+const turned = (rows: Range) => rows[0]!.map((_, j) => rows.map((row) => row[j]));
+
 const farthest = (a: readonly number[], b: readonly number[]): number =>
   Math.max(...a.map((x, i) => Math.abs(x - b[i]!)));
 
@@ -98,7 +101,11 @@ describe('the sample, from links to a decision', () => {
     );
     const best = call('BESTOF', columns(['V', 'W', 'X']), [[true]]);
     const shown = grid.readSpill('Decision', 'A14');
-    expect(shown).toEqual(best[0]!.map((_, j) => best.map((row) => row[j])));
+    expect(shown).toEqual(turned(best));
+    const share = Math.round(100 * (best[2]!.at(best[0]!.indexOf('chance to be best')) as number));
+    expect(grid.read('Decision', 'A26')).toBe(
+      `largest mean margin: 3 presses, the best in ${share}% of the scenarios`,
+    );
     // Two presses leave apples behind, four cost more than they bring.
     expect(shown.find(([item]) => item === 'place')).toEqual(['place', 3, 1, 2]);
   });
@@ -113,7 +120,7 @@ describe('the sample, from links to a decision', () => {
     const drivers = call('DRIVERS', inputs, margin);
     // A blank of ours spills as an empty text.
     expect(grid.readSpill('Decision', 'F40')).toEqual(
-      drivers.map((row) => row.map((cell) => cell ?? '')),
+      turned(drivers.map((row) => row.map((cell) => cell ?? ''))),
     );
     expect(drivers[1]?.[0]).toBe('price');
   });
