@@ -132,7 +132,7 @@ function answers(sheet: SheetPlan): void {
     .look(`A${CHANCES_ROW + 1}:A${CHANCES_ROW + 14}`, 'word')
     .look(`B${CHANCES_ROW + 1}:D${CHANCES_ROW + 14}`, 'result')
     .format(`B${CHANCES_ROW + 5}:D${CHANCES_ROW + 13}`, '0.0%')
-    .put(`F${DRIVERS_ROW - 2}`, 'What moves the margin of the middle case', 'section')
+    .put(`F${DRIVERS_ROW - 1}`, 'What moves the margin of the middle case', 'section')
     .put(`F${DRIVERS_ROW}`, `=TRANSPOSE(UNDERCURVE.DRIVERS(${DRIVING},${spillOf(MARGIN[1])}))`)
     .look(`F${DRIVERS_ROW}:L${DRIVERS_ROW}`, 'head')
     .look(`F${DRIVERS_ROW + 1}:F${DRIVERS_ROW + 7}`, 'word')
