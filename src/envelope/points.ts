@@ -363,7 +363,11 @@ function piecesOf(heights: Heights, first: number): readonly Piece[] {
   const n = heights.most.length;
   if (n <= MAX_PIECES) return runsOf(heights, first, -1)!;
   // Gaps of all runs together may be what a wanted acceptance leaves, if that takes few runs enough.
-  let gap = ((1 - WANTED_ACCEPTANCE) * sumOf(heights.most)) / MAX_PIECES;
+  // Of heights that are hardly above 0 that is none, which would never grow.
+  let gap = Math.max(
+    ((1 - WANTED_ACCEPTANCE) * sumOf(heights.most)) / MAX_PIECES,
+    Number.MIN_VALUE,
+  );
   for (;;) {
     const runs = runsOf(heights, first, gap);
     if (runs) return runs;

@@ -379,6 +379,12 @@ describe('a counted quantity', () => {
       [['x', 0, 'unbounded', 1]],
       'Density: its area is infinite towards larger x: it does not fall fast enough; give a number as the upper limit instead of unbounded.',
     ],
+    // Less than any number by any scale.
+    [
+      'EXP(-(x^2))',
+      [['x', 687648952645, 687648957645, 1]],
+      'Density: only 0 of proposals are sure to be accepted after 2501 pieces (worst near x = 687649000000); narrow the limits to where the density matters, or simplify the formula there.',
+    ],
     [
       'POISSON.DIST(x,1E12,FALSE)',
       [['x', 0, 'unbounded', 1]],
