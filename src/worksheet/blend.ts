@@ -1,7 +1,7 @@
 /** BLEND: a weighted pool of shapes by shares of area, as a table or as a shape block. */
 import { areaUnder, poolOfTables } from '../density/blend';
 import type { Cell, Range } from '../density/cells';
-import { given } from '../density/cells';
+import { counted, given } from '../density/cells';
 import type { FormulaShape, PlainShape, TableShape } from '../density/shape';
 import { readShapes } from '../density/shape';
 import { DEFAULT_VARIABLE } from '../density/limits';
@@ -34,7 +34,7 @@ export function blend(shares: Range | null, shapes: readonly Range[]): Range {
   if (numbers.length !== shapes.length) {
     throw new InputError(
       SHARES,
-      `${numbers.length} shares for ${shapes.length} shapes`,
+      `${counted(numbers.length, 'share')} for ${counted(shapes.length, 'shape')}`,
       'give one share for each shape',
     );
   }

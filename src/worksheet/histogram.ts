@@ -1,5 +1,6 @@
 /** FROMBINS, FROMPERCENTILES and FROMDATA: a table of points from shares, from judgement, from data. */
 import type { Range } from '../density/cells';
+import { counted } from '../density/cells';
 import type { Point } from '../density/histogram';
 import { binCount, countInBins, steps } from '../density/histogram';
 import { InputError } from '../errors';
@@ -29,7 +30,7 @@ export function fromBins(edges: Range | null, shares: Range | null): Range {
   if (parts.numbers.length !== bounds.numbers.length - 1) {
     throw new InputError(
       where,
-      `${parts.numbers.length} shares for ${bounds.numbers.length} edges`,
+      `${counted(parts.numbers.length, 'share')} for ${counted(bounds.numbers.length, 'edge')}`,
       'give one share for each bin, one less than there are edges',
     );
   }

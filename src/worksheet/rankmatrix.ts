@@ -73,7 +73,10 @@ function requireCorrelations(ranks: Matrix, placeOf: Named['placeOf']): void {
       if (!(value >= -1 && value <= 1)) {
         throw complain(
           `${value} is not between -1 and 1`,
-          Math.abs(value) <= 100 ? `write ${value / 100} or ${value}%` : 'give a fraction',
+          // Just above 1 is hardly meant as a percentage.
+          Math.abs(value) >= 2 && Math.abs(value) <= 100
+            ? `write ${value / 100} or ${value}%`
+            : 'give a number from -1 to 1',
         );
       }
       const mirrored = ranks[j]![i]!;

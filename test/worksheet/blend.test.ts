@@ -101,7 +101,7 @@ describe('blend(shares, shapes…)', () => {
       'fewer shapes',
       [[0.9, 0.1]],
       [TRIANGLE],
-      'shares (argument 1): 2 shares for 1 shapes; give one share for each shape.',
+      'shares (argument 1): 2 shares for 1 shape; give one share for each shape.',
     ],
     [
       'percentages',

@@ -427,6 +427,18 @@ const refused: readonly (readonly [string, () => unknown, string])[] = [
     'rankcorrelations (argument 1), row 1, column 2: 60 is not between -1 and 1; write 0.6 or 60%.',
   ],
   [
+    'a number just outside',
+    () =>
+      shares(
+        [
+          [1, -1.2],
+          [-1.2, 1],
+        ],
+        [[5]],
+      ),
+    'rankcorrelations (argument 1), row 1, column 2: -1.2 is not between -1 and 1; give a number from -1 to 1.',
+  ],
+  [
     'a number far outside',
     () =>
       shares(
@@ -436,7 +448,7 @@ const refused: readonly (readonly [string, () => unknown, string])[] = [
         ],
         [[5]],
       ),
-    'rankcorrelations (argument 1), row 1, column 2: 1000000 is not between -1 and 1; give a fraction.',
+    'rankcorrelations (argument 1), row 1, column 2: 1000000 is not between -1 and 1; give a number from -1 to 1.',
   ],
   [
     'two sides that differ',
