@@ -12,9 +12,10 @@ import { prepareLibrary } from './library';
 import { LongCalls } from './long';
 import { leaveKeysToBrowser, trimMenus } from './menus';
 import { moveBetweenRegions } from './regions';
+import { makeRoom } from './room';
 import { sampleWorkbook } from './sample/workbook';
 import type { CallPlace } from './register';
-import { forget, keepEdits, kept, parsed, saveFile } from './saved';
+import { forget, keepEdits, kept, parsed, saveFile, writtenDown } from './saved';
 import './style/layout.css';
 import './style/page.css';
 import './style/workbook.css';
@@ -40,12 +41,14 @@ moveBetweenRegions();
 const place = element('workbook');
 let app: App | undefined;
 let model: Model | undefined;
+let stopKeeping = (): void => undefined;
 
 /** Puts a workbook in the place of the one shown; throws what the library throws at data it cannot read. */
 async function show(data: object): Promise<void> {
   log.clear();
   long?.clear();
   const next = new Model(data);
+  stopKeeping();
   app?.destroy();
   model = next;
   // The view adds the rest of its environment itself; at any width it shows the same parts.
@@ -55,13 +58,16 @@ async function show(data: object): Promise<void> {
   app.addTemplates(ownTemplates);
   window.undercurveWorkbook = hookFor(model, log);
   await app.mount(place);
-  keepEdits(model);
+  stopKeeping = keepEdits(model);
 }
 
 /** Calculates these cells again, and what depends on them. */
 function recalculate(places: readonly CallPlace[]): void {
-  const cells = places.flatMap((place) => model?.getters.getCell(place)?.id ?? []);
-  if (cells.length > 0) model?.dispatch('EVALUATE_CELLS', { cellIds: cells });
+  if (!model) return;
+  for (const place of places) makeRoom(model, place);
+  const { getters } = model;
+  const cells = places.flatMap((place) => getters.getCell(place)?.id ?? []);
+  if (cells.length > 0) model.dispatch('EVALUATE_CELLS', { cellIds: cells });
 }
 
 async function showKeptOrSample(): Promise<void> {
@@ -91,7 +97,7 @@ dialog.addEventListener('close', () => {
 });
 
 element('save-copy').addEventListener('click', () => {
-  if (model) saveFile('undercurve-workbook.json', model.exportData());
+  if (model) saveFile('undercurve-workbook.json', writtenDown(model));
 });
 
 const file = element('copy-file') as HTMLInputElement;

@@ -2,6 +2,7 @@
  * Calls that may take long, on a page whose grid waits for nothing: such a call runs in
  * a Worker while its cell shows `#WORKING!`, and the cell is calculated again once the
  * answer is there. A cell that meanwhile asks for something else drops its first call.
+ * The grid also tries a formula before it is in a cell; no call begins for that.
  *
  * Not handled: which calls those are (../functions/long.ts).
  */
@@ -36,11 +37,12 @@ export class LongCalls {
     private readonly recalculate: (places: readonly CallPlace[]) => void,
   ) {}
 
-  /** The answer if it is there; else null, and the cell will be calculated again. */
-  replyFor(name: string, args: Arguments, place: CallPlace): Reply | null {
+  /** The answer if it is there; else null, and the cell at `place` will be calculated again. */
+  replyFor(name: string, args: Arguments, place: CallPlace | undefined): Reply | null {
     const key = JSON.stringify([name, args]);
-    this.leaveOthers(place, key);
     const known = this.replies.get(key);
+    if (place === undefined) return known ?? null;
+    this.leaveOthers(place, key);
     if (known) return known;
     let waiting = this.waiting.get(key);
     if (waiting === undefined) {

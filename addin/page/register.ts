@@ -50,7 +50,7 @@ export function registerFunctions(
         const started = performance.now();
         const place = this.__originCellPosition;
         const later: ReplyLater = (ranges) =>
-          long && place && takesLong(entry.name, ranges)
+          long && takesLong(entry.name, ranges)
             ? long.replyFor(entry.name, ranges, place)
             : undefined;
         const result = answer(entry, args as readonly GridArgument[], later);

@@ -7,16 +7,44 @@ import { onEdit } from './edits';
 
 /** Raise the number when the sample changes in a way that old edits would hide. */
 const KEY = 'undercurve.workbook.2';
-/** Milliseconds without an edit before it is kept. */
-const PAUSE = 600;
+/** Milliseconds without an edit before it is kept: writing a large workbook down stops the page for a moment. */
+const PAUSE = 2000;
 
-/** Keeps the model's workbook after each edit from now on; what is never edited is not kept. */
-export function keepEdits(model: Model): void {
+/**
+ * Keeps the model's workbook after each edit from now on; what is never edited is not kept.
+ * Returns what ends that, for a workbook that gives way to another.
+ */
+export function keepEdits(model: Model): () => void {
   let timer: ReturnType<typeof setTimeout> | undefined;
+  const keep = (): void => {
+    if (timer === undefined) return;
+    clearTimeout(timer);
+    timer = undefined;
+    store(JSON.stringify(writtenDown(model)));
+  };
   onEdit(model, keepEdits, () => {
     clearTimeout(timer);
-    timer = setTimeout(() => store(JSON.stringify(model.exportData())), PAUSE);
+    timer = setTimeout(keep, PAUSE);
   });
+  addEventListener('pagehide', keep);
+  return () => {
+    clearTimeout(timer);
+    timer = undefined;
+    removeEventListener('pagehide', keep);
+    model.off('command-dispatched', keepEdits);
+  };
+}
+
+/**
+ * The workbook as data. The library's own way (19.3.7) writes it down twice, shortens one of the two
+ * and reads that back to see whether nothing was lost, which takes four times as long.
+ */
+export function writtenDown(model: Model): object {
+  return (model as unknown as Writer)._exportData(false);
+}
+
+interface Writer {
+  _exportData(shortened: boolean): object;
 }
 
 function store(text: string): void {

@@ -3,24 +3,27 @@ import { Background, type Helper } from '../../../addin/functions/background';
 import { replyOf, type Reply } from '../../../addin/functions/reply';
 import { CallLog } from '../../../addin/page/calls';
 import { LongCalls, WORKING } from '../../../addin/page/long';
+import { makeRoom } from '../../../addin/page/room';
 import { registerFunctions } from '../../../addin/page/register';
 import { gridOf, workbookOf, type Grid } from './grid';
 
 /** Another number in each test: answers are kept. */
 let n = 0;
 let ended = 0;
+let asked = 0;
 let helper: Helper;
 const background = new Background(() => {
   helper = {
     onmessage: null,
     onerror: null,
-    postMessage: () => undefined,
+    postMessage: () => void asked++,
     terminate: () => void ended++,
   };
   return helper;
 });
 let grid: Grid;
 const long = new LongCalls(background, (places) => {
+  for (const place of places) makeRoom(grid.model, place);
   const cellIds = places.map((place) => grid.model.getters.getCell(place)!.id);
   grid.model.dispatch('EVALUATE_CELLS', { cellIds });
 });
@@ -52,7 +55,7 @@ async function answerWith(reply: Reply): Promise<void> {
 
 beforeEach(() => {
   long.clear();
-  ended = 0;
+  ended = asked = 0;
   n += 10;
   grid = gridOf(
     workbookOf({
@@ -97,6 +100,30 @@ describe('a long call in the grid', () => {
     expect([grid.read('Sheet1', 'B1'), grid.read('Sheet1', 'B2')]).toEqual([WORKING, 50]);
     await answerWith({ cells: [[70]] });
     expect(grid.read('Sheet1', 'B1')).toBe(70);
+  });
+
+  test('does not begin while its formula is only tried, as the grid does on Enter [law]', async () => {
+    await answerWith({ cells: [[41]] });
+    const tried = (formula: string) => grid.model.getters.evaluateFormula('Sheet1', formula);
+    expect(asked).toBe(1);
+    expect(tried(`=UNDERCURVE.TEST.PLANS(${n},"other")`)).toBe(WORKING);
+    expect(tried('=UNDERCURVE.TEST.PLANS(A1,A1)')).toEqual([[41]]);
+    expect(asked).toBe(1);
+  });
+
+  test('has room for its answer beyond the end of the sheet [law]', async () => {
+    const { getters } = grid.model;
+    const [rows, columns] = [getters.getNumberRows('Sheet1'), getters.getNumberCols('Sheet1')];
+    const cells = Array.from({ length: rows + 5 }, (_, i) =>
+      Array.from({ length: columns + 2 }, (__, j) => i + j / 100),
+    );
+    for (const cell of ['C1', 'D1']) grid.write('Sheet1', cell, '');
+    await answerWith({ cells });
+    expect(grid.readSpill('Sheet1', 'B1')).toEqual(cells);
+    expect([getters.getNumberRows('Sheet1'), getters.getNumberCols('Sheet1')]).toEqual([
+      rows + 5,
+      columns + 3,
+    ]);
   });
 
   test('shows the message of a wrong input [law]', async () => {
