@@ -17,7 +17,6 @@ import { rescaled } from '../exact/rescale';
 import { PointShares } from '../exact/points';
 import type { ExactShares } from '../exact/shares';
 import { Shares } from '../exact/shares';
-import { bug } from '../errors';
 import { compile, compileSmooth } from '../formula/compile';
 import type { Tape } from '../formula/tape';
 import { powerOfTwo } from '../numeric/float';
@@ -83,13 +82,6 @@ export function prove(shape: PlainShape): Proved {
         (tape?.steps.length ?? 0) * BYTES_PER_STEP,
     };
   });
-}
-
-/** The proof of a shape that is known to be continuous. */
-export function proveCurve(shape: PlainShape): ProvedCurve {
-  const proved = prove(shape);
-  if (proved.kind === 'curve') return proved;
-  throw bug('a counted shape where a continuous one belongs');
 }
 
 function proofOf(shape: PlainShape, key: string): Proved {

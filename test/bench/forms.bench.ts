@@ -7,11 +7,9 @@
 import { spawnSync } from 'node:child_process';
 import { Drawer } from '../../src/draw/column';
 import { promisedAcceptance } from '../../src/envelope/envelope';
-import { proveEnvelope } from '../../src/envelope/prove';
 import type { Envelope } from '../../src/envelope/envelope';
-import { compile } from '../../src/formula/compile';
-import { parse } from '../../src/formula/parse';
 import { keyOf } from '../../src/random/key';
+import { proved } from '../envelope/proved';
 import type { Form } from '../forms/forms';
 import { drawnForms, limitsOf } from '../forms/forms';
 import { inTurn, median, printTable, seconds } from './timing';
@@ -22,10 +20,7 @@ const MOST_DRAWS = 25_000;
 const LAST_FINITE = 36;
 
 function build(form: Form): { envelope: Envelope; drawer: Drawer } {
-  const { density } = form;
-  const source = { text: density, where: 'Formula', tree: parse(density, 'Formula') };
-  const tape = compile([source], ['x'], new Map());
-  const envelope = proveEnvelope(tape, ...limitsOf(form));
+  const envelope = proved(form.density, ...limitsOf(form));
   return { envelope, drawer: new Drawer(envelope) };
 }
 

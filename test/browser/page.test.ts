@@ -3,7 +3,7 @@
  */
 import { readFileSync } from 'node:fs';
 import type { Page } from 'playwright-core';
-import { catalogue } from '../../addin/functions/catalogue';
+import { call } from '../addin/call';
 import {
   goTo,
   message,
@@ -57,8 +57,7 @@ describe('the local workbook', () => {
         ['D', 'E'].map((column) => window.undercurveWorkbook.read('Shapes', `${column}${8 + i}`)),
       ),
     );
-    const draw = catalogue.find(({ name }) => name === 'DRAW');
-    expect(await spill(page, 'Draws', 'C8')).toEqual(draw?.call([block]));
+    expect(await spill(page, 'Draws', 'C8')).toEqual(call('DRAW', block));
   });
 
   test('typing a point changes its draws and evidence; the other column is not recalculated [law]', async () => {

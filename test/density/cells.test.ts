@@ -8,7 +8,7 @@ import {
   sizeOf,
   word,
 } from '../../src/density/cells';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 describe('given', () => {
   it('an omitted argument, an empty one and a single blank are null; larger ranges are not [law]', () => {

@@ -1,7 +1,7 @@
 import type { Cell, Range } from '../../src/density/cells';
 import { Givens, readGivens } from '../../src/density/givens';
 import type { List, PointFunction } from '../../src/formula/given';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { blanksAs, BLANKS } from './shapes';
 
 const named = (...ranges: readonly Range[]): Record<string, unknown> =>

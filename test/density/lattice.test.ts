@@ -1,5 +1,5 @@
 import { latticeOf, MOST_POINTS, within } from '../../src/density/lattice';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const points = (from: number, to: number, step: number): number[] => {
   const { first, last, at } = latticeOf(from, to, step, 'limits');

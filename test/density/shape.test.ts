@@ -1,6 +1,6 @@
 import { CellErrorPassed } from '../../src/errors';
 import type { Range } from '../../src/density/cells';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { blanksAs, BLANKS, formula, frozen, givensOf, read } from './shapes';
 
 const EXP = [['EXP(-x)']];

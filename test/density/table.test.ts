@@ -1,5 +1,5 @@
 import { isPointTable, readPoints, readTable, truncate } from '../../src/density/table';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { blanksAs, BLANKS, frozen, read, table } from './shapes';
 
 const TWO = [

@@ -3,7 +3,7 @@
  * how near to it they are.
  */
 import { below, draw } from '../../src/index';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { Z_FALSE_ALARM } from './statistics';
 
 const ROWS = 100_000;

@@ -10,8 +10,7 @@ import type { Envelope } from '../../src/envelope/envelope';
 import { readShapes } from '../../src/density/shape';
 import { blend } from '../../src/index';
 import { keyOf } from '../../src/random/key';
-import { proveCurve } from '../../src/worksheet/proved';
-import { proved, tableEnvelope } from '../envelope/proved';
+import { proved, provedCurve, tableEnvelope } from '../envelope/proved';
 import { forms } from '../forms/forms';
 
 export interface Target {
@@ -156,7 +155,7 @@ function blended(): Envelope {
     limits: 'limits',
     givens: 3,
   });
-  return proveCurve(shapes[0]!).envelope;
+  return provedCurve(shapes[0]!);
 }
 
 /** A linear pool with two jumps; its cumulative area is elementary. */

@@ -2,8 +2,8 @@
 import type { Axis } from '../../src/density/limits';
 import type { BoxEnvelope, Joint } from '../../src/envelope/boxes';
 import { proveBoxes } from '../../src/envelope/boxes';
-import { parse } from '../../src/formula/parse';
 import { jointOf } from '../../src/worksheet/several';
+import { sourceOf } from '../formula/formulas';
 
 /** name, from, to and, for a counted one, step. */
 export type AxisText = readonly [name: string, from: number, to: number, step?: number];
@@ -13,8 +13,7 @@ export function axesOf(texts: readonly AxisText[]): readonly Axis[] {
 }
 
 export function joint(text: string, axes: readonly Axis[]): Joint {
-  const source = { text, where: 'Formula', tree: parse(text, 'Formula') };
-  return jointOf({ kind: 'several', sources: [source], axes, givens: new Map() });
+  return jointOf({ kind: 'several', sources: [sourceOf(text)], axes, givens: new Map() });
 }
 
 /** @throws {InputError} as the worksheet functions do. */

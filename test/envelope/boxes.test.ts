@@ -1,6 +1,6 @@
 import seedrandom from 'seedrandom';
 import { BoxProver, proveBoxes } from '../../src/envelope/boxes';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { boxFuzz } from './boxFuzz';
 import { axesOf, joint, provedBoxes, type AxisText } from './boxProof';
 import { checkBoxes } from './checkBoxes';

@@ -7,10 +7,9 @@ import seedrandom from 'seedrandom';
 import { Drawer } from '../../src/draw/column';
 import type { Envelope } from '../../src/envelope/envelope';
 import { InputError } from '../../src/errors';
-import { areaOf } from '../../src/exact/area';
 import { keyOf } from '../../src/random/key';
 import { checkEnvelope } from './checkEnvelope';
-import { proved } from './proved';
+import { areaOf, proved } from './proved';
 import type { RandomShape } from './randomFormula';
 import { referenceOf } from './reference';
 

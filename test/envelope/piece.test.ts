@@ -1,19 +1,12 @@
 import { provePiece } from '../../src/envelope/piece';
-import { proveEnvelope } from '../../src/envelope/prove';
-import { compile } from '../../src/formula/compile';
-import { parse } from '../../src/formula/parse';
-
-function envelopeOf(text: string, from: number, to: number): ReturnType<typeof proveEnvelope> {
-  const source = { text, where: 'Formula', tree: parse(text, 'Formula') };
-  return proveEnvelope(compile([source], ['x'], new Map()), from, to);
-}
+import { proved } from './proved';
 
 describe('provePiece', () => {
   // Heights near e^-440, which need no scaling: the product of two of them underflows.
   test.each([-354, -400, -440, -479])(
     'keeps the upper line above the lower one where heights are near e^%i [law]',
     (level) => {
-      const { pieces, exponent } = envelopeOf(`EXP(${level}-500*(x-4)^2)`, 0, 12);
+      const { pieces, exponent } = proved(`EXP(${level}-500*(x-4)^2)`, 0, 12);
       const crossed = pieces.filter(
         (piece) =>
           piece.upperLeft < piece.lowerLeft ||
@@ -28,7 +21,7 @@ describe('provePiece', () => {
 describe('provePiece among the smallest and largest numbers', () => {
   // Found by fuzzing: the cube of the width underflowed to 0 and cancelled an infinite f″.
   test('encloses the area where the width is 10^-302 and f″ overflows [law]', () => {
-    const { areaLo, areaHi } = envelopeOf('EXP(-((1E300*x)^2))', 0, 9);
+    const { areaLo, areaHi } = proved('EXP(-((1E300*x)^2))', 0, 9);
     const area = Math.sqrt(Math.PI) / 2e300;
     expect(areaLo).toBeLessThanOrEqual(area);
     expect(areaHi).toBeGreaterThanOrEqual(area);

@@ -11,7 +11,7 @@ import type { PointEnvelope } from '../../src/envelope/points';
 import { provePoints } from '../../src/envelope/points';
 import { InputError } from '../../src/errors';
 import { compile, compileSmooth } from '../../src/formula/compile';
-import { parse } from '../../src/formula/parse';
+import { sourceOf } from '../formula/formulas';
 import { keyOf } from '../../src/random/key';
 import { randomOpenShape, randomShape } from './randomFormula';
 import type { Reference } from './reference';
@@ -43,7 +43,7 @@ export interface PointsReport {
 
 /** The envelope of a formula in x on a lattice, as the worksheet functions make it. */
 export function provedPoints(text: string, from: number, to: number, step: number): PointEnvelope {
-  const source = { text, where: 'Formula', tree: parse(text, 'Formula') };
+  const source = sourceOf(text);
   const lattice = latticeOf(from, to, step, 'limits');
   const tape = compile([source], ['x'], new Map());
   const smooth = lattice.isWhole ? compileSmooth([source], ['x'], new Map()) : tape;

@@ -1,19 +1,10 @@
 /** Unbounded sides and poles: what is proved of them, what is refused, and the hats drawn from. */
 import { Drawer } from '../../src/draw/column';
-import type { Envelope } from '../../src/envelope/envelope';
 import type { Hat } from '../../src/envelope/hat';
 import { heightOn, placeOn } from '../../src/envelope/hat';
-import { proveEnvelope } from '../../src/envelope/prove';
-import { areaOf } from '../../src/exact/area';
-import { compile } from '../../src/formula/compile';
-import { parse } from '../../src/formula/parse';
+import { areaOf, proved } from './proved';
 
 const U = Infinity;
-
-function prove(text: string, from: number, to: number): Envelope {
-  const tree = parse(text, 'Formula');
-  return proveEnvelope(compile([{ text, where: 'Formula', tree }], ['x'], new Map()), from, to);
-}
 
 /** Density, from, to, area over the limits, source. Those without a closed form were recomputed from the integral. */
 const AREAS: readonly (readonly [string, number, number, number, string])[] = [
@@ -36,7 +27,7 @@ const AREAS: readonly (readonly [string, number, number, number, string])[] = [
 
 describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => {
   test.each(AREAS)('%s from %d to %d encloses its area [published]', (text, from, to, area) => {
-    const envelope = prove(text, from, to);
+    const envelope = proved(text, from, to);
     // One ulp of room: some of the areas above are themselves rounded.
     expect(envelope.areaLo).toBeLessThanOrEqual(area * (1 + 1e-15));
     expect(envelope.areaHi).toBeGreaterThanOrEqual(area * (1 - 1e-15));
@@ -45,7 +36,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
   });
 
   test.each(AREAS)('%s from %d to %d lies under its hats [law]', (text, from, to) => {
-    const { hats, heightAt } = prove(text, from, to);
+    const { hats, heightAt } = proved(text, from, to);
     expect(hats.length).toBeGreaterThan(0);
     const place = { x: 0, t: 0, height: 0 };
     for (const hat of hats) {
@@ -60,7 +51,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
   });
 
   test('a hat lowered by a hundredth is caught by the check above [law]', () => {
-    const { hats, heightAt } = prove('EXP(-x)', 0, U);
+    const { hats, heightAt } = proved('EXP(-x)', 0, U);
     const hat = hats[0]!;
     const place = { x: 0, t: 0, height: 0 };
     placeOn({ ...hat, height: hat.height * 0.99 }, 1, place);
@@ -70,7 +61,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
   test.each(AREAS)(
     '%s from %d to %d is drawn inside its limits, accepted as expected [law]',
     (text, from, to) => {
-      const envelope = prove(text, from, to);
+      const envelope = proved(text, from, to);
       const n = 20_000;
       const { values, proposals } = new Drawer(envelope).column([3, 4], 1, n);
       expect(values.every((x) => x > from && x < to)).toBe(true);
@@ -84,7 +75,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
   test('a heavy side keeps its share at every distance [law]', () => {
     // x^-1.5 on 1…∞: P(X > d) = d^-0.5; n draws, 4.9 standard deviations: false alarm 1e-6 a distance.
     const n = 200_000;
-    const { values } = new Drawer(prove('x^-1.5', 1, U)).column([5, 6], 1, n);
+    const { values } = new Drawer(proved('x^-1.5', 1, U)).column([5, 6], 1, n);
     for (const d of [2, 10, 100, 1e4, 1e6]) {
       const share = d ** -0.5;
       const above = values.filter((x) => x > d).length;
@@ -125,7 +116,7 @@ describe('proveEnvelope(tape, from, to) on unbounded sides and at poles', () => 
       'Density: that its area is finite towards larger x cannot be proved; give a number as the upper limit instead of unbounded.',
     ],
   ])('%s from %d to %d is refused with its own message [law]', (text, from, to, message) => {
-    expect(() => prove(text, from, to)).toThrow(message);
+    expect(() => proved(text, from, to)).toThrow(message);
   });
 });
 

@@ -1,6 +1,6 @@
-import { proveCurve } from '../../src/worksheet/proved';
 import { readShapes } from '../../src/density/shape';
 import { checkPoints, wideFuzz } from './wideFuzz';
+import { provedCurve } from './proved';
 
 describe('proveEnvelope on random formulas of the whole vocabulary', () => {
   test('refuses in words or proves lines that no point passes [law]', () => {
@@ -12,7 +12,7 @@ describe('proveEnvelope on random formulas of the whole vocabulary', () => {
   test('a piece lowered by a millionth is noticed [law]', () => {
     const places = { density: 'density', limits: 'limits', givens: 3 };
     const [shape] = readShapes([['PHI(x)']], [[-2, 2]], [], places).shapes;
-    const { envelope } = proveCurve(shape!);
+    const envelope = provedCurve(shape!);
     const lowered = envelope.pieces.map((p) => ({
       ...p,
       upperLeft: p.lowerLeft * (1 - 1e-6),

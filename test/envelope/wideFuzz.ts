@@ -11,7 +11,7 @@ import { Drawer } from '../../src/draw/column';
 import type { Envelope } from '../../src/envelope/envelope';
 import { placeOn } from '../../src/envelope/hat';
 import { InputError } from '../../src/errors';
-import { proveCurve } from '../../src/worksheet/proved';
+import { provedCurve } from './proved';
 
 const SLACK = 1e-9;
 const PLACES = { density: 'density', limits: 'limits', givens: 3 };
@@ -47,7 +47,7 @@ export function wideFuzz(seed: string, shapes: number, points: number): WideRepo
     };
     try {
       const shape = readShapes([[text]], [limits], [TABLE, LIST], PLACES).shapes[0]!;
-      const { envelope } = proveCurve(shape);
+      const envelope = provedCurve(shape);
       report.proved++;
       report.points += checkPoints(envelope, random, points, fault);
       new Drawer(envelope).column([i, 7], 1, 500);

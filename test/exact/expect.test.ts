@@ -1,10 +1,11 @@
 import fc from 'fast-check';
 import { polylineEnvelope } from '../../src/envelope/polyline';
 import { expectation } from '../../src/exact/expect';
-import { envelopeOf, sharesOf, tapeOf } from './proved';
+import { proved, sharesOf } from '../envelope/proved';
+import { tapeOf } from '../formula/formulas';
 
 function meanOf(density: string, from: number, to: number, quantity: string) {
-  const envelope = envelopeOf(density, from, to);
+  const envelope = proved(density, from, to);
   return expectation(envelope, tapeOf(density), tapeOf(quantity), 'quantity');
 }
 

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { polylineEnvelope } from '../../src/envelope/polyline';
 import { Shares } from '../../src/exact/shares';
-import { envelopeOf, sharesOf } from './proved';
+import { proved, sharesOf } from '../envelope/proved';
 
 /** 12 digits where the density is smooth is what shares.ts promises. */
 const DIGITS = 1e-12;
@@ -35,7 +35,7 @@ describe('area', () => {
   test.each(['x^1.5*(1-x)^0.5', '1+SIN(1/(x+0.001))', 'IF(x<0.3,1,2+x)', '(x-0.4)^2'])(
     'area of %s lies within its proved bounds [law]',
     (text) => {
-      const envelope = envelopeOf(text, 0, 1);
+      const envelope = proved(text, 0, 1);
       const { area } = new Shares(envelope);
       expect(area).toBeGreaterThanOrEqual(envelope.areaLo);
       expect(area).toBeLessThanOrEqual(envelope.areaHi);
@@ -155,7 +155,7 @@ describe('shares of many forms', () => {
   );
 
   test.each(FORMS)('quantile(below(x)) of %s is x, from either side [law]', (text, a, b) => {
-    const envelope = envelopeOf(text, a, b);
+    const envelope = proved(text, a, b);
     const shares = new Shares(envelope);
     const peak = Math.max(...envelope.pieces.map((piece) => piece.lowerLeft));
     let nChecked = 0;

@@ -1,6 +1,6 @@
 import { Shares } from '../../src/exact/shares';
 import { ulp } from '../../src/numeric/float';
-import { envelopeOf, sharesOf } from './proved';
+import { proved, sharesOf } from '../envelope/proved';
 
 const U = Infinity;
 const relative = (got: number, wanted: number): number => Math.abs(got / wanted - 1);
@@ -65,7 +65,7 @@ describe('shares on unbounded limits and at poles', () => {
     ['x^-1.5', 1, U],
     ['EXP(x)', -U, 3],
   ] as const)('quantile(share) of %s has that share, in either tail [law]', (text, from, to) => {
-    const envelope = envelopeOf(text, from, to);
+    const envelope = proved(text, from, to);
     const shares = new Shares(envelope);
     for (const side of ['below', 'above'] as const) {
       for (const share of [1e-30, 1e-12, 1e-6, 1e-4, 0.01, 0.3, 0.5]) {

@@ -1,5 +1,5 @@
 import { evaluator } from '../../src/formula/evaluate';
-import { tapeOf } from '../exact/proved';
+import { tapeOf } from './formulas';
 
 describe('evaluator(tape)', () => {
   test.each([

@@ -1,12 +1,10 @@
 import seedrandom from 'seedrandom';
-import { compile } from '../../src/formula/compile';
 import { Encloser } from '../../src/formula/enclose';
 import { estimatorOf } from '../../src/formula/estimate';
-import { parse } from '../../src/formula/parse';
 import * as I from '../../src/numeric/interval';
+import { tapeOf } from './formulas';
 
-const tapeOf = (text: string) =>
-  compile([{ text, where: 'Formula', tree: parse(text, 'Formula') }], ['x', 'y'], new Map());
+const tapeInXY = (text: string) => tapeOf(text, {}, ['x', 'y']);
 
 /** Cancellation, underflow, roots near 0 and truths near where they change. */
 const TEXTS = [
@@ -26,7 +24,7 @@ const TRUTHS = ['x^2+y^2<=4', 'AND(x+y<=1,x*y>=-2)', 'OR(x<y,NOT(x>0))', 'x*3-y>
 
 describe('Estimator.estimate', () => {
   test.each(TEXTS)('of %s bounds the real value, as its enclosure does [law]', (text) => {
-    const tape = tapeOf(text);
+    const tape = tapeInXY(text);
     const estimator = estimatorOf(tape)!;
     const encloser = new Encloser(tape);
     const random = seedrandom(text);
@@ -51,7 +49,7 @@ describe('Estimator.estimate', () => {
 
   // 0.1 + 0.2 − 0.3 is 2^-54 in doubles' real values and 2^-54 · 2 in doubles' arithmetic.
   test('knows what rounding hides: a bound smaller than that error would fail [law]', () => {
-    const estimator = estimatorOf(tapeOf('0.1+x-0.3'))!;
+    const estimator = estimatorOf(tapeInXY('0.1+x-0.3'))!;
     estimator.estimate([0.2, 0]);
     expect(estimator.value).toBe(2 ** -54);
     expect(estimator.error).toBeGreaterThan(2 ** -55);
@@ -59,7 +57,7 @@ describe('Estimator.estimate', () => {
   });
 
   test.each(TRUTHS)('settles %s as its enclosure does [law]', (text) => {
-    const tape = tapeOf(text);
+    const tape = tapeInXY(text);
     const estimator = estimatorOf(tape)!;
     const encloser = new Encloser(tape);
     const random = seedrandom(text);
@@ -77,12 +75,12 @@ describe('Estimator.estimate', () => {
   });
 
   test('leaves a truth open where doubles cannot tell it [law]', () => {
-    const estimator = estimatorOf(tapeOf('x*3<=y'))!;
+    const estimator = estimatorOf(tapeInXY('x*3<=y'))!;
     estimator.estimate([0.1, 0.30000000000000004]);
     expect(estimator.value).toBeNaN();
   });
 
   test('is not made for functions without a rule [law]', () => {
-    expect(estimatorOf(tapeOf('SIN(x)'))).toBeNull();
+    expect(estimatorOf(tapeInXY('SIN(x)'))).toBeNull();
   });
 });

@@ -1,39 +1,26 @@
 /** Lists among the givens, long sums, and names that are cell addresses. */
 import type { Cell, Range } from '../../src/index';
-import { acceptance, draw, envelope, InputError } from '../../src/index';
-import { compile, MAX_OPERATIONS } from '../../src/formula/compile';
+import { acceptance, draw, envelope } from '../../src/index';
+import { MAX_OPERATIONS } from '../../src/formula/compile';
 import { evaluator } from '../../src/formula/evaluate';
-import type { GivenMap } from '../../src/formula/given';
-import { parse } from '../../src/formula/parse';
 import type { Tape } from '../../src/formula/tape';
 import { proveEnvelope } from '../../src/envelope/prove';
-
-function tapeOf(text: string, givens: GivenMap): Tape {
-  return compile([{ text, where: 'Formula', tree: parse(text, 'Formula') }], ['x'], givens);
-}
+import { messageOf } from '../message';
+import type { Givens } from './formulas';
+import { tapeOf } from './formulas';
 
 /** Invented weights of juice bottles, spread evenly around 4. */
 function values(n: number): number[] {
   return Array.from({ length: n }, (_, i) => 4 + 3 * (((i * 0.6180339887498949) % 1) - 0.5));
 }
 
-function givensOf(n: number, more: Record<string, number> = {}): GivenMap {
+function givensOf(n: number, more: Record<string, number> = {}): Givens {
   const list = { kind: 'list', values: values(n), fingerprint: '' } as const;
-  return new Map<string, number | typeof list>([['obs', list], ...Object.entries(more)]);
+  return { obs: list, ...more };
 }
 
 function column(name: string, numbers: readonly number[]): Range {
   return [[name], ...numbers.map((value): Cell[] => [value])];
-}
-
-function messageOf(work: () => unknown): string {
-  try {
-    work();
-  } catch (error) {
-    if (error instanceof InputError) return error.message;
-    throw error;
-  }
-  return 'no error';
 }
 
 const nActive = ({ steps }: Tape): number => steps.filter((step) => step.nOperands > 0).length;
@@ -153,7 +140,7 @@ describe('collectSums', () => {
       values: values(1000).map((v) => 1e6 + v),
       fingerprint: '',
     } as const;
-    const { steps } = tapeOf('SUM((obs-x)^2)', new Map([['obs', list]]));
+    const { steps } = tapeOf('SUM((obs-x)^2)', { obs: list });
     const constants = steps.flatMap(({ enclosure }) => (enclosure ? [enclosure] : []));
     expect(constants.length).toBeGreaterThan(0);
     for (const { lo, hi } of constants) expect(hi - lo).toBeLessThanOrEqual(1e-9 * Math.abs(lo));

@@ -1,7 +1,8 @@
 import { InputError } from '../../src/errors';
 import { parse } from '../../src/formula/parse';
 import type { Tree } from '../../src/formula/tree';
-import { messageOf, refusalOf, tapeOf, valueOf } from './formulas';
+import { messageOf } from '../message';
+import { refusalOf, tapeOf, valueOf } from './formulas';
 
 /** A tree in brackets, operator first, so that shapes can be read. */
 function shown(tree: Tree | null): string {

@@ -1,12 +1,13 @@
 /** Function tables among the givens, as operations of a formula and as cells. */
 import fc from 'fast-check';
 import type { Cell, Range } from '../../src/index';
-import { draw, envelope, InputError } from '../../src/index';
+import { draw, envelope } from '../../src/index';
 import type { Operation } from '../../src/formula/operation';
 import { turningLevel } from '../../src/formula/operation';
 import { pointFunction } from '../../src/formula/operations/points';
 import * as I from '../../src/numeric/interval';
 import * as J from '../../src/numeric/jet';
+import { messageOf } from '../message';
 
 /** Rises from 1 to 3, jumps to 2, is level, falls to 0: jumps at 0 and 10, bends at 20 and 36. */
 const X = [0, 10, 10, 20, 36];
@@ -25,16 +26,6 @@ function over(operation: Operation, lo: number, hi: number): J.Jet {
 
 function at(operation: Operation, u: number): number {
   return operation.point(u, u, u);
-}
-
-function messageOf(work: () => unknown): string {
-  try {
-    work();
-  } catch (error) {
-    if (error instanceof InputError) return error.message;
-    throw error;
-  }
-  return 'no error';
 }
 
 describe('pointFunction', () => {

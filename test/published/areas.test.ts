@@ -6,10 +6,9 @@
  */
 import { Drawer } from '../../src/draw/column';
 import type { Envelope } from '../../src/envelope/envelope';
-import { areaOf } from '../../src/exact/area';
 import { keyOf } from '../../src/random/key';
 import { Z_FALSE_ALARM } from '../draw/statistics';
-import { proved } from '../envelope/proved';
+import { areaOf, proved } from '../envelope/proved';
 
 interface Entry {
   readonly name: string;

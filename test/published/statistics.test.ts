@@ -6,6 +6,7 @@ import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Range } from '../../src/index';
 import { exceedance, summary } from '../../src/index';
+import { columnOf } from '../worksheet/shapes';
 
 /** The first column of a file beside this one, without its heading. */
 function column(file: string): number[] {
@@ -13,8 +14,6 @@ function column(file: string): number[] {
   const lines = text.trim().split('\n').slice(1);
   return lines.map((line) => Number(line.split(',')[0]));
 }
-
-const rangeOf = (values: readonly number[]): Range => values.map((value) => [value]);
 
 /** The figure of an item. */
 function figure(spill: Range, item: string, at = 1): number {
@@ -48,7 +47,7 @@ describe('summary', () => {
   ])(
     'summary(%s) has the certified mean and deviation [published]',
     (_, data, mean, sd, digits) => {
-      const spill = summary(rangeOf(data), null, null, null);
+      const spill = summary(columnOf(data), null, null, null);
       expect(Math.abs(figure(spill, 'mean') / mean - 1)).toBeLessThanOrEqual(1e-14);
       expect(Math.abs(figure(spill, 'standard deviation') / sd - 1)).toBeLessThanOrEqual(digits);
     },
@@ -56,7 +55,7 @@ describe('summary', () => {
 
   // Azzalini & Bowman (1990); quantiles of type 7 (the rule of PERCENTILE.INC) as R 4.2 gives them.
   it('summary(Old Faithful) has its mean, deviation and percentiles [published]', () => {
-    const spill = summary(rangeOf(column('faithful.csv')), [[0.1, 0.5, 0.9]], null, null);
+    const spill = summary(columnOf(column('faithful.csv')), [[0.1, 0.5, 0.9]], null, null);
     const figures = ['rows', 'mean', 'standard deviation', 'P10', 'P50', 'P90'];
     const published = [272, 3.48778308823529, 1.14137125110521, 1.8517, 4, 4.7];
     figures.forEach((item, i) => {
@@ -71,7 +70,7 @@ describe('summary', () => {
       ...[95.1772, 95.1567, 95.1937, 95.1959, 95.1442, 95.061],
       ...[95.1591, 95.1195, 95.1065, 95.0925, 95.199, 95.1682],
     ];
-    const spill = summary(rangeOf(data), [[10.7 / 11]], null, null);
+    const spill = summary(columnOf(data), [[10.7 / 11]], null, null);
     expect(Math.abs((spill[6]![1] as number) - 95.1981)).toBeLessThanOrEqual(5e-5);
   });
 });
@@ -79,7 +78,7 @@ describe('summary', () => {
 describe('exceedance', () => {
   // Old Faithful: 97 of 272 eruptions are shorter than 3 minutes (R 4.2).
   it('exceedance(Old Faithful, 3) counts its short eruptions [published]', () => {
-    const spill = exceedance(rangeOf(column('faithful.csv')), [[3]], null, null);
+    const spill = exceedance(columnOf(column('faithful.csv')), [[3]], null, null);
     expect(figure(spill, 'chance below')).toBe(97 / 272);
   });
 

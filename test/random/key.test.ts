@@ -3,8 +3,8 @@ import { sha256 } from '@noble/hashes/sha2';
 import { bytesToHex } from '@noble/hashes/utils';
 import fc from 'fast-check';
 import seedrandom from 'seedrandom';
-import { InputError } from '../../src/errors';
 import { keyOf, keyText } from '../../src/random/key';
+import { messageOf } from '../message';
 
 /** ARC4 keyed by the characters of a text, 256 outputs dropped, four bytes to a word, big end first. */
 function arc4Words(text: string, count: number): number[] {
@@ -26,16 +26,6 @@ function arc4Words(text: string, count: number): number[] {
     bytes.slice(256 + 4 * w, 260 + 4 * w).reduce((word, byte) => word * 256 + byte, 0),
   );
 }
-
-const messageOf = (call: () => unknown) => {
-  try {
-    call();
-  } catch (error) {
-    if (error instanceof InputError) return error.message;
-    throw error;
-  }
-  return 'no error';
-};
 
 describe('keyOf', () => {
   it('sha256 of "" and "abc" are the standard digests [published]', () => {

@@ -1,6 +1,6 @@
 import type { Range } from '../../src/index';
 import { cases, CellErrorPassed, draw } from '../../src/index';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { rankCorrelation, Z_FALSE_ALARM } from '../draw/statistics';
 
 const SEED = [['plan-2027']];

@@ -1,6 +1,7 @@
-import type { Cell, Range } from '../../src/index';
+import type { Range } from '../../src/index';
 import { CellErrorPassed, check, draw, quantile, stratified } from '../../src/index';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
+import { line, overall, text } from './checks';
 
 const SEED = [['plan-2027']];
 const NORMAL = [['EXP(-0.5*((x-40)/5)^2)']];
@@ -10,15 +11,6 @@ const drawn = (rows: number, density: Range = NORMAL, limits: Range | null = WHO
 const moved = (values: Range, by: (x: number, i: number) => number): Range =>
   values.map(([x], i) => [by(x as number, i)]);
 
-const text = (cell: Cell): string => (typeof cell === 'string' ? cell : '');
-
-/** The row of an item, without its name. */
-function line(spill: Range, item: string): readonly Cell[] {
-  const row = spill.find(([name]) => text(name!).startsWith(item));
-  if (row === undefined) throw new Error(`no row ${item}`);
-  return row.slice(1);
-}
-const overall = (spill: Range): string => text(spill[1]![1]!);
 const signs = (spill: Range): string[] =>
   spill.flatMap(([item, , , , , p]) =>
     typeof p === 'number' && p < 0.01 / 17 ? [text(item!)] : [],

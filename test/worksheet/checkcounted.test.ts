@@ -1,16 +1,12 @@
-import type { Cell, Range } from '../../src/index';
+import type { Range } from '../../src/index';
 import { check, draw } from '../../src/index';
+import { line, overall } from './checks';
 
 const SEED = [['plan-2027']];
 const POISSON = [['POISSON.DIST(crates,4.5,FALSE)']];
 const COUNTS = [['crates', 0, 'unbounded', 1]];
 const drawn = (rows: number, density: Range = POISSON, limits: Range = COUNTS): Range =>
   draw(density, limits, [[rows]], SEED, [['crates']], []);
-const text = (cell: Cell): string => (typeof cell === 'string' ? cell : '');
-const overall = (spill: Range): string => text(spill[1]![1]!);
-function line(spill: Range, item: string): readonly Cell[] {
-  return spill.find(([name]) => text(name!).startsWith(item))!.slice(1);
-}
 
 describe('check of a counted shape', () => {
   it('compares percentiles, moments, cells of values, order, and values that are none [law]', () => {

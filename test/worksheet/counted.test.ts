@@ -15,7 +15,7 @@ import {
   stratified,
 } from '../../src/index';
 import { FALSE_ALARM, goodnessOfFit } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import type { CountedShape } from './countedShapes';
 import { COUNTED, poissonBelow } from './countedShapes';
 import { itemsOf, numbersOf } from './shapes';

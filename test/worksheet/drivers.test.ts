@@ -1,7 +1,7 @@
 import type { Cell, Range } from '../../src/index';
 import { CellErrorPassed, draw, drivers } from '../../src/index';
 import { Z_FALSE_ALARM } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const SEED = [['plan-2027']];
 const LABELS = [['harvest', 'pressing', 'storage', 'price']];

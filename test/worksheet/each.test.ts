@@ -3,7 +3,7 @@ import type { Cell, Range } from '../../src/index';
 import { below, CellErrorPassed, draw, each } from '../../src/index';
 import { MAX_DIFFERENT } from '../../src/worksheet/each';
 import { FALSE_ALARM, goodnessOfFit } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const SEED = [['plan-2027']];
 const LABEL = [['days in store']];

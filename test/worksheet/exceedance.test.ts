@@ -4,8 +4,8 @@ import { chanceOf } from '../../src/evidence/chance';
 import { chanceInterval, clopperPearson, wilson } from '../../src/evidence/proportion';
 import { rowsWorth, sharesOf } from '../../src/evidence/weights';
 import { jackknife, skewed, uniform } from '../evidence/samples';
+import { columnOf } from './shapes';
 
-const rangeOf = (values: ArrayLike<number>): Range => Array.from(values, (value) => [value]);
 const at = (spill: Range, item: string, column = 1): Cell => {
   const row = spill.find(([name]) => name === item);
   if (row === undefined) throw new Error(`no ${item}`);
@@ -35,7 +35,7 @@ describe('exceedance', () => {
   });
 
   it('has exact intervals for few rows and Wilson’s for many [law]', () => {
-    const values = rangeOf(Array.from({ length: 1000 }, (_, i) => i));
+    const values = columnOf(Array.from({ length: 1000 }, (_, i) => i));
     for (const [above, interval] of [
       [29, clopperPearson],
       [30, wilson],
@@ -75,7 +75,7 @@ describe('exceedance', () => {
       null,
     );
     [a, b].forEach((own, j) => {
-      const alone = exceedance(rangeOf(own), [[0.5]], null, null);
+      const alone = exceedance(columnOf(own), [[0.5]], null, null);
       alone
         .slice(1)
         .forEach(([item, value]) => expect(at(both, item as string, j + 1)).toBe(value));
@@ -91,8 +91,8 @@ describe('exceedance', () => {
 
   it('has weighted chances that add up to 1 [law]', () => {
     const values = uniform(500, 'sum').map((u) => Math.floor(5 * u));
-    const weights = rangeOf(skewed(500, 'sum weights'));
-    const spill = exceedance(rangeOf(values), [[2]], null, weights);
+    const weights = columnOf(skewed(500, 'sum weights'));
+    const spill = exceedance(columnOf(values), [[2]], null, weights);
     const chances = ['above', 'equal', 'below'].map(
       (side) => at(spill, `chance ${side}`) as number,
     );

@@ -10,7 +10,7 @@ import {
 } from '../../src/index';
 import { averageRanks, correlationOfRanks, rankCorrelations } from '../../src/numeric/ranks';
 import { FALSE_ALARM, goodnessOfFit, Z_FALSE_ALARM } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const SEED = [['plan-2027']];
 const LABEL = [['links']];

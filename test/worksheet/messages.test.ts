@@ -4,7 +4,7 @@
  */
 import type { Cell, Range } from '../../src/index';
 import { acceptance, CellErrorPassed, draw, envelope, InputError, profile } from '../../src/index';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 interface Given {
   readonly density?: Range | string | null;

@@ -1,7 +1,7 @@
 import type { Cell, Range } from '../../src/index';
 import { below, CellErrorPassed, draw, pick, thin } from '../../src/index';
 import { FALSE_ALARM, goodnessOfFit } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const SEED = [['plan-2027']];
 const LABEL = [['seasons']];

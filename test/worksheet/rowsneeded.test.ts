@@ -1,7 +1,7 @@
 import type { Cell, Range } from '../../src/index';
 import { draw, rowsNeeded, summary } from '../../src/index';
+import { columnOf } from './shapes';
 
-const rangeOf = (values: ArrayLike<number>): Range => Array.from(values, (value) => [value]);
 const at = (spill: Range, item: string): Cell => {
   const row = spill.find(([name]) => name === item);
   if (row === undefined) throw new Error(`no ${item}`);
@@ -21,7 +21,7 @@ describe('rowsNeeded', () => {
   // z(.975) s / h squared is 1536.6 for s/h = 20, A&S 26.2; t adds two rows: t(1537) = 1.96150, and
   // (1.96150 · 20)² = 1539.0.
   it('rowsNeeded(s = 1, halfwidth 0.05) is 1540, the least with t s / √n ≤ 0.05 [law]', () => {
-    const values = rangeOf([-1, 1].map((value) => value * Math.SQRT1_2));
+    const values = columnOf([-1, 1].map((value) => value * Math.SQRT1_2));
     expect(at(rowsNeeded(values, null, [[0.05]], null), 'rows needed')).toBe(1540);
   });
 
@@ -72,7 +72,7 @@ describe('rowsNeeded', () => {
       /^fewer than 30 rows lie within the halfwidth on one side: judged by \d+ within [\d.]+$/,
     );
     expect(at(spill, 'rows needed')).toBeGreaterThan(10_000);
-    const bottom = rowsNeeded(rangeOf([5, 5, 5, 9]), [[0.1]], [[1]], null);
+    const bottom = rowsNeeded(columnOf([5, 5, 5, 9]), [[0.1]], [[1]], null);
     expect(at(bottom, 'rows needed')).toBe('unbounded');
   });
 

@@ -9,7 +9,7 @@ import {
   profile,
   proposals,
 } from '../../src/index';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const PLANS: Range = [
   ['name', 'from', 'to'],

@@ -1,6 +1,7 @@
 /** Shape lists: one input a line, one column each. */
 import type { Cell, Range } from '../../src/index';
-import { acceptance, CellErrorPassed, draw, envelope, InputError, profile } from '../../src/index';
+import { acceptance, CellErrorPassed, draw, envelope, profile } from '../../src/index';
+import { messageOf } from '../message';
 
 const HEADINGS = ['label', 'density', 'from', 'to', 'm', 's'];
 const LINES: Cell[][] = [
@@ -11,16 +12,6 @@ const LINES: Cell[][] = [
 const LIST: Range = [HEADINGS, ...LINES];
 const ROWS: Range = [[50]];
 const SEED: Range = [['plan-2027']];
-
-function messageOf(work: () => unknown): string {
-  try {
-    work();
-  } catch (error) {
-    if (error instanceof InputError) return error.message;
-    throw error;
-  }
-  return 'no error';
-}
 
 /** The line as a block of two columns. */
 function block(line: readonly Cell[]): Range {

@@ -67,6 +67,11 @@ export const SHAPES: readonly Tried[] = [
   ]),
 ];
 
+/** Values as a column of cells. */
+export function columnOf(values: ArrayLike<number>): Range {
+  return Array.from(values, (value) => [value]);
+}
+
 /** The numbers below a heading row. */
 export function numbersOf(range: Range): readonly (readonly number[])[] {
   return range.slice(1) as readonly (readonly number[])[];

@@ -3,7 +3,7 @@ import { below, draw, stratified } from '../../src/index';
 import { strataOf } from '../../src/draw/stratified';
 import { keyOf } from '../../src/random/key';
 import { correlation, FALSE_ALARM, goodnessOfFit, Z_FALSE_ALARM } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const SEED = [['plan-2027']];
 const LABEL = [['yield']];

@@ -8,9 +8,9 @@ import {
   summary,
 } from '../../src/index';
 import { skewed, uniform } from '../evidence/samples';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
+import { columnOf } from './shapes';
 
-const rangeOf = (values: ArrayLike<number>): Range => Array.from(values, (value) => [value]);
 const HARVEST: Range = [['harvest'], [31], [28], [40], [35], [30]];
 
 /** A zero at the end of a column that is not skewed. */
@@ -59,15 +59,15 @@ describe('summary', () => {
 
   it('is the same for a column, for its row, and in any order of the rows [law]', () => {
     const values = Array.from(skewed(200, 'order'));
-    const own = summary(rangeOf(values), null, null, null);
+    const own = summary(columnOf(values), null, null, null);
     expect(summary([values], null, null, null)).toEqual(own);
-    expect(summary(rangeOf([...values].reverse()), null, null, null)).toEqual(own);
+    expect(summary(columnOf([...values].reverse()), null, null, null)).toEqual(own);
   });
 
   it('gives each column what it gives alone [law]', () => {
     const [a, b] = [skewed(300, 'a'), uniform(300, 'b')];
     const both = summary([['a', 'b'], ...Array.from(a, (x, i) => [x, b[i]!])], null, null, null);
-    const alone = [a, b].map((of) => summary(rangeOf(of), null, null, null));
+    const alone = [a, b].map((of) => summary(columnOf(of), null, null, null));
     both.slice(1).forEach((row, i) => {
       expect(row.slice(1)).toEqual(alone.flatMap((spill) => spill[i + 1]!.slice(1)));
     });
@@ -105,7 +105,7 @@ describe('summary', () => {
 
   it('notes a skewness that the rows are too few for, and rows that are all alike [law]', () => {
     const rare = [...Array<number>(49).fill(1), 500];
-    expect(cellsOf(summary(rangeOf(rare), null, null, null), 'note')[0]).toBe(
+    expect(cellsOf(summary(columnOf(rare), null, null, null), 'note')[0]).toBe(
       'so skewed (skewness 6.9) or unevenly weighted that the interval of the mean may be too narrow',
     );
     const same = summary([[4], [4], [4]], null, null, null);
@@ -117,10 +117,10 @@ describe('summary', () => {
 
   it('with equal weights is that without; rows of weight 0 count for nothing [law]', () => {
     const values = skewed(100, 'weights');
-    const own = summary(rangeOf(values), null, null, null);
-    expect(summary(rangeOf(values), null, null, rangeOf(values.map(() => 2.5)))).toEqual(own);
+    const own = summary(columnOf(values), null, null, null);
+    expect(summary(columnOf(values), null, null, columnOf(values.map(() => 2.5)))).toEqual(own);
     const more = [...values, 1e9, -1e9];
-    const spill = summary(rangeOf(more), null, null, rangeOf([...values.map(() => 2.5), 0, 0]));
+    const spill = summary(columnOf(more), null, null, columnOf([...values.map(() => 2.5), 0, 0]));
     // The shares are 1/100 but for a rounding.
     for (const [i, row] of spill.slice(2).entries()) {
       row.slice(1).forEach((cell, j) => {
@@ -141,12 +141,12 @@ describe('summary', () => {
   it('holds no number that is not finite, whatever the size of the values [law]', () => {
     for (const scale of [1e-300, 1e-160, 1, 1e160, 9e299]) {
       const values = skewed(60, 'finite').map((value) => Math.min(1, value / 5) * scale);
-      for (const weights of [null, rangeOf(uniform(60, 'finite weights'))]) {
-        const cells = summary(rangeOf(values), null, null, weights).slice(1).flat();
+      for (const weights of [null, columnOf(uniform(60, 'finite weights'))]) {
+        const cells = summary(columnOf(values), null, null, weights).slice(1).flat();
         for (const cell of cells) {
           if (typeof cell === 'number') expect(Number.isFinite(cell)).toBe(true);
         }
-        const [mean, lo, hi] = cellsOf(summary(rangeOf(values), null, null, weights), 'mean');
+        const [mean, lo, hi] = cellsOf(summary(columnOf(values), null, null, weights), 'mean');
         expect((lo as number) < (mean as number) && (mean as number) < (hi as number)).toBe(true);
       }
     }

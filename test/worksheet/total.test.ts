@@ -7,7 +7,7 @@ import gammainc from '@stdlib/math-base-special-gammainc';
 import type { Range } from '../../src/index';
 import { draw, total } from '../../src/index';
 import { correlation, FALSE_ALARM, goodnessOfFit, Z_FALSE_ALARM } from '../draw/statistics';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { numbersOf } from './shapes';
 
 const SEED = [['plan-2027']];

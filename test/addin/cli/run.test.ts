@@ -1,6 +1,7 @@
 import { version } from '../../../package.json';
 import { run } from '../../../addin/cli/run';
 import { catalogue } from '../../../addin/functions/catalogue';
+import { call } from '../call';
 
 const BLOCK = [
   ['density', 'EXP(-0.5*((x-m)/s)^2)'],
@@ -33,9 +34,8 @@ describe('undercurve call', () => {
   const answer = ran(['call', 'UNDERCURVE.DRAW', args]);
 
   test('prints the cells of the function as JSON, one row a line [law]', () => {
-    const draw = catalogue.find(({ name }) => name === 'DRAW');
     expect(answer).toEqual({ status: 0, err: '', out: expect.any(String) as string });
-    expect(JSON.parse(answer.out)).toEqual(draw?.call([BLOCK]));
+    expect(JSON.parse(answer.out)).toEqual(call('DRAW', BLOCK));
     expect(answer.out.trimEnd().split('\n')).toHaveLength(5 + 2);
   });
 

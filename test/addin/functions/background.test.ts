@@ -3,7 +3,7 @@ import { Background, type Helper, type Task } from '../../../addin/functions/bac
 import { takesLong } from '../../../addin/functions/long';
 import { cellsOf, replyOf, type Arguments, type Reply } from '../../../addin/functions/reply';
 import { CellErrorPassed, InputError } from '../../../src/index';
-import { messageOf } from '../../formula/formulas';
+import { messageOf } from '../../message';
 
 class TestHelper implements Helper {
   onmessage: Helper['onmessage'] = null;

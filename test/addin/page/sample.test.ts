@@ -3,10 +3,10 @@
  * the functions give, and an edit recalculates only what depends on it.
  */
 import type { Range } from '../../../src/index';
-import { catalogue } from '../../../addin/functions/catalogue';
 import { prepareLibrary } from '../../../addin/page/library';
 import { problemsIn, sheetAddressOf } from '../../../addin/page/message';
 import { sampleWorkbook } from '../../../addin/page/sample/workbook';
+import { call } from '../call';
 import { type Grid, gridOf } from './grid';
 
 const log = prepareLibrary();
@@ -62,13 +62,6 @@ const ALL = [
 
 const column = (grid: Grid, sheet: string, address: string) =>
   grid.readSpill(sheet, address).map(([cell]) => Number(cell));
-
-/** Calls a function of the catalogue directly. */
-function call(name: string, ...args: (Range | null)[]): Range {
-  const entry = catalogue.find((each) => each.name === name);
-  if (entry === undefined) throw new Error(`no ${name}`);
-  return entry.call(args);
-}
 
 /** The cells of a rectangle on sheet "Shapes", as a range. */
 function shape(grid: Grid, columns: readonly string[], first: number, last: number): Range {

@@ -3,22 +3,15 @@
  * functions give for its cells, and the scenarios' arithmetic is right row by row.
  */
 import type { Range } from '../../../src/index';
-import { catalogue } from '../../../addin/functions/catalogue';
 import { prepareLibrary } from '../../../addin/page/library';
 import { sampleWorkbook } from '../../../addin/page/sample/workbook';
+import { call } from '../call';
 import { gridOf } from './grid';
 
 const grid = gridOf(sampleWorkbook(), prepareLibrary());
 const seed: Range = [['plan-2027']];
 const N = 500;
 const one = (value: string | number): Range => [[value]];
-
-/** Calls a function of the catalogue directly. */
-function call(name: string, ...args: (Range | null)[]): Range {
-  const entry = catalogue.find((each) => each.name === name);
-  if (entry === undefined) throw new Error(`no ${name}`);
-  return entry.call(args);
-}
 
 /** Cells of some columns, from one row to another. */
 function cells(sheet: string, columns: readonly string[], first: number, last: number): Range {
