@@ -254,7 +254,12 @@ export class BoxProver {
     this.spent += rest.nSteps;
     const { density, defined: ofRest } = rest.overBox(corners.lo, corners.hi, []);
     const defined = Math.max(conditions.defined, ofRest) as Defined;
-    if (ofRest === Defined.Nowhere) return this.nowhere(box, rest.undefinedReason());
+    if (ofRest === Defined.Nowhere) {
+      if (conditions.open === 0 && conditions.defined === Defined.Everywhere)
+        return this.nowhere(box, rest.undefinedReason());
+      // Where a condition may fail smaller boxes will tell.
+      return this.bounded(box, conditions.open, Defined.InPart, density.v, 0);
+    }
     const least = density.v.lo;
     const v = I.interval(density.v.lo, density.v.hi);
     if (ofRest === Defined.Everywhere && v.hi <= 0) {
@@ -381,7 +386,13 @@ export class BoxProver {
     const { lo, hi } = this.space.corners(box);
     const { hi: measure } = this.space.measure(box);
     if (measure > NEGLIGIBLE * this.wholeMeasure)
-      throw refusal.undefinedIn(this.space.axes, lo, hi, reason);
+      throw refusal.undefinedIn(
+        this.space.axes,
+        lo,
+        hi,
+        reason,
+        this.conditions.length > 0 ? 'the conditions hold there' : '',
+      );
     if (this.dropped === 0) {
       this.notes.push(
         `the density is undefined next to ${refusal.pointText(this.space.axes, lo)}, where ${reason}; nothing is drawn there`,
@@ -395,7 +406,10 @@ export class BoxProver {
     const centre = this.space.centre(box);
     this.rest!.densityAtPoint(centre, this.height);
     const value = this.exponent === 0 ? this.height.hi : undefined;
-    return refusal.negativeAt(this.space.axes, centre, value);
+    const { lo, hi } = this.space.corners(this.space.whole());
+    const { density, defined } = this.rest!.overBox(lo, hi, []);
+    const isNeverAbove = defined === Defined.Everywhere && density.v.hi <= 0;
+    return refusal.negativeAt(this.space.axes, centre, value, isNeverAbove);
   }
 
   /** The axis along which halving leaves least open; −1 where none can be halved. */
@@ -445,12 +459,18 @@ export class BoxProver {
   private refuseUrgent({ box, defined }: Part): never {
     const { lo, hi } = this.space.corners(box);
     if (defined === Defined.Everywhere) throw refusal.unboundedIn(this.space.axes, lo, hi);
-    throw refusal.undefinedIn(
-      this.space.axes,
-      lo,
-      hi,
-      (this.rest ?? this.conditions[0]!).undefinedReason(),
-    );
+    const { rest } = this;
+    const isOfRest = rest !== null && rest.overBox(lo, hi, []).defined !== Defined.Everywhere;
+    throw isOfRest && box.open !== 0
+      ? refusal.unsettledDomain(this.space.axes, lo, rest.undefinedReason())
+      : refusal.undefinedIn(this.space.axes, lo, hi, this.reasonIn(lo, hi));
+  }
+
+  /** Why a box is undefined, by the first of all formulas that is. */
+  private reasonIn(lo: readonly number[], hi: readonly number[]): string {
+    const all = this.rest ? [this.rest, ...this.conditions] : this.conditions;
+    const bad = all.find((each) => each.overBox(lo, hi, []).defined !== Defined.Everywhere);
+    return (bad ?? all[0]!).undefinedReason();
   }
 
   /** Proves f ≥ −10^-12 of the peak wherever a box's own bound does not. */
@@ -462,9 +482,10 @@ export class BoxProver {
       if (box.open === 0) this.peak = Math.max(this.peak, this.height.lo);
     }
     const tolerance = -SIGN_TOLERANCE * this.peak;
-    const open: { box: Box; conditions: number }[] = [];
+    // The lowest bound first: it leads to where the density is negative, if it is.
+    const open = new FlatQueue<{ box: Box; conditions: number }>();
     for (const { box, least } of this.parts)
-      if (least < tolerance) open.push({ box, conditions: box.open });
+      if (least < tolerance) open.push({ box, conditions: box.open }, least);
     let isRounded = [...this.parts].some(({ least }) => least < 0 && least >= tolerance);
     for (let steps = 0; open.length > 0; steps++) {
       const { box, conditions } = open.pop()!;
@@ -483,7 +504,7 @@ export class BoxProver {
         .reduce((a, b) => (a < 0 || space.share(box, b) > space.share(box, a) ? b : a), -1);
       if (steps >= MAX_SIGN_STEPS || axis < 0) throw refusal.unsettledSign(space.axes, corners.lo);
       for (const half of space.halves(box, axis))
-        open.push({ box: half, conditions: settled.open });
+        open.push({ box: half, conditions: settled.open }, lo);
     }
     if (isRounded) {
       this.notes.push(

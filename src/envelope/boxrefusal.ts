@@ -2,6 +2,7 @@
 import type { Axis } from '../density/limits';
 import { InputError } from '../errors';
 import { shortNumber } from '../numeric/text';
+import { NEVER_ABOVE } from './refusal';
 import type { Box, Space } from './space';
 
 const WHERE = 'Density';
@@ -29,13 +30,21 @@ export function negativeAt(
   axes: readonly Axis[],
   point: readonly number[],
   height?: number,
+  isNeverAbove = false,
 ): InputError {
   const value = height === undefined ? '' : ` (${shortNumber(height)})`;
-  return new InputError(
-    WHERE,
-    `it is negative at ${pointText(axes, point)}${value}`,
-    'heights must be 0 or more; use MAX(0, …) if that is meant',
-  );
+  const place = `${pointText(axes, point)}${value}`;
+  return isNeverAbove
+    ? new InputError(
+        WHERE,
+        `it is never above 0 within the limits, and negative at ${place}`,
+        NEVER_ABOVE,
+      )
+    : new InputError(
+        WHERE,
+        `it is negative at ${place}`,
+        'heights must be 0 or more; use MAX(0, …) if that is meant',
+      );
 }
 
 export function unsettledSign(axes: readonly Axis[], point: readonly number[]): InputError {
@@ -51,11 +60,27 @@ export function undefinedIn(
   lo: readonly number[],
   hi: readonly number[],
   reason: string,
+  also = '',
 ): InputError {
   return new InputError(
     WHERE,
-    `it is undefined for ${boxText(axes, lo, hi)}, where ${reason}`,
-    'keep the limits where it is defined, or give it a height there with IF',
+    `it is undefined for ${boxText(axes, lo, hi)}, where ${reason}${also && `, though ${also}`}`,
+    also === ''
+      ? 'keep the limits where it is defined, or give it a height there with IF'
+      : 'add a condition that leaves this out, keep the limits where it is defined, or give it a height there with IF',
+  );
+}
+
+/** A domain that conditions may imply, but not in a way that is seen to. */
+export function unsettledDomain(
+  axes: readonly Axis[],
+  point: readonly number[],
+  reason: string,
+): InputError {
+  return new InputError(
+    WHERE,
+    `whether the conditions keep it defined cannot be settled near ${pointText(axes, point)}, where ${reason}`,
+    'write the condition with the very expression that must not be negative, or keep that in its range yourself, as in SQRT(MAX(0, …)), which changes nothing where the conditions hold',
   );
 }
 
@@ -67,7 +92,7 @@ export function unboundedIn(
   return new InputError(
     WHERE,
     `it cannot be bounded for ${boxText(axes, lo, hi)}`,
-    'keep the limits away from there',
+    'leave it out by the limits or a condition, or cap the height, as in MIN(…, 1000), if that is meant: a pole is not drawn in several variables',
   );
 }
 

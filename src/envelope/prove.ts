@@ -35,6 +35,7 @@ import { findReaches } from './reach';
 import {
   acceptedTooRarely,
   negativeAt,
+  neverAbove,
   nothingSeen,
   unboundedNear,
   undefinedOn,
@@ -436,7 +437,12 @@ class Prover {
 
   /** Heights of a scaled density are not the user's, so they are not shown. */
   private negative(x: number, height: I.Interval): InputError {
-    return negativeAt(x, this.encloser.exponent === 0 ? height.hi : undefined);
+    const value = this.encloser.exponent === 0 ? height.hi : undefined;
+    const { density, defined } = this.encloser.over(this.from, this.to, null, null);
+    // Beyond the limits of the pieces nothing is known of it here.
+    const isNeverAbove =
+      this.hats.length === 0 && defined === Defined.Everywhere && density.v.hi <= 0;
+    return isNeverAbove ? neverAbove(x, value) : negativeAt(x, value);
   }
 
   private heightAt(): (x: number) => number {

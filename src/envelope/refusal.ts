@@ -11,6 +11,20 @@ interface Stretch {
   readonly to: number;
 }
 
+/** What would be right in place of a density that is nowhere above 0. */
+export const NEVER_ABOVE =
+  'heights must be 0 or more, and above 0 somewhere: turn the sign, or write MAX where MIN stands';
+
+/** As negativeAt, for a density that is proved to be 0 or less everywhere. */
+export function neverAbove(x: number, height?: number): InputError {
+  const value = height === undefined ? '' : ` (${shortNumber(height)})`;
+  return new InputError(
+    WHERE,
+    `it is never above 0 within the limits, and negative at x = ${shortNumber(x)}${value}`,
+    NEVER_ABOVE,
+  );
+}
+
 /** `height` is left out where it stands for a scaled density; `isFarOut` is true beyond any limit that was given. */
 export function negativeAt(x: number, height?: number, isFarOut = false): InputError {
   const value = height === undefined ? '' : ` (${shortNumber(height)})`;

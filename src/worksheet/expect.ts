@@ -11,7 +11,7 @@ import { factorsOf } from '../formula/factors';
 import { onlyShape } from './envelope';
 import { prove } from './proved';
 import { readQuantity, readSource } from './quantity';
-import { proveSeveral } from './several';
+import { heightOf, proveSeveral } from './several';
 
 const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)', givens: 4 };
 const QUANTITY = 'quantity (argument 3)';
@@ -64,6 +64,6 @@ function severalMean(shape: SeveralShape, quantity: Range | null): Expectation {
   const names = shape.axes.map(({ name }) => name);
   const measured = compile([source], names, shape.givens);
   const { others } = factorsOf(shape.sources);
-  const weighted = compile([source, ...others], names, shape.givens);
+  const weighted = heightOf(shape, [source, ...others]);
   return boxExpectation(proveSeveral(shape).envelope, measured, weighted, QUANTITY);
 }

@@ -17,7 +17,9 @@ import { rescaled } from '../exact/rescale';
 import { PointShares } from '../exact/points';
 import type { ExactShares } from '../exact/shares';
 import { Shares } from '../exact/shares';
+import { InputError } from '../errors';
 import { compile, compileSmooth } from '../formula/compile';
+import { guarded } from '../formula/guard';
 import type { Tape } from '../formula/tape';
 import { powerOfTwo } from '../numeric/float';
 import type { GivenMap } from '../formula/given';
@@ -90,12 +92,16 @@ function proofOf(shape: PlainShape, key: string): Proved {
 }
 
 function curveOf(shape: PlainShape, key: string): ProvedCurve {
-  const tape =
-    shape.kind === 'table' ? null : compile(shape.sources, [shape.variable], shape.givens);
-  const envelope =
+  const { tape, envelope } =
     shape.kind === 'table'
-      ? polylineEnvelope(shape.polyline)
-      : proveEnvelope(tape!, shape.limits.from, shape.limits.to);
+      ? { tape: null, envelope: polylineEnvelope(shape.polyline) }
+      : guardedIfRefused(
+          compile(shape.sources, [shape.variable], shape.givens),
+          (each): { tape: Tape; envelope: Envelope } => ({
+            tape: each,
+            envelope: proveEnvelope(each, shape.limits.from, shape.limits.to),
+          }),
+        );
   const exact = once(() => {
     const { envelope: roomy, shift } = rescaled(envelope, tape);
     const shares = new Shares(roomy);
@@ -121,6 +127,17 @@ function curveOf(shape: PlainShape, key: string): ProvedCurve {
       return exact().distribution;
     },
   };
+}
+
+/** What is refused as it stands is proved once more with its conditions guarding the rest (formula/guard.ts). */
+function guardedIfRefused<T>(tape: Tape, work: (tape: Tape) => T): T {
+  try {
+    return work(tape);
+  } catch (error) {
+    const careful = error instanceof InputError ? guarded(tape) : null;
+    if (careful === null) throw error;
+    return work(careful.tape);
+  }
 }
 
 function pointsOf(shape: PlainShape, lattice: Lattice, key: string): ProvedPoints {
@@ -156,9 +173,13 @@ function pointEnvelopeOf(
     return { envelope: knownPoints(lattice, heightAt, exponent), smooth: null };
   }
   const { sources, variable, givens } = shape;
-  const tape = compile(sources, [variable], givens);
-  const smooth = lattice.isWhole ? compileSmooth(sources, [variable], givens) : tape;
-  return { envelope: provePoints(tape, smooth, lattice), smooth };
+  const asWritten = compile(sources, [variable], givens);
+  const ofWhole = lattice.isWhole ? compileSmooth(sources, [variable], givens) : null;
+  return guardedIfRefused(asWritten, (tape) => {
+    const curve = ofWhole && tape !== asWritten ? (guarded(ofWhole)?.tape ?? ofWhole) : ofWhole;
+    const smooth = curve ?? tape;
+    return { envelope: provePoints(tape, smooth, lattice), smooth };
+  });
 }
 
 function once<T extends object>(make: () => T): () => T {

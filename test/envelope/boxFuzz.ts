@@ -32,11 +32,16 @@ function proofOf(shape: Joint, isFull: boolean): BoxEnvelope {
 }
 
 /** Proves and checks `shapes` random shapes; shape i of a seed is always the same. */
-export function boxFuzz(seed: string, shapes: number, points: number): BoxFuzzReport {
+export function boxFuzz(
+  seed: string,
+  shapes: number,
+  points: number,
+  make = randomRegion,
+): BoxFuzzReport {
   const report = { shapes, proved: 0, points: 0, faults: [] as string[] };
   for (let i = 0; i < shapes; i++) {
     const random = seedrandom(`${seed} ${i}`);
-    const region = randomRegion(random);
+    const region = make(random);
     const { text, axes } = region;
     const limits = axes.map(({ name, from, to, step }) => `${name} ${from}…${to} by ${step}`);
     try {

@@ -75,7 +75,22 @@ describe('proveBoxes', () => {
     [
       'early-late-2',
       UNIT,
-      'Density: it is negative at early = 0.5, late = 0.5 (-2); heights must be 0 or more; use MAX(0, …) if that is meant.',
+      'Density: it is never above 0 within the limits, and negative at early = 0.5, late = 0.5 (-2); heights must be 0 or more, and above 0 somewhere: turn the sign, or write MAX where MIN stands.',
+    ],
+    [
+      'MIN(early-late,0)',
+      UNIT,
+      'Density: it is never above 0 within the limits, and negative at early = 0.25, late = 0.5 (-0.25); heights must be 0 or more, and above 0 somewhere: turn the sign, or write MAX where MIN stands.',
+    ],
+    [
+      'early-late',
+      UNIT,
+      'Density: it is negative at early = 0.25, late = 0.75 (-0.5); heights must be 0 or more; use MAX(0, …) if that is meant.',
+    ],
+    [
+      '(early>0.5)*SQRT(early-late)',
+      UNIT,
+      'Density: it is undefined for early from 0.625 to 0.75, late from 0.875 to 1, where the square root of a negative number is taken, though the conditions hold there; add a condition that leaves this out, keep the limits where it is defined, or give it a height there with IF.',
     ],
     [
       'SQRT(early-late)',
@@ -85,7 +100,7 @@ describe('proveBoxes', () => {
     [
       'early^2-2*early*late+late^2',
       UNIT,
-      'Density: whether it is negative near early = 0.127304, late = 0.124542 cannot be settled; write it so that it cannot be negative, for example as a square instead of its expanded powers, or with MAX(0, …).',
+      'Density: whether it is negative near early = 0.650391, late = 0.667969 cannot be settled; write it so that it cannot be negative, for example as a square instead of its expanded powers, or with MAX(0, …).',
     ],
     [
       'AND(ABS(early-late)<0.00001,early<0.25)',
@@ -98,7 +113,7 @@ describe('proveBoxes', () => {
 
   test('refuses a density without a bound [law]', () => {
     expect(messageOf(() => provedBoxes('1/(early*late)', UNIT))).toMatch(
-      /^Density: it cannot be bounded for early .+, late .+; keep the limits away from there\.$/,
+      /^Density: it cannot be bounded for early .+, late .+; leave it out by the limits or a condition, or cap the height, as in MIN\(…, 1000\), if that is meant: a pole is not drawn in several variables\.$/,
     );
   });
 

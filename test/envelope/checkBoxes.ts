@@ -65,7 +65,8 @@ export function checkBoxes(
     const upper = upperAt(box, x);
     if (f > upper * (1 + ROUNDING)) fault(`${f} above ${upper}`, x);
     if (f < upper * box.sure * (1 - ROUNDING)) fault(`${f} below ${upper * box.sure}`, x);
-    margins.forEach((margin, j) => {
+    // Conditions inside IF are the density's own business.
+    margins.slice(0, envelope.conditions.length).forEach((margin, j) => {
       const isOpen = (box.open & (1 << j)) !== 0;
       if (!isOpen && margin(x) < -UNTOLD) fault(`condition ${j} fails`, x);
     });

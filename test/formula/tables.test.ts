@@ -326,7 +326,7 @@ describe('readGivens', () => {
     ['base(x,1)', 'Formula, character 1: base has 2 arguments; give it 1.'],
     [
       'base(-x)-1',
-      'Density: it is negative at x = 0 (-1); heights must be 0 or more; use MAX(0, …) if that is meant.',
+      'Density: it is never above 0 within the limits, and negative at x = 0 (-1); heights must be 0 or more, and above 0 somewhere: turn the sign, or write MAX where MIN stands.',
     ],
   ])('refuses %s in a formula [law]', (density, message) => {
     const table: Range = [

@@ -9,6 +9,7 @@ import { cellTargets, type CellTarget } from '../draw/severalTargets';
 import { FALSE_ALARM, goodnessOfFit, rankCorrelation, Z_FALSE_ALARM } from '../draw/statistics';
 import { boxFuzz } from '../envelope/boxFuzz';
 import { provedBoxes, type AxisText } from '../envelope/boxProof';
+import { randomGuarded } from '../envelope/randomGuarded';
 
 const ROWS = 1e7;
 const AT_ONCE = 1e6;
@@ -52,6 +53,15 @@ describe('proveBoxes at length', () => {
     );
     expect(report.faults).toEqual([]);
     expect(report.points).toBeGreaterThan(5e6);
+  });
+
+  test('lies above and below 400 densities that are defined only where their condition holds [law]', () => {
+    const report = boxFuzz('long guarded boxes', 400, 3000, randomGuarded);
+    console.log(
+      `guarded: ${report.shapes} shapes, ${report.proved} proved, ${report.points} points, ${report.faults.length} faults`,
+    );
+    expect(report.faults).toEqual([]);
+    expect(report.proved).toBeGreaterThan(350);
   });
 
   const cube = (names: string, from: number, to: number): AxisText[] =>

@@ -68,7 +68,10 @@ const REFUSED: Record<string, readonly (readonly [Given, string])[]> = {
       { density: 'LN(x)', limits: [[0.5, 2]] },
       `Density: it is negative at x = 0.5 (-0.693147); ${POSITIVE}`,
     ],
-    [{ density: 'LN(x)' }, `Density: it is negative at x = 0.5 (-0.693147); ${POSITIVE}`],
+    [
+      { density: 'LN(x)' },
+      'Density: it is never above 0 within the limits, and negative at x = 0.5 (-0.693147); heights must be 0 or more, and above 0 somewhere: turn the sign, or write MAX where MIN stands.',
+    ],
     [
       { density: 'x^2-0.01', limits: [[-1, 1]] },
       `Density: it is negative at x = 0 (-0.01); ${POSITIVE}`,

@@ -204,7 +204,7 @@ describe('several variables, wrong input', () => {
     [
       'a pole in a corner',
       () => drawn([['1/(early+late)']], SQUARE),
-      'Density: it cannot be bounded for early from 0 to 5e-324, late from 0 to 5e-324; keep the limits away from there.',
+      'Density: it cannot be bounded for early from 0 to 5e-324, late from 0 to 5e-324; leave it out by the limits or a condition, or cap the height, as in MIN(…, 1000), if that is meant: a pole is not drawn in several variables.',
     ],
     [
       'a name twice',
