@@ -92,45 +92,53 @@ export function profile(
 /**
  * Gives the exact share of the density's area below each x, as fraction of 1: the chance that a draw is below it. Of a counted quantity the value x itself is neither below nor above. The result has the shape of x.
  * @customfunction BELOW
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param x A number or a range of numbers, in the unit of the density's x.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
 export function below(
   density: any[][],
   limits?: any[][],
   x?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('BELOW', [density, limits, x], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('BELOW', [density, limits, x], givens, invocation);
 }
 
 /**
  * Gives the exact share of the density's area above each x, as fraction of 1: the chance that a draw is above it. Small shares keep their digits. Of a counted quantity the value x itself is neither below nor above. The result has the shape of x.
  * @customfunction ABOVE
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param x A number or a range of numbers, in the unit of the density's x.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
 export function above(
   density: any[][],
   limits?: any[][],
   x?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('ABOVE', [density, limits, x], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('ABOVE', [density, limits, x], givens, invocation);
 }
 
 /**
  * Gives the x that has each share of the density's area below it, or above it: 0.9 gives the value that nine draws in ten stay below. Of a counted quantity the first value that has the share together with all values before it. The result has the shape of share, in the unit of x.
  * @customfunction QUANTILE
+ * @cancelable
  * @param density What is likely: a formula in x, a table of points (x and height), or a block of two columns that names density, from, to and constants.
  * @param limits Two cells, from and to, in the unit of x; or one row: x, from, to and, for a counted quantity, the step. A table has its own ends, a block may name from, to and step.
  * @param share A fraction from 0 to 1 or a range of them. 0 and 1 give the limits.
  * @param side below or above: on which side of x the share lies. Left out: below.
  * @param givens What the names in the formula stand for, one range each: two columns name and value; a table with headings whose columns are functions such as base(x); or a column of numbers below its name.
+ * @param invocation The call itself.
  */
 export function quantile(
   density: any[][],
@@ -138,8 +146,9 @@ export function quantile(
   share?: any[][],
   side?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('QUANTILE', [density, limits, share, side], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('QUANTILE', [density, limits, share, side], givens, invocation);
 }
 
 /**
@@ -260,12 +269,14 @@ export function cases(
 /**
  * Draws one value for each line of conditions, such as days in cold store given the harvest of the same row. Line i is row i of DRAW with that line's values, so columns that are drawn from one another stay paired row by row. In the unit of x.
  * @customfunction EACH
+ * @cancelable
  * @param density What is likely under given conditions: a formula in x and names, a table of points (x and height), or a block of two columns that names density, from, to, seed, label and constants.
  * @param limits Two cells, from and to, in the unit of x, or names of givens. A table has its own ends, a block may name from and to.
  * @param seed Any text or number except blank and 0. Needed unless a block has it.
  * @param label Name of the quantity. Each label has its own random numbers. Needed unless a block has it.
  * @param lines A heading row of names (of givens, or from and to for the limits), then one line of values for each draw. At most 20000 different lines; equal ones count once.
  * @param givens Values for the names in the formula that are the same in all lines: two columns, name and value.
+ * @param invocation The call itself.
  */
 export function each(
   density: any[][],
@@ -274,8 +285,9 @@ export function each(
   label?: any[][],
   lines?: any[][],
   givens?: any[][][],
-): any[][] {
-  return answer('EACH', [density, limits, seed, label, lines], givens);
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater('EACH', [density, limits, seed, label, lines], givens, invocation);
 }
 
 /**

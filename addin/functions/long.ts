@@ -1,8 +1,8 @@
 /**
  * Which calls may take so long that they belong in a Worker: proofs in several
  * variables or over many counted points, formulas as long as a page, totals over
- * millions of draws. All others are done before a Worker
- * would have read its task.
+ * millions of draws, thousands of exact shares, a proof for each of many lines. All others
+ * are done before a Worker would have read its task.
  */
 import type { Range } from '../../src/index';
 import { catalogue } from './catalogue';
@@ -14,6 +14,11 @@ const LONG_FORMULA = 500;
 /** Counted points beyond which a proof, and draws beyond which a total, may take longer than that. */
 const MANY_POINTS = 50_000;
 const MANY_DRAWS = 1_000_000;
+/** The same for exact shares, worked out one by one, and for lines that each need a proof. */
+const MANY_SHARES = 2000;
+const MANY_LINES = 200;
+/** Which argument holds what is worked out one by one. */
+const ONE_BY_ONE: Readonly<Record<string, string>> = { BELOW: 'x', ABOVE: 'x', QUANTILE: 'share' };
 
 /** Whether a call is worth a Worker. Guarantee: none; the answer is the same either way. */
 export function takesLong(name: string, args: Arguments): boolean {
@@ -24,7 +29,9 @@ export function takesLong(name: string, args: Arguments): boolean {
     hasSeveralVariables(at('limits')) ||
     hasManyPoints(at('limits')) ||
     hasLongFormula(at('density')) ||
-    (name === 'TOTAL' && sumOf(at('counts')) > MANY_DRAWS)
+    (name === 'TOTAL' && sumOf(at('counts')) > MANY_DRAWS) ||
+    (name === 'EACH' && hasManyLines(at('lines'))) ||
+    (name in ONE_BY_ONE && sizeOf(at(ONE_BY_ONE[name]!)) > MANY_SHARES)
   );
 }
 
@@ -50,6 +57,19 @@ function sumOf(counts: Range | null): number {
   return (counts ?? [])
     .flat()
     .reduce<number>((sum, count) => sum + (typeof count === 'number' ? count : 0), 0);
+}
+
+function sizeOf(range: Range | null): number {
+  return range === null ? 0 : range.length * (range[0]?.length ?? 0);
+}
+
+/** Different ones. */
+function hasManyLines(lines: Range | null): boolean {
+  const different = new Set<string>();
+  for (const line of lines ?? []) {
+    if (different.add(JSON.stringify(line)).size > MANY_LINES) return true;
+  }
+  return false;
 }
 
 function hasLongFormula(density: Range | null): boolean {

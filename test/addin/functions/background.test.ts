@@ -2,7 +2,7 @@
 import { Background, type Helper, type Task } from '../../../addin/functions/background';
 import { takesLong } from '../../../addin/functions/long';
 import { cellsOf, replyOf, type Arguments, type Reply } from '../../../addin/functions/reply';
-import { CellErrorPassed, InputError } from '../../../src/index';
+import { CellErrorPassed, InputError, type Range } from '../../../src/index';
 import { messageOf } from '../../message';
 
 class TestHelper implements Helper {
@@ -93,6 +93,11 @@ describe('replyOf(name, args)', () => {
 });
 
 describe('takesLong(name, args)', () => {
+  const shares = (n: number): Range => Array.from({ length: n }, (_, i) => [i / n]);
+  const lines = (different: number): Range => [
+    ['m'],
+    ...Array.from({ length: 5000 }, (_, i) => [i % different]),
+  ];
   const PLANS = [
     ['early', 0, 90],
     ['late', 0, 90],
@@ -121,6 +126,17 @@ describe('takesLong(name, args)', () => {
     ['many counted values', 'DRAW', [[['1']], [['x', 0, 1000, 0.01]]], true],
     ['a total of a few draws', 'TOTAL', [[[500], [400]], TABLE], false],
     ['a total of millions of draws', 'TOTAL', [[[1e6], [1e6]], TABLE], true],
+    ['a few quantiles', 'QUANTILE', [TABLE, null, shares(500)], false],
+    ['thousands of quantiles', 'QUANTILE', [TABLE, null, shares(5000)], true],
+    ['thousands of shares', 'BELOW', [TABLE, null, shares(5000)], true],
+    ['one share', 'ABOVE', [TABLE, null, [[3]]], false],
+    [
+      'thousands of lines, few of them different',
+      'EACH',
+      [TABLE, null, null, null, lines(9)],
+      false,
+    ],
+    ['thousands of different lines', 'EACH', [TABLE, null, null, null, lines(5000)], true],
   ])('of %s [law]', (_, name, args, expected) => {
     expect(takesLong(name, args)).toBe(expected);
   });
