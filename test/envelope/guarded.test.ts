@@ -1,5 +1,5 @@
 /** Densities of several variables that are defined only where their condition holds. */
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 import { boxFuzz } from './boxFuzz';
 import { provedBoxes, type AxisText } from './boxProof';
 import { randomGuarded } from './randomGuarded';

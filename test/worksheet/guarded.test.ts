@@ -1,7 +1,7 @@
 /** Densities that are defined, or not negative, only where their own condition holds. */
 import type { Range } from '../../src/index';
 import { acceptance, below, draw, expect as mean } from '../../src/index';
-import { messageOf } from '../formula/formulas';
+import { messageOf } from '../message';
 
 const numberOf = (range: Range): number => Number(range[0]![0]);
 const SEED = [['plan-2027']];
