@@ -10,7 +10,7 @@ import type { CatalogueEntry } from '../functions/catalogue';
 import { cellsToJson, rangesFromJson } from './cells';
 import { UsageError } from './usage';
 
-export interface Streams {
+interface Streams {
   write(text: string): void;
   writeError(text: string): void;
   /** The text of a file; "-" is standard input. */

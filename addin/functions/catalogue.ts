@@ -38,7 +38,7 @@ import {
 import type { Range } from '../../src/index';
 import metadata from './functions.json';
 
-export interface CatalogueParameter {
+interface CatalogueParameter {
   readonly name: string;
   readonly description: string;
   readonly optional: boolean;

@@ -64,7 +64,7 @@ export function findPosition({ getters }: Model, text: string): Position | undef
 }
 
 /** "B8" */
-export function addressOf({ col, row }: Position): string {
+function addressOf({ col, row }: Position): string {
   return helpers.toXC(col, row);
 }
 

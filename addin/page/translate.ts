@@ -16,7 +16,7 @@ export interface GridCell {
 export type GridArgument = undefined | GridCell | readonly (readonly GridCell[])[];
 
 /** Tells an error code from a text. */
-export type IsErrorCode = (value: GridCell['value']) => boolean;
+type IsErrorCode = (value: GridCell['value']) => boolean;
 
 /**
  * The argument as rows of cells, null when omitted.

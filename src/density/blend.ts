@@ -6,7 +6,7 @@ import type { Point } from './histogram';
 import type { Polyline } from './table';
 
 /** A table and the share of the area it gets. */
-export interface Part {
+interface Part {
   readonly polyline: Polyline;
   readonly share: number;
 }

@@ -16,7 +16,7 @@ export type Cell = number | string | boolean | null | ErrorCell;
 export type Range = readonly (readonly Cell[])[];
 
 /** The name of an argument and its place, as messages give them: `limits (argument 2)`. */
-export type Where = string;
+type Where = string;
 
 /** @throws {CellErrorPassed} for the first error value in the range. */
 export function passErrors(range: Range): void {

@@ -14,7 +14,7 @@ import { readPoints } from './table';
 /** Beyond this the slope of a line could not be told in doubles. */
 const MAX_SIZE = 1e150;
 
-export interface FunctionTable {
+interface FunctionTable {
   readonly functions: readonly { readonly name: string; readonly given: PointFunction }[];
   readonly notes: readonly string[];
 }

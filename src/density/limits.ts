@@ -63,7 +63,7 @@ export interface Limits {
 }
 
 /** Most variables of one shape: the work of a proof grows with every one. */
-export const MOST_VARIABLES = 6;
+const MOST_VARIABLES = 6;
 
 /** The cells of the ends, one entry a variable. @throws {InputError} for a range of another form. */
 export function readLimitCells(range: Range, where: string): readonly LimitCells[] {
@@ -125,7 +125,7 @@ function readRow(
  * The ends as numbers.
  * @throws {InputError} when an end is no number and no given, when from ≥ to (from > to if counted), or when an end is too far out.
  */
-export function readEnds(cells: LimitCells, givens: Givens, isCounted = false): Limits {
+function readEnds(cells: LimitCells, givens: Givens, isCounted = false): Limits {
   const { from, to, where, fromWhere = `${where}, from`, toWhere = `${where}, to` } = cells;
   const limits = {
     from: readEnd(from, fromWhere, givens, -Infinity),

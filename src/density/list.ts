@@ -9,7 +9,7 @@ import type { Range } from './cells';
 import { isText, numberIn, quoted } from './cells';
 import { digest } from './digest';
 
-export const MAX_VALUES = 20_000;
+const MAX_VALUES = 20_000;
 
 /** @throws {InputError} without a heading, without values, with too many, or with one that is not a number. */
 export function readList(range: Range, where: string): { name: string; list: List } {

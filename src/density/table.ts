@@ -8,7 +8,7 @@ import { isBlankOrZero, isText, numberIn, quoted } from './cells';
 import type { Limits } from './limits';
 import { endCell } from './limits';
 
-export interface HeightColumn {
+interface HeightColumn {
   /** The column's heading, empty without one. */
   readonly heading: string;
   readonly heights: readonly number[];

@@ -22,8 +22,8 @@ export const INVERSE_SHARE = 1;
 export const LEFT = 2;
 export const WIDTH = 3;
 /** Left height over mean height, p in [0, 2], and its square. */
-export const SLANT = 4;
-export const SLANT_SQUARED = 5;
+const SLANT = 4;
+const SLANT_SQUARED = 5;
 
 export interface Guide {
   /** STRIDE numbers a segment, then one closing START of 1. */
@@ -39,7 +39,7 @@ export interface Guide {
   readonly lines: Float64Array;
 }
 
-export const LINES_STRIDE = 16;
+const LINES_STRIDE = 16;
 
 /** One segment before it is laid out: a trapezoid, or a hat (without a place of its own). */
 interface Segment {
@@ -58,7 +58,7 @@ interface Trapezoid {
 }
 
 /** What of an envelope is laid end to end. */
-export type Stacked = Pick<Envelope, 'pieces' | 'hats'> & {
+type Stacked = Pick<Envelope, 'pieces' | 'hats'> & {
   /** Null where upper and lower line are the density itself. */
   readonly densityAt: object | null;
 };

@@ -16,7 +16,7 @@ const PI_BY_6 = 0.5235987755982988;
 const OFFERED = 10_000;
 
 /** The correlation of normal scores that gives a rank correlation: 2·sin(πρ/6). */
-export function scoreCorrelation(rank: number): number {
+function scoreCorrelation(rank: number): number {
   // Whole ones exactly: sin(π/6) in doubles is a little below a half.
   return rank === 1 || rank === -1 ? rank : 2 * sin(PI_BY_6 * rank);
 }

@@ -26,7 +26,7 @@ export interface Column {
 }
 
 /** One proposal of a row. */
-export interface Proposal {
+interface Proposal {
   readonly row: number;
   readonly attempt: number;
   readonly x: number;

@@ -36,7 +36,7 @@ export interface Rows {
 }
 
 /** One proposal of a row. */
-export interface BoxProposal {
+interface BoxProposal {
   readonly row: number;
   readonly attempt: number;
   readonly place: readonly number[];

@@ -8,7 +8,7 @@
 import type { Encloser, PointValues, Turn } from '../formula/enclose';
 import { middle, ulp } from '../numeric/float';
 
-export interface Crossing {
+interface Crossing {
   readonly lo: number;
   readonly hi: number;
 }

@@ -30,7 +30,7 @@ export interface Hat extends Side {
 }
 
 /** One place on a hat. */
-export interface HatPoint {
+interface HatPoint {
   x: number;
   /** Its distance from the origin. */
   t: number;
@@ -44,7 +44,7 @@ const MAX_K = 6;
 const MIN_K = -4;
 
 /** What growth says of the density over a side: it can be capped, its area is infinite, or nothing can be told. */
-export type Verdict = { readonly hat: Hat } | 'infinite' | 'unknown';
+type Verdict = { readonly hat: Hat } | 'infinite' | 'unknown';
 
 /**
  * The hat of least area that the factors prove on a side beginning at c.

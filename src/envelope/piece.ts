@@ -65,7 +65,7 @@ function areaDown(left: number, right: number, width: number): number {
 const UNDERFLOW = 1.5e-323;
 
 /** Enclosures of the density at the ends and at the double `x` between them; entire where it is undefined. */
-export interface PieceEnds {
+interface PieceEnds {
   readonly atFrom: Interval;
   readonly atTo: Interval;
   readonly atMiddle: Interval;

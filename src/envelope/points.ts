@@ -67,7 +67,7 @@ export interface PointEnvelope extends Pick<
 }
 
 /** Enclosed heights of neighbouring points. */
-export interface Heights {
+interface Heights {
   readonly least: Float64Array;
   readonly most: Float64Array;
 }

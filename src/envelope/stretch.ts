@@ -7,7 +7,7 @@ import type { Encloser } from '../formula/enclose';
 import { Defined } from '../formula/operation';
 import { middle, powerOfTwo } from '../numeric/float';
 
-export interface Stretch {
+interface Stretch {
   readonly from: number;
   readonly to: number;
 }

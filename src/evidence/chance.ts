@@ -12,7 +12,7 @@ import { chanceInterval } from './proportion';
 import type { Shares } from './weights';
 import { rowsWorth, squaredPull } from './weights';
 
-export interface Chance {
+interface Chance {
   readonly chance: number;
   readonly interval: Interval;
 }

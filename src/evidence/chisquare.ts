@@ -10,9 +10,9 @@ import type { Distribution } from '../exact/distribution';
 import { pow } from '../numeric/elementary';
 
 /** Rows expected in a cell. */
-export const LEAST_EXPECTED = 10;
+const LEAST_EXPECTED = 10;
 
-export interface ChiSquare {
+interface ChiSquare {
   readonly statistic: number;
   readonly cells: number;
   readonly pValue: number;

@@ -13,7 +13,7 @@
  */
 import { inOrder } from '../numeric/ranks';
 
-export interface FirstOrder {
+interface FirstOrder {
   readonly share: number;
   /** The standard error of the share. */
   readonly error: number;

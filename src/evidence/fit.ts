@@ -34,7 +34,7 @@ import { betaShape, FEWEST_FOR_SERIAL, ranksWithoutTies, serialOrder } from './s
 import { allowedShares, sharePValue } from './shareplace';
 
 /** A figure, a text that says why there is none, or nothing. */
-export type Figure = number | string | null;
+type Figure = number | string | null;
 
 export interface FitLine {
   readonly item: string;

@@ -64,7 +64,7 @@ export function varianceStatistic(n: number, moments: ExactMoments): Statistic |
 }
 
 export const NOT_FINITE = 'not finite, or not proved to be';
-export const HEAVY = 'tails too heavy to tell';
+const HEAVY = 'tails too heavy to tell';
 export const TOO_FEW = 'too few rows to tell';
 
 function isNearNormal(skewness: number, kurtosis: number): boolean {

@@ -10,7 +10,7 @@
  */
 import { Binomial } from './binomial';
 
-export interface Ranks {
+interface Ranks {
   /** The rank of the lower end, 1 the smallest; 0 where even the smallest row is no end. */
   readonly lower: number;
   /** The rank of the upper end; n + 1 where even the largest row is no end. */

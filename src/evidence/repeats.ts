@@ -11,7 +11,7 @@ import { powerOfTwo } from '../numeric/float';
 import type { Meeting } from './lumps';
 import { LEAST_LUMP } from './lumps';
 
-export interface Repeats {
+interface Repeats {
   /** Rows that equal an earlier one and are not explained by rounding. */
   readonly count: (meetings: readonly Meeting[]) => number;
   /** The chance of so many or more. */

@@ -26,7 +26,7 @@ export function rowsForMean(deviation: number, halfwidth: number, student: Stude
   return rows;
 }
 
-export interface RowsForPercentile {
+interface RowsForPercentile {
   /** Null when the column has no row on one side of the percentile. */
   readonly rows: number | null;
   /** The ends that the column's own noise leaves open. */

@@ -14,7 +14,7 @@ import { RowStream } from '../random/stream';
 /** Fewer rows have too few orders. */
 export const FEWEST_FOR_SERIAL = 10;
 
-export interface Serial {
+interface Serial {
   /** 1 − ratio/2, which is near the correlation of a row's rank with the next one's. */
   readonly correlation: number;
   readonly pValue: number;

@@ -10,7 +10,7 @@ import betainc from '@stdlib/math-base-special-betainc';
 import betaQuantile from '@stdlib/stats-base-dists-beta-quantile';
 
 /** The place k, from 1, of the sorted value at or below the percentile. */
-export function placeOfShare(n: number, share: number): number {
+function placeOfShare(n: number, share: number): number {
   return Math.min(n, Math.floor((n - 1) * share) + 1);
 }
 

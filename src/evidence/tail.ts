@@ -12,13 +12,13 @@ import type { Ends, Student } from './student';
 import { NO_ENDS } from './student';
 import { pull } from './weights';
 
-export interface TailMean {
+interface TailMean {
   readonly mean: number;
   readonly interval: Ends;
 }
 
 /** Rows' worth in the tail from which an interval is given. */
-export const FEWEST_IN_TAIL = 50;
+const FEWEST_IN_TAIL = 50;
 
 /** The mean of the lowest `share`; a row that lies across its end counts in part. Domain: 0 < share < 1. */
 export function lowestMean(sample: Sample, share: number, student: Student): TailMean {

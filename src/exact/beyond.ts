@@ -16,7 +16,7 @@ import { shortNumber } from '../numeric/text';
 export const WANTED_BEYOND = 2e-8;
 
 /** A tape and what encloses it. */
-export interface Enclosed {
+interface Enclosed {
   readonly tape: Tape;
   readonly encloser: Encloser;
 }

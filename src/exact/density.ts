@@ -14,7 +14,7 @@ import type { Jet } from '../numeric/jet';
 import * as J from '../numeric/jet';
 
 /** Enclosures of the scaled density; valid until the next call, and the caller may overwrite them. */
-export interface DensityOver {
+interface DensityOver {
   readonly atFrom: Interval;
   readonly atTo: Interval;
   readonly jet: Jet;

@@ -9,7 +9,7 @@ import { InputError } from '../errors';
 import { checkSigns } from './signs';
 
 export const MAX_CHARACTERS = 8192;
-export const MAX_DEPTH = 64;
+const MAX_DEPTH = 64;
 
 const LOOKALIKES = new Map([
   ['≤', '<='],

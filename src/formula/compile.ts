@@ -15,7 +15,7 @@ import { callsItself, nameKey, Scope } from './names';
 import { Steps } from './steps';
 import type { Tape } from './tape';
 import type { Tree } from './tree';
-import type { Maker, Row } from './vocabulary';
+import type { Maker, Row } from './row';
 import { VOCABULARY } from './vocabulary';
 
 export { nameKey };

@@ -8,7 +8,7 @@ import type { Source } from './compile';
 import { parse } from './parse';
 import { splitText, withoutBrackets } from './split';
 
-export interface Factors {
+interface Factors {
   readonly conditions: readonly Source[];
   /** Their product is the density where all conditions hold; none stands for 1. */
   readonly others: readonly Source[];

@@ -45,13 +45,13 @@ export interface Operation {
  * How growth passes through an operation, where more is known than its slope tells:
  * relative growth adds up in products, is multiplied by a power, weighed in a sum.
  */
-export type Growing =
+type Growing =
   | { readonly kind: 'product' | 'quotient' | 'same' | 'exponential' | 'logarithm' | 'choice' }
   | { readonly kind: 'sum' | 'extreme'; readonly sign: 1 | -1 }
   /** Without a power of its own the second operand is the power. */
   | { readonly kind: 'power'; readonly power?: Interval };
 
-export type Operands = readonly [Jet, Jet, Jet];
+type Operands = readonly [Jet, Jet, Jet];
 
 const slope = I.interval();
 const curvature = I.interval();

@@ -30,7 +30,7 @@ export interface Side {
 }
 
 /** What is known of one step over a side. */
-export interface Growth {
+interface Growth {
   readonly v: Interval;
   readonly d: Interval;
   readonly e: Interval;

@@ -2,7 +2,7 @@
 import { tokenize } from '@borgar/fx';
 
 /** A token that stands outside all brackets. */
-export interface OuterToken {
+interface OuterToken {
   readonly type: string;
   readonly value: string;
   /** True where an operator would join two operands rather than be a sign. */

@@ -35,7 +35,7 @@ export type Tree =
       readonly operatorAt: number;
     };
 
-export interface Binding {
+interface Binding {
   readonly name: string;
   readonly value: Tree;
   readonly at: number;

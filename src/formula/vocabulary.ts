@@ -9,7 +9,7 @@
  * the case undefined and the proof refuses it.
  */
 import type { Operation } from './operation';
-import { ADD, DIVIDE, MULTIPLY, NEGATE, NUMBER, SUBTRACT, VARIABLE } from './operations/arithmetic';
+import { ADD, DIVIDE, MULTIPLY, NEGATE, SUBTRACT } from './operations/arithmetic';
 import { BETA_ROWS } from './operations/betas';
 import { BRANCH_ROWS } from './operations/branch';
 import { CALENDAR_ROWS } from './operations/calendar';
@@ -38,8 +38,7 @@ import {
 import { ACOS, angle, ASIN, ATAN, COS, SIN, TAN } from './operations/wave';
 import type { Maker, Row } from './row';
 
-export type { Maker, Row };
-export { CHOOSE_BY, EXP, NUMBER, VARIABLE };
+export { CHOOSE_BY, EXP };
 
 function unary(name: string, operation: Operation): Row {
   return { name, least: 1, most: 1, operation };

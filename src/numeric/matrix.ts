@@ -63,7 +63,7 @@ export function solveLower(factor: Matrix, b: Float64Array): Float64Array {
 }
 
 /** The stretches of a symmetric matrix along its axes, and the axes as columns. */
-export interface Axes {
+interface Axes {
   readonly values: Float64Array;
   readonly vectors: Matrix;
 }

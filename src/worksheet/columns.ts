@@ -17,7 +17,7 @@ export interface Column {
   readonly placeOf: (i: number) => string;
 }
 
-export interface Columns {
+interface Columns {
   readonly columns: readonly Column[];
   readonly nRows: number;
   /** TRUE and FALSE, as 1 and 0, instead of numbers. */

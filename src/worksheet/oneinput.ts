@@ -10,13 +10,13 @@ import { InputError } from '../errors';
 import type { Key } from '../random/key';
 import { argumentOr, keyFrom, keyPart, readLabels, readSeed } from './keys';
 
-export interface OneInput {
+interface OneInput {
   readonly family: Family;
   readonly key: Key;
 }
 
 /** Places of the arguments in messages. */
-export interface OneInputPlaces extends Places {
+interface OneInputPlaces extends Places {
   readonly seed: string;
   readonly label: string;
 }

@@ -12,7 +12,7 @@ import type { GivenMap } from '../formula/given';
 import { parse } from '../formula/parse';
 
 /** Places of the arguments in messages, and what the formula itself is called there. */
-export interface QuantityPlaces {
+interface QuantityPlaces {
   readonly limits: string;
   readonly givens: number;
   readonly quantity: string;

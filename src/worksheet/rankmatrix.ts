@@ -10,7 +10,7 @@ const MAX_COLUMNS = 50;
 const SQUARE =
   'give a square of rank correlations, one row and one column for each input, 1 on the diagonal';
 
-export interface Wished {
+interface Wished {
   readonly ranks: Matrix;
   /** The factor of the correlations of normal scores. */
   readonly factor: Matrix;

@@ -21,7 +21,7 @@ import { canonicalGivens } from './proved';
 const BYTES_PER_BOX = 600;
 
 /** A shape of several variables with its proof and what is drawn from it. */
-export interface ProvedSeveral {
+interface ProvedSeveral {
   readonly key: string;
   readonly envelope: BoxEnvelope;
   readonly drawer: BoxDrawer;

@@ -6,10 +6,10 @@ import { type Shares, sharesOf } from '../evidence/weights';
 import { numberColumn } from './columns';
 import { numberLine } from './numbers';
 
-export const TABLE = 'table (argument 1)';
+const TABLE = 'table (argument 1)';
 export const WEIGHTS = 'weights (argument 2)';
 
-export interface WeightedTable {
+interface WeightedTable {
   /** The row above the rows with weights; null without one. */
   readonly heading: readonly Cell[] | null;
   readonly rows: Range;

@@ -6,7 +6,7 @@
  */
 import type { Page } from 'playwright-core';
 
-export interface TextContrast {
+interface TextContrast {
   readonly text: string;
   readonly ratio: number;
 }

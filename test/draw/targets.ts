@@ -169,7 +169,7 @@ export const blendTarget: Target = {
   bounds: [2, 5],
 };
 
-export interface Bins {
+interface Bins {
   /** One more than there are bins. */
   readonly edges: Float64Array;
   readonly shares: readonly number[];

@@ -11,7 +11,7 @@ const UNTOLD = 1e-9;
 /** Room for the rounding of the check's own heights. */
 const ROUNDING = 1e-9;
 
-export interface BoxReport {
+interface BoxReport {
   readonly points: number;
   readonly faults: readonly string[];
 }
@@ -23,7 +23,7 @@ interface Options {
 }
 
 /** The upper bound of a box at a point. */
-export function upperAt({ upper, plane }: ProvedBox, x: readonly number[]): number {
+function upperAt({ upper, plane }: ProvedBox, x: readonly number[]): number {
   if (plane === null) return upper;
   return (
     upper *

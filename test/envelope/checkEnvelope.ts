@@ -30,14 +30,14 @@ const CLOSE = 1e-13;
 /** Places and heights on hats are worked in several rounded steps. */
 const HAT_ROUNDING = 1e-11;
 
-export interface Options {
+interface Options {
   readonly nPoints: number;
   /** How many of these are worked in decimals in any case, and half as many as where doubles cannot tell. */
   readonly nPrecise: number;
   readonly random: () => number;
 }
 
-export interface Report {
+interface Report {
   readonly points: number;
   /** Points decided in decimals. */
   readonly decided: number;

@@ -19,7 +19,7 @@ const N_DRAWS = 200;
 /** The quadrature of the area takes longer than all the rest: one shape in so many has it. */
 const FULL_EVERY = 16;
 
-export interface FuzzReport {
+interface FuzzReport {
   readonly shapes: number;
   readonly proved: number;
   readonly refused: number;
@@ -27,7 +27,7 @@ export interface FuzzReport {
   readonly faults: readonly string[];
 }
 
-export interface FuzzOptions {
+interface FuzzOptions {
   readonly seed: string;
   readonly shapes: number;
   /** Points checked in each proved envelope. */

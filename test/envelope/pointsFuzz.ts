@@ -33,7 +33,7 @@ const MOST_CHECKED = 40;
 /** The number of points of a lattice between two limits. */
 const POINTS = [3, 17, 60, 200, 5000];
 
-export interface PointsReport {
+interface PointsReport {
   proved: number;
   refused: number;
   points: number;

@@ -12,7 +12,7 @@ import { parse } from '../../src/formula/parse';
 import type { Tree } from '../../src/formula/tree';
 
 /** What a number system must offer. */
-export interface Arithmetic<T> {
+interface Arithmetic<T> {
   readonly of: (x: number) => T;
   readonly pi: T;
   readonly add: (a: T, b: T) => T;

@@ -29,7 +29,7 @@ const LIST: Range = [['obs'], [1.2], [0.4], [2.2], [1.9], [0.7]];
 
 type Random = () => number;
 
-export interface WideReport {
+interface WideReport {
   readonly proved: number;
   readonly points: number;
   readonly faults: readonly string[];

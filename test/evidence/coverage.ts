@@ -10,7 +10,7 @@ import { RowStream } from '../../src/random/stream';
 import { Z_FALSE_ALARM } from '../draw/statistics';
 
 /** A law by its quantile function, with its figures in closed form. */
-export interface Law {
+interface Law {
   readonly name: string;
   readonly at: (share: number) => number;
   readonly mean: number;
@@ -188,12 +188,12 @@ export function changeCoverage(law: Law, rows: number, repetitions: number): Tal
 }
 
 /** How far the share of n intervals that hold may be from 0.95 with that false-alarm rate. */
-export function tolerance(repetitions: number): number {
+function tolerance(repetitions: number): number {
   return Z_FALSE_ALARM * Math.sqrt((0.95 * 0.05) / repetitions);
 }
 
 /** Order statistics and Wilson's interval at small chances cover more than they promise. */
-export function isConservative(item: string): boolean {
+function isConservative(item: string): boolean {
   return item.startsWith('P') || item === 'chance 0.001' || item === 'chance 0.01';
 }
 

@@ -2,7 +2,7 @@
  * Seventy forms that must be drawn and some that must be refused, written before the
  * prover was. Common practice: they are the shapes people state, and the traps among them.
  */
-export type End = number | 'unbounded';
+type End = number | 'unbounded';
 
 export interface Form {
   readonly number: number;
@@ -14,7 +14,7 @@ export interface Form {
   readonly note: string;
 }
 
-export interface RefusedForm {
+interface RefusedForm {
   readonly density: string;
   readonly from: End;
   readonly to: End;

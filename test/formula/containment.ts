@@ -20,7 +20,7 @@ export function chances(seed: number): () => number {
   };
 }
 
-export interface Containment {
+interface Containment {
   readonly nIntervals: number;
   readonly nPoints: number;
   readonly breaches: readonly string[];

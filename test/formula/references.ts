@@ -3,7 +3,7 @@ import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { Big, big } from '../numeric/reference';
 
-export interface Reference {
+interface Reference {
   readonly x: number;
   /** The value, and for smooth functions its two derivatives. */
   readonly digits: readonly Big[];

@@ -1,7 +1,7 @@
 /** Doubles of every size for property tests: any bits, round numbers, edges, neighbours. */
 import fc from 'fast-check';
 
-export const EDGES = [
+const EDGES = [
   0,
   5e-324,
   1e-323,
@@ -35,12 +35,6 @@ export const finite: fc.Arbitrary<number> = fc.oneof(
   { weight: 2, arbitrary: fc.integer({ min: -1000, max: 1000 }) },
   { weight: 1, arbitrary: fc.integer({ min: -4096, max: 4096 }).map((k) => k / 64) },
   { weight: 1, arbitrary: fc.constantFrom(...EDGES.flatMap(signed)) },
-);
-
-/** Finite doubles and infinities. */
-export const extended: fc.Arbitrary<number> = fc.oneof(
-  { weight: 12, arbitrary: finite },
-  { weight: 1, arbitrary: fc.constantFrom(Infinity, -Infinity) },
 );
 
 /** Pairs that are related: close in size, opposite, one far below the other. */

@@ -11,7 +11,7 @@ import { gridOf } from '../addin/page/grid';
 /** An input a line: label, density, from, to. */
 type Input = readonly [label: string, density: string, from: number | string, to: number | string];
 
-export interface Example {
+interface Example {
   readonly name: string;
   readonly inputs: readonly Input[];
   /** The model in worksheet arithmetic, a name in braces standing for its column. */

@@ -1,7 +1,7 @@
 /** Shapes that the worksheet functions are tried on, and what their answers are read with. */
 import type { Cell, Range } from '../../src/index';
 
-export interface Tried {
+interface Tried {
   readonly name: string;
   readonly density: Range;
   readonly limits: Range | null;

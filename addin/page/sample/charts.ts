@@ -52,7 +52,7 @@ export function countsChart(quantity: Quantity): Definition {
 }
 
 /** Titles, ranges and colour of a chart of counts; the ranges have no headings. */
-export interface Bars {
+interface Bars {
   readonly title: string;
   readonly x: string;
   readonly y: string;

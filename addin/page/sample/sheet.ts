@@ -6,7 +6,7 @@
 import type { Look } from './looks';
 
 /** A chart to place on a sheet; `data` is the grid library's own definition. */
-export interface ChartPlan {
+interface ChartPlan {
   readonly id: string;
   /** Column and row of its upper left corner, counted from 0. */
   readonly col: number;

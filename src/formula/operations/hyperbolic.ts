@@ -18,7 +18,7 @@ const size = I.interval();
 const one = I.interval(1);
 
 /** 1 − v², which cancels where v is near ±1; (1 − v)(1 + v) loses less and stays ≥ 0. */
-export function oneLessSquare(out: Interval, v: Interval): void {
+function oneLessSquare(out: Interval, v: Interval): void {
   I.add(t, one, v);
   I.subtract(out, one, v);
   I.multiply(out, out, t);

@@ -53,7 +53,7 @@ export function wholePower(n: number): Operation {
 }
 
 /** x^p for a constant p that is not whole; x ≥ 0. */
-export const REAL_POWER: Operation = {
+const REAL_POWER: Operation = {
   name: 'real power',
   growth: { kind: 'power' },
   point: (x, p) => (x < 0 ? NaN : elementary.pow(x, p)),
