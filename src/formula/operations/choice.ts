@@ -82,8 +82,8 @@ function extreme(
   };
 }
 
-const MIN = extreme('MIN', 1, (a, b) => Math.min(a, b), I.minimum);
-const MAX = extreme('MAX', -1, (a, b) => Math.max(a, b), I.maximum);
+export const MIN = extreme('MIN', 1, (a, b) => Math.min(a, b), I.minimum);
+export const MAX = extreme('MAX', -1, (a, b) => Math.max(a, b), I.maximum);
 
 /** IF(c, a, b) with operands in the order a, b, c. */
 export const CHOOSE_BY: Operation = {
