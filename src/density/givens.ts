@@ -5,7 +5,7 @@
  * so `constructor` is a name like any other.
  */
 import { InputError } from '../errors';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import type { Given, List, PointFunction } from '../formula/given';
 import { VOCABULARY } from '../formula/vocabulary';
 import type { Cell, Range } from './cells';

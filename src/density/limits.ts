@@ -7,7 +7,7 @@
 import { InputError } from '../errors';
 import type { Cell, Range } from './cells';
 import { isBlankOrZero, isText, numberIn, passErrors, quoted, sizeOf, word } from './cells';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import type { Givens } from './givens';
 import type { Lattice } from './lattice';
 import { latticeOf } from './lattice';

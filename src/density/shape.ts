@@ -5,7 +5,7 @@
  */
 import { InputError } from '../errors';
 import type { Source } from '../formula/compile';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import type { GivenMap } from '../formula/given';
 import { namesIn } from '../formula/rename';
 import type { Block } from './block';

@@ -18,8 +18,6 @@ import type { Tree } from './tree';
 import type { Maker, Row } from './row';
 import { VOCABULARY } from './vocabulary';
 
-export { nameKey };
-
 /** Steps that depend on a variable, equal ones counted once: each is worked at every look at the density. */
 export const MAX_OPERATIONS = 10_000;
 /** Operations written out on the way there, those on numbers included: each is worked once. */

@@ -7,7 +7,7 @@ import { readShapes } from '../density/shape';
 import { DEFAULT_VARIABLE } from '../density/limits';
 import { InputError } from '../errors';
 import { MAX_CHARACTERS } from '../formula/check';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import { namesIn as namesInText, renamed } from '../formula/rename';
 import { powerOfTwo } from '../numeric/float';
 import { numberLine } from './numbers';

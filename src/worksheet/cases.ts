@@ -4,7 +4,7 @@ import { given, isBlankOrZero, isText, passErrors, quoted, sizeOf } from '../den
 import type { Family, Overrides, PlainShape } from '../density/shape';
 import { inLine } from '../density/shape';
 import { InputError } from '../errors';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import { argumentOr } from './keys';
 import { checkName, endNamed, readOneInput } from './oneinput';
 import { drawColumn, prove } from './proved';

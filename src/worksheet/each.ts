@@ -6,7 +6,7 @@ import { inLine } from '../density/shape';
 import { drawEach } from '../draw/each';
 import type { RowsOfOne } from '../draw/each';
 import { InputError } from '../errors';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import { checkName, endNamed, readOneInput } from './oneinput';
 import { drawerOf, prove } from './proved';
 

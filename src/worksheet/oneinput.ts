@@ -5,7 +5,7 @@
 import type { Range } from '../density/cells';
 import type { Family, Places } from '../density/shape';
 import { readFamily } from '../density/shape';
-import { nameKey } from '../formula/compile';
+import { nameKey } from '../formula/names';
 import { InputError } from '../errors';
 import type { Key } from '../random/key';
 import { argumentOr, keyFrom, keyPart, readLabels, readSeed } from './keys';

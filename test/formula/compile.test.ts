@@ -1,4 +1,5 @@
-import { compile, functionNames, nameKey } from '../../src/formula/compile';
+import { compile, functionNames } from '../../src/formula/compile';
+import { nameKey } from '../../src/formula/names';
 import { evaluator } from '../../src/formula/evaluate';
 import { parse } from '../../src/formula/parse';
 import { refusalOf, tapeOf, valueOf } from './formulas';
