@@ -4,7 +4,8 @@
  */
 import { readFileSync } from 'node:fs';
 import { textContrasts } from './contrast';
-import { sampleSheets, settled, type, workbooks } from './workbook';
+import { sampleSheets } from '../addin/page/sampleSheets';
+import { settled, type, workbooks } from './workbook';
 
 const workbook = workbooks();
 const DRAWS = { kept: sampleSheets('Shapes', 'Draws') };

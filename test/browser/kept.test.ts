@@ -4,7 +4,8 @@
  */
 import { readFileSync } from 'node:fs';
 import type { Page } from 'playwright-core';
-import { KEPT, openCopy, read, sampleSheets, shown, spill, type, workbooks } from './workbook';
+import { sampleSheets } from '../addin/page/sampleSheets';
+import { KEPT, openCopy, read, shown, spill, type, workbooks } from './workbook';
 
 const workbook = workbooks();
 const DRAWS = { kept: sampleSheets('Shapes', 'Draws') };

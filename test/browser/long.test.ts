@@ -4,7 +4,8 @@
  */
 import type { Page } from 'playwright-core';
 import { call } from '../addin/call';
-import { openCopy, read, sampleSheets, spill, workbooks } from './workbook';
+import { sampleSheets } from '../addin/page/sampleSheets';
+import { openCopy, read, spill, workbooks } from './workbook';
 
 const workbook = workbooks();
 const DRAWS = { kept: sampleSheets('Shapes', 'Draws') };

@@ -4,17 +4,8 @@
 import { readFileSync } from 'node:fs';
 import type { Page } from 'playwright-core';
 import { call } from '../addin/call';
-import {
-  goTo,
-  message,
-  read,
-  sampleSheets,
-  settled,
-  shown,
-  spill,
-  type,
-  workbooks,
-} from './workbook';
+import { sampleSheets } from '../addin/page/sampleSheets';
+import { goTo, message, read, settled, shown, spill, type, workbooks } from './workbook';
 
 const workbook = workbooks();
 /** What is read and typed on these sheets alone needs no other. */

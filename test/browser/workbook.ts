@@ -5,7 +5,6 @@
  */
 import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
 import type { WorkbookHook } from '../../addin/page/hook';
-import { sampleWorkbook } from '../../addin/page/sample/workbook';
 import type { Server } from './chromium';
 import { launchBrowser, serve } from './chromium';
 
@@ -17,12 +16,6 @@ declare global {
 
 /** The name under which the page keeps edits, as kept.test.ts asserts. */
 export const KEPT = 'undercurve.workbook.2';
-
-/** Sheets of the sample alone: they need none of the others and open in less than half the time. */
-export function sampleSheets(...names: readonly string[]): object {
-  const sample = sampleWorkbook() as { readonly sheets: readonly { readonly name: string }[] };
-  return { ...sample, sheets: sample.sheets.filter(({ name }) => names.includes(name)) };
-}
 
 interface Setting extends BrowserContextOptions {
   /** What the browser has kept from an earlier visit: a workbook or any text; else nothing. */

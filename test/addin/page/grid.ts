@@ -2,6 +2,7 @@
 import { Model } from '@odoo/o-spreadsheet';
 import { CallLog } from '../../../addin/page/calls';
 import { hookFor, type WorkbookHook } from '../../../addin/page/hook';
+import type { Range } from '../../../src/index';
 
 export interface Grid extends WorkbookHook {
   readonly model: Model;
@@ -40,3 +41,23 @@ export function workbookOf(sheets: Readonly<Record<string, Readonly<Record<strin
     })),
   };
 }
+
+/** A rectangle of cells, as the functions get it. */
+export function rectangle(
+  grid: Grid,
+  sheet: string,
+  columns: readonly string[],
+  first: number,
+  last: number,
+): Range {
+  return Array.from({ length: last - first + 1 }, (_, i) =>
+    columns.map((each) => grid.read(sheet, `${each}${first + i}`)),
+  );
+}
+
+/** The first column of a spill, as numbers. */
+export function column(grid: Grid, sheet: string, address: string): number[] {
+  return grid.readSpill(sheet, address).map(([cell]) => Number(cell));
+}
+
+export const one = (value: string | number): Range => [[value]];

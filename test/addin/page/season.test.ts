@@ -6,23 +6,16 @@ import type { Range } from '../../../src/index';
 import { prepareLibrary } from '../../../addin/page/library';
 import { sampleWorkbook } from '../../../addin/page/sample/workbook';
 import { call } from '../call';
-import { gridOf } from './grid';
+import { gridOf, one, rectangle } from './grid';
 
 const grid = gridOf(sampleWorkbook(), prepareLibrary());
 const seed: Range = [['plan-2027']];
 const N = 500;
-const one = (value: string | number): Range => [[value]];
 
-/** Cells of some columns, from one row to another. */
-function cells(sheet: string, columns: readonly string[], first: number, last: number): Range {
-  return Array.from({ length: last - first + 1 }, (_, i) =>
-    columns.map((each) => grid.read(sheet, `${each}${first + i}`)),
-  );
-}
 const of = (columns: string[], first: number, last: number) =>
-  cells('Season', columns, first, last);
+  rectangle(grid, 'Season', columns, first, last);
 const numbers = (sheet: string, column: string): number[] =>
-  cells(sheet, [column], 9, 8 + N).map(([cell]) => Number(cell));
+  rectangle(grid, sheet, [column], 9, 8 + N).map(([cell]) => Number(cell));
 
 /** Rows as columns. */
 const turned = (rows: Range) => rows[0]!.map((_, j) => rows.map((row) => row[j]));
@@ -44,7 +37,7 @@ describe('the sample, from links to a decision', () => {
       );
     }
     // Six standard errors of about (1 − 0.36)/√500.
-    const reached = call('RANKS', cells('Season', ['L', 'M'], 9, 8 + N));
+    const reached = call('RANKS', rectangle(grid, 'Season', ['L', 'M'], 9, 8 + N));
     expect(Math.abs(Number(reached[1]?.[2]) + 0.6)).toBeLessThan(0.18);
   });
 
@@ -88,7 +81,10 @@ describe('the sample, from links to a decision', () => {
 
   test('sampleWorkbook() tells the chance of too many bottles and the case to choose [law]', () => {
     const names = ['2 presses', '3 presses', '4 presses'];
-    const columns = (letters: string[]): Range => [names, ...cells('Decision', letters, 9, 8 + N)];
+    const columns = (letters: string[]): Range => [
+      names,
+      ...rectangle(grid, 'Decision', letters, 9, 8 + N),
+    ];
     expect(grid.readSpill('Decision', 'A28')).toEqual(
       call('EXCEEDANCE', columns(['P', 'Q', 'R']), one(760)),
     );
@@ -107,9 +103,9 @@ describe('the sample, from links to a decision', () => {
     const letters = ['L', 'M', 'N', 'P', 'S'];
     const inputs = [
       ['harvest', 'price', 'days', 'taken', 'spoilt'],
-      ...cells('Season', letters, 9, 8 + N),
+      ...rectangle(grid, 'Season', letters, 9, 8 + N),
     ];
-    const margin = cells('Decision', ['W'], 9, 8 + N);
+    const margin = rectangle(grid, 'Decision', ['W'], 9, 8 + N);
     const drivers = call('DRIVERS', inputs, margin);
     // A blank of ours spills as an empty text.
     expect(grid.readSpill('Decision', 'F40')).toEqual(
