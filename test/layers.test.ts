@@ -23,7 +23,6 @@ const LAYERS = [
   'src/draw',
   'src/exact',
   'src/evidence',
-  'src/audit',
   'src/worksheet',
   'src/index.ts',
 ];
