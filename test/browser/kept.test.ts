@@ -34,6 +34,21 @@ describe('what was edited', () => {
     expect(await read(page, 'Shapes', 'E14')).toBe(4);
   });
 
+  test('an edit just before a reload is kept, one just before starting over is not [law]', async () => {
+    const page = await workbook.open(DRAWS);
+    await type(page, 'Shapes!E14', '6.5');
+    await page.reload();
+    await shown(page);
+    expect(await read(page, 'Shapes', 'E14')).toBe(6.5);
+    await type(page, 'Shapes!E14', '7');
+    await page.getByRole('button', { name: 'Start over' }).click();
+    await page.getByRole('dialog').getByRole('button', { name: 'Start over' }).click();
+    await page.waitForFunction(() => window.undercurveWorkbook.read('Shapes', 'E14') === 4);
+    await page.reload();
+    await shown(page);
+    expect(await read(page, 'Shapes', 'E14')).toBe(4);
+  });
+
   test.each(['{"sheets":[', '{"sheets":[null]}'])(
     'kept edits that cannot be read (%s) give way to the sample [law]',
     async (kept) => {

@@ -33,7 +33,7 @@ export function workbooks(): Workbooks {
   let browser: Browser;
   let server: Server;
   const complaints: string[] = [];
-  jest.setTimeout(30_000);
+  jest.setTimeout(90_000);
   beforeAll(async () => {
     server = await serve({ '/': '.build/page', '/pane/': '.build/pane' });
     browser = await launchBrowser();
