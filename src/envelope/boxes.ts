@@ -25,7 +25,7 @@ import { findBoxExponent } from './boxscale';
 import * as refusal from './boxrefusal';
 import { LEAST_ACCEPTANCE, WANTED_ACCEPTANCE } from './prove';
 import type { Plane } from './plane';
-import { planeOver, tiltedMean } from './plane';
+import { planeMasses, planeOver } from './plane';
 import type { Box } from './space';
 import { Space } from './space';
 
@@ -84,8 +84,6 @@ const SIGN_TOLERANCE = 1e-12;
 const MAX_SIGN_STEPS = 20_000;
 /** What is undefined in part and smaller than this share of the limits is within rounding. */
 const NEGLIGIBLE = powerOfTwo(-42);
-/** Covers the rounding of sums, exponentials and products behind a mass. */
-const ROOM = 1e-12;
 
 interface Part {
   readonly box: ProvedBox;
@@ -319,32 +317,16 @@ export class BoxProver {
     if (plane === null) return { box: flat, defined, owed: null, least };
     const { n } = this.space;
     this.spent += this.rest!.nSteps * (n + (n * (n + 1)) / 2);
-    const tilted = this.tilted(box, open, plane, measure);
+    const tilted = this.tilted(box, open, plane);
     const lowerMass = isSettled ? Math.max(flat.lowerMass, tilted.lowerMass) : 0;
     const best = tilted.upperMass < flat.upperMass ? tilted : flat;
     return { box: { ...best, lowerMass }, defined, owed: plane.owed, least };
   }
 
-  private tilted(
-    box: Box,
-    open: number,
-    { centre, slopes, logLo, logHi, meanLo }: Plane,
-    measure: { lo: number; hi: number },
-  ): ProvedBox {
-    const shift = this.exponent * LN_2;
-    // Of e^(slope · ξ) over the box, as a share of its measure.
-    const mean = slopes.reduce((product, slope, i) => {
-      if (slope === 0) return product;
-      return product * tiltedMean(slope * (box.hi[i]! - box.lo[i]!));
-    }, 1);
-    const rise = slopes.reduce((sum, slope, i) => {
-      if (slope === 0) return sum;
-      const ends = [box.lo[i]!, box.hi[i]!].map((end) => slope * (end - centre[i]!));
-      return sum + Math.abs(ends[0]! + ends[1]!) / 2;
-    }, 0);
-    // The box's middle is a double beside its centre; what that moves is within the room.
-    const room = ROOM * (1 + Math.abs(logHi) + Math.abs(shift)) + rise;
-    const upper = elementary.exp(logHi - shift + room);
+  private tilted(box: Box, open: number, plane: Plane): ProvedBox {
+    const { space, exponent } = this;
+    const { centre, slopes, logLo, logHi } = plane;
+    const { upper, upperMass, lowerMass, room } = planeMasses(space, box, plane, exponent);
     return {
       ...box,
       open,
@@ -352,9 +334,8 @@ export class BoxProver {
       lower: 0,
       plane: { centre, slopes },
       sure: open === 0 ? elementary.exp(logLo - logHi - 2 * room) : 0,
-      // The room in `upper` covers the rounding here; more would favour this box over others.
-      upperMass: mulUp(upper * mean, measure.hi),
-      lowerMass: mulDown(elementary.exp(meanLo - shift - room) * mean * (1 - ROOM), measure.lo),
+      upperMass,
+      lowerMass,
     };
   }
 
@@ -518,8 +499,6 @@ export class BoxProver {
 function isUrgent({ defined, box }: Part): boolean {
   return defined !== Defined.Everywhere || box.upperMass === Infinity;
 }
-
-const LN_2 = 0.6931471805599453;
 
 function byPlace(a: Box, b: Box): number {
   for (let i = 0; i < a.lo.length; i++) {

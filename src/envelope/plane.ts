@@ -15,7 +15,7 @@ import { Defined } from '../formula/operation';
 import * as elementary from '../numeric/elementary';
 import * as I from '../numeric/interval';
 import { expm1 } from '../numeric/special';
-import { addDown, addUp, mulUp, ulp } from '../numeric/float';
+import { addDown, addUp, mulDown, mulUp, ulp } from '../numeric/float';
 import type { Box, Space } from './space';
 
 export interface Plane {
@@ -33,20 +33,57 @@ export interface Plane {
   readonly owed: readonly number[];
 }
 
+const LN_2 = 0.6931471805599453;
+/** Covers the rounding of sums, exponentials and products behind a mass. */
+const ROOM = 1e-12;
+
 /** The mean of e^(a·t) over −½ ≤ t ≤ ½: sinh(a/2)/(a/2). */
-export function tiltedMean(a: number): number {
+function tiltedMean(a: number): number {
   const half = Math.abs(a) / 2;
   // e^half (1 − e^-2half) / (2 half)
   return half < 1e-8 ? 1 : (elementary.exp(half) * -expm1.at(-2 * half)) / (2 * half);
 }
 
-/** The mean of t under e^(a·t) over −½ ≤ t ≤ ½: coth(a/2)/2 − 1/a. */
-export function tiltedPlace(a: number): number {
-  // Where the two terms cancel, the series: its next term is below 10^-13 of the first.
-  if (Math.abs(a) < 0.01) return (a / 12) * (1 - (a * a) / 60);
-  const fall = expm1.at(-Math.abs(a));
-  const place = (2 + fall) / (-2 * fall) - 1 / Math.abs(a);
-  return a < 0 ? -place : place;
+/** What a plane says of the density × 2^-exponent over a box. */
+export interface PlaneMasses {
+  /** The height of the upper bound at the centre. */
+  readonly upper: number;
+  readonly upperMass: number;
+  /** Of the density itself; where conditions may fail it says nothing. */
+  readonly lowerMass: number;
+  /** What rounding may move the logarithms by. */
+  readonly room: number;
+}
+
+/** Bounds of the integral of the density over a box by its tangent plane. */
+export function planeMasses(
+  space: Space,
+  box: Box,
+  { centre, slopes, logHi, meanLo }: Plane,
+  exponent: number,
+): PlaneMasses {
+  const measure = space.measure(box);
+  const shift = exponent * LN_2;
+  // Of e^(slope · ξ) over the box, as a share of its measure.
+  const mean = slopes.reduce((product, slope, i) => {
+    if (slope === 0) return product;
+    return product * tiltedMean(slope * (box.hi[i]! - box.lo[i]!));
+  }, 1);
+  const rise = slopes.reduce((sum, slope, i) => {
+    if (slope === 0) return sum;
+    const ends = [box.lo[i]!, box.hi[i]!].map((end) => slope * (end - centre[i]!));
+    return sum + Math.abs(ends[0]! + ends[1]!) / 2;
+  }, 0);
+  // The box's middle is a double beside its centre; what that moves is within the room.
+  const room = ROOM * (1 + Math.abs(logHi) + Math.abs(shift)) + rise;
+  const upper = elementary.exp(logHi - shift + room);
+  return {
+    upper,
+    // The room in `upper` covers the rounding here; more would favour this box over others.
+    upperMass: mulUp(upper * mean, measure.hi),
+    lowerMass: mulDown(elementary.exp(meanLo - shift - room) * mean * (1 - ROOM), measure.lo),
+    room,
+  };
 }
 
 /** Halvings of the bound between the least and the largest eigenvalue that is known. */

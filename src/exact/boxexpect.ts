@@ -1,37 +1,38 @@
 /**
  * The mean of a quantity under a density of several variables, with proved bounds.
  *
- * Where ln f has a tangent plane over a box (envelope/plane.ts), the mass and the means of the
- * axes under the plane's own exponential are elementary; the remainder R of ln f and that of
- * the quantity's own plane, both of second order in the box's widths, bound the rest. Elsewhere:
- * Over a box around c, with widths w and second derivatives H of p, ∫p lies in
- * measure · (p(c) + Σ H_ii w_i²/24 + Σ_{i<j} |H_ij| w_i w_j/16 · [−1, 1]): the linear part
- * cancels. Where p has no second derivatives its range is used, where a condition may fail
- * the range together with 0. Both ∫qf and ∫f are enclosed so, box by box, and the boxes that
- * leave most of ∫(q − m)f open are halved, m being about the mean; E q = m + ∫(q − m)f / ∫f.
- * Source: derived here (midpoint rule with its remainder). Over counted axes ∫ is a sum, and
- * the linear part only cancels for boxes of one value along them; others use the range.
+ * E q = m + ∫(q − m)f / ∫f, m being about the mean; the limits are cut into boxes, and those that
+ * leave most of ∫(q − m)f open are halved. Over a box with measure M that integral lies within
+ * (range of q − m) · ∫f, which holds where conditions may fail too. Where none can, ∫qf and ∫f are
+ * enclosed by the midpoint rule, one axis after the other: with widths w_i and c the middle
+ *
+ *      ∫p  ∈  M · (p(c) + Σ_i ½ s_i H_ii),   s_i = w_i²/12, the mean square of x_i − c_i,
+ *
+ * H_ii the second derivatives of p over the box in the axes up to i and at c in those after it:
+ * p(x) − p(c) is the sum of what each axis adds, and its part linear in x_i − c_i cancels. Where
+ * H_ii has no bound half the width of the slope's enclosure times the mean of |x_i − c_i| serves.
+ * Over n counted values at a distance of h, s_i is h²(n² − 1)/12.
+ * Source: derived here. Where the logarithm of f is smooth its tangent plane (envelope/plane.ts)
+ * bounds ∫f as well, which is better where f falls steeply.
  * Not handled: digits beyond the proved bounds.
  */
 import FlatQueue from 'flatqueue';
 import type { BoxEnvelope, Joint } from '../envelope/boxes';
 import { widest } from '../envelope/boxscale';
-import { planeOver, tiltedMean, tiltedPlace } from '../envelope/plane';
-import * as elementary from '../numeric/elementary';
+import { planeMasses, planeOver } from '../envelope/plane';
 import { pointText } from '../envelope/boxrefusal';
 import type { Box, Space } from '../envelope/space';
 import { InputError } from '../errors';
 import { Encloser } from '../formula/enclose';
 import { Defined } from '../formula/operation';
 import type { Tape } from '../formula/tape';
-import { addDown, addUp, divDown, divUp } from '../numeric/float';
+import { addDown, addUp, divDown, divUp, ulp } from '../numeric/float';
 import * as I from '../numeric/interval';
 import type { Expectation } from './expect';
 
 /** Steps of formulas worked over boxes, and what a box costs besides: a second or two. */
 const MAX_WORK = 3_000_000;
 const WORK_OF_A_BOX = 40;
-const LN_2 = 0.6931471805599453;
 /** Covers the rounding of exponentials, products and sums behind a mass. */
 const ROOM = 1e-11;
 /** Refinement ends when the bounds are this near to each other, in units of the quantity's spread. */
@@ -40,10 +41,19 @@ const WANTED = 1e-6;
 interface Part {
   readonly box: Box;
   readonly open: number;
-  /** Enclosures of ∫qf and ∫f over the box. */
-  readonly moment: I.Interval;
+  /** The range of the quantity. */
+  readonly range: I.Interval;
+  /** Enclosures of ∫f and, where no condition can fail, of ∫qf. */
   readonly mass: I.Interval;
-  readonly gap: number;
+  readonly moment: I.Interval | null;
+  /** What the enclosures owe to the axes, for choosing where to halve; null where that is not known. */
+  readonly owed: readonly number[] | null;
+}
+
+/** An integral over a box. */
+interface Integral {
+  readonly value: I.Interval;
+  readonly owed: readonly number[];
 }
 
 /**
@@ -67,9 +77,10 @@ class BoxExpecter {
   private readonly rest: Encloser | null;
   private readonly queue = new FlatQueue<Part>();
   private readonly parts = new Set<Part>();
-  private readonly bend = I.interval();
   private readonly term = I.interval();
+  private readonly other = I.interval();
   private spent = 0;
+  /** m of the header. */
   private centre = 0;
 
   constructor(
@@ -87,29 +98,45 @@ class BoxExpecter {
   }
 
   expect(): Expectation {
-    const { boxes } = this.envelope;
-    const first = boxes.map((box) => this.examine(box, box.open)).filter((part) => part !== null);
-    const sums = this.sums(first);
-    this.centre = middleOf(sums.moment) / middleOf(sums.mass);
-    if (!Number.isFinite(this.centre)) this.centre = 0;
-    for (const part of first) this.add({ ...part, gap: this.gapOf(part) });
-    let gap = first.reduce((sum, part) => sum + this.gapOf(part), 0);
-    const scale = Math.max(1e-300, Math.abs(this.centre)) * Math.max(1e-300, middleOf(sums.mass));
+    const first = this.envelope.boxes.flatMap((box) => {
+      const part = this.examine(box, box.open);
+      if (part === null) return [];
+      // The proof has bounds of its own.
+      I.meet(part.mass, { lo: box.lowerMass, hi: box.upperMass });
+      return [part];
+    });
+    this.centre = this.roughMean(first);
+    let gap = 0;
+    let mass = 0;
+    for (const part of first) {
+      gap += this.add(part);
+      mass += middleOf(part.mass);
+    }
+    const scale = Math.max(1e-300, Math.abs(this.centre)) * Math.max(1e-300, mass);
     while (this.spent < MAX_WORK && gap > WANTED * scale) {
       const part = this.queue.pop();
       if (part === undefined) break;
-      const axis = widest(this.space, part.box);
+      const axis = this.axisOf(part);
       if (axis < 0) continue;
       this.parts.delete(part);
-      gap -= part.gap;
+      gap -= this.gapOf(part);
       for (const half of this.space.halves(part.box, axis)) {
         const next = this.examine(half, part.open);
-        if (next === null) continue;
-        this.add(next);
-        gap += next.gap;
+        if (next !== null) gap += this.add(next);
       }
     }
     return this.answer();
+  }
+
+  /** The quantity at the middle of its range in every box, weighted by the boxes' masses. */
+  private roughMean(parts: readonly Part[]): number {
+    let [moment, mass] = [0, 0];
+    for (const part of parts) {
+      const weight = middleOf(part.mass);
+      moment += middleOf(part.range) * weight;
+      mass += weight;
+    }
+    return Number.isFinite(moment / mass) ? moment / mass : 0;
   }
 
   private answer(): Expectation {
@@ -126,35 +153,89 @@ class BoxExpecter {
     const { lo, hi } = offset;
     const atLeast = addDown(centre, lo < 0 ? divDown(lo, massLo) : divDown(lo, massHi));
     const atMost = addUp(centre, hi > 0 ? divUp(hi, massLo) : divUp(hi, massHi));
-    const value = centre + middleOf(offset) / middleOf(mass);
-    return { value: Math.min(atMost, Math.max(atLeast, value)), atLeast, atMost };
+    return { value: Math.min(atMost, Math.max(atLeast, this.likely())), atLeast, atMost };
   }
 
-  private add(part: Part): void {
-    this.parts.add(part);
-    if (part.gap > 0) this.queue.push(part, -part.gap);
-  }
-
-  private sums(parts: readonly Part[]): { moment: I.Interval; mass: I.Interval } {
-    const sums = { moment: I.interval(0), mass: I.interval(0) };
-    for (const { moment, mass } of parts) {
-      I.add(sums.moment, sums.moment, moment);
-      I.add(sums.mass, sums.mass, mass);
+  /** The mean by the midpoint rule with the second derivatives at the middles, which is no proof. */
+  private likely(): number {
+    const { centre, rest, term } = this;
+    let [mass, offset] = [0, 0];
+    for (const part of this.parts) {
+      this.offsetOf(part, term);
+      const [lo, hi] = [term.lo, term.hi];
+      let ownMass = middleOf(part.mass);
+      let own = middleOf(term);
+      if (part.open === 0 && part.moment !== null) {
+        if (rest) ownMass = within(part.mass, this.estimate(rest, part.box));
+        const about = this.estimate(this.weighted, part.box) - centre * ownMass;
+        own = within({ lo, hi }, about);
+      }
+      mass += ownMass;
+      offset += own;
     }
-    return sums;
+    return centre + offset / mass;
   }
 
-  private offsetOf({ moment, mass }: Pick<Part, 'moment' | 'mass'>, out: I.Interval): void {
-    I.scale(out, mass, -this.centre);
-    I.add(out, moment, out);
+  /** The integral of a formula over a box, about; not a number where that cannot be told. */
+  private estimate(encloser: Encloser, box: Box): number {
+    const { space } = this;
+    const { lo, hi } = space.corners(box);
+    const centre = lo.map((end, i) => end + (hi[i]! - end) / 2);
+    const measure = space.measure(box);
+    let mean = 0;
+    for (let i = 0; i < space.n; i++) {
+      const { v, h } = encloser.overBox(centre, centre, [i]).density;
+      if (i === 0) mean += middleOf(v);
+      if (isBounded(h)) mean += middleOf(h) * this.halfSquare(box, i);
+    }
+    return mean * (measure.lo / 2 + measure.hi / 2);
   }
 
-  private gapOf(part: Pick<Part, 'moment' | 'mass'>): number {
+  /** Half the mean square of the distance from the middle along an axis. */
+  private halfSquare(box: Box, i: number): number {
+    const { lo, hi } = this.space.corners(box);
+    const width = hi[i]! - lo[i]!;
+    if (!this.space.isCounted(i)) return (width * width) / 24;
+    const n = box.hi[i]! - box.lo[i]! + 1;
+    return n === 1 ? 0 : ((width * width) / 24) * ((n + 1) / (n - 1));
+  }
+
+  /** Keeps a part; gives what it leaves open. */
+  private add(part: Part): number {
+    this.parts.add(part);
+    const gap = this.gapOf(part);
+    if (gap > 0) this.queue.push(part, -gap);
+    return gap;
+  }
+
+  /** Encloses ∫(q − m)f over a part. */
+  private offsetOf({ range, mass, moment }: Part, out: I.Interval): void {
+    const { centre, other } = this;
+    I.set(other, centre, centre);
+    I.subtract(out, range, other);
+    I.multiply(out, out, mass);
+    if (moment === null) return;
+    I.scale(other, mass, -centre);
+    I.add(other, moment, other);
+    I.meet(out, other);
+  }
+
+  private gapOf(part: Part): number {
     this.offsetOf(part, this.term);
     return this.term.hi - this.term.lo;
   }
 
-  /** Both integrals over a box; null where the density surely is 0. */
+  private axisOf({ box, owed }: Part): number {
+    const { space } = this;
+    let best = -1;
+    for (let i = 0; owed !== null && i < space.n; i++) {
+      if (!space.isDivisible(box, i) || !(owed[i]! > 0)) continue;
+      if (best < 0 || owed[i]! > owed[best]!) best = i;
+    }
+    return best < 0 ? widest(space, box) : best;
+  }
+
+  /** What is known over a box; null where the density surely is 0. */
   private examine(box: Box, open: number): Part | null {
     const { lo, hi } = this.space.corners(box);
     let left = open;
@@ -166,172 +247,107 @@ class BoxExpecter {
       if (defined === Defined.Everywhere && density.v.lo === 1) left &= ~(1 << j);
     }
     this.spent += WORK_OF_A_BOX;
-    const smooth = this.rest && this.byPlane(this.rest, box, left);
-    const moment = smooth ? smooth.moment : this.integral(this.weighted, box, left);
-    const mass = smooth
-      ? smooth.mass
-      : this.rest
-        ? this.integral(this.rest, box, left)
-        : this.measure(box, left);
-    if (moment === null || mass === null) throw this.refused(box);
+    const density = this.rest ? this.integral(this.rest, box, left) : this.measure(box, left);
+    if (density === null) throw this.refused(box);
+    const mass = density.value;
     if (mass.lo < 0) mass.lo = 0;
-    if (mass.hi === 0) return null;
-    const part = { box, open: left, moment, mass };
-    return { ...part, gap: this.gapOf(part) };
-  }
-
-  /** Both integrals by tangent planes of ln f and of the quantity; null where either has none. */
-  private byPlane(
-    rest: Encloser,
-    box: Box,
-    open: number,
-  ): { readonly moment: I.Interval; readonly mass: I.Interval } | null {
-    const { space } = this;
-    if (space.axes.some((_, i) => space.isCounted(i))) return null;
-    const plane = planeOver(space, box, rest);
-    const flat = plane && this.quantityOver(box);
-    if (!plane || !flat) return null;
-    const { slopes, at, logLo, logHi, meanLo } = plane;
-    const widths = slopes.map((_, i) => box.hi[i]! - box.lo[i]!);
-    const measure = space.measure(box);
-    const shift = this.envelope.exponent * LN_2;
-    const share = slopes.reduce((product, g, i) => product * tiltedMean(g * widths[i]!), 1);
-    const whole = (log: number, sign: 1 | -1): number =>
-      elementary.exp(log - shift) *
-      share *
-      (sign > 0 ? measure.hi : measure.lo) *
-      (1 + sign * ROOM);
-    const mass = I.interval(open === 0 ? whole(meanLo, -1) : 0, whole(logHi, 1));
-    if (!(mass.hi < Infinity)) return null;
-    const moment = I.interval();
-    I.multiply(moment, flat.range, mass);
-    if (open !== 0) I.hull(moment, moment, I.interval(0));
-    else {
-      // q(c)·∫f + Σ g_i ∫ξ_i f + the quantity's own remainder.
-      const open2 = whole(logHi, 1) - whole(logLo, -1);
-      const base = whole(at.lo / 2 + at.hi / 2, 1);
-      const better = I.interval();
-      I.multiply(better, flat.value, mass);
-      let [linear, room] = [0, flat.remainder * mass.hi];
-      slopes.forEach((g, i) => {
-        const mean = tiltedPlace(g * widths[i]!) * widths[i]! * base;
-        linear += flat.slopes[i]! * mean;
-        room += Math.abs(flat.slopes[i]!) * widths[i]! * (open2 / 2 + ROOM * base);
-      });
-      room = (room + Math.abs(linear) * ROOM) * (1 + ROOM);
-      I.add(better, better, I.interval(linear - room, linear + room));
-      if (better.lo === better.lo && better.hi === better.hi) I.meet(moment, better);
-    }
-    return { moment, mass };
-  }
-
-  /** The quantity over a box: its range, and its tangent plane with a bound of what that leaves. */
-  private quantityOver(box: Box): {
-    readonly range: I.Interval;
-    readonly value: I.Interval;
-    readonly slopes: readonly number[];
-    readonly remainder: number;
-  } | null {
-    const { space, quantity } = this;
-    const { lo, hi } = space.corners(box);
-    const centre = space.centre(box);
-    const radii = centre.map((c, i) => Math.max(c - lo[i]!, hi[i]! - c) * (1 + ROOM));
-    const n = space.n;
-    this.spent += quantity.nSteps * (n + (n * (n + 1)) / 2);
-    const bends: I.Interval[] = [];
-    const slopes: number[] = [];
+    if (mass.hi <= 0) return null;
+    if (left === 0 && this.rest) this.meetPlane(mass, this.rest, box);
+    const moment = left === 0 ? this.integral(this.weighted, box, 0) : null;
+    this.spent += this.quantity.nSteps;
+    const { density: q, defined } = this.quantity.overBox(lo, hi, []);
     const range = I.interval();
-    const value = I.interval();
-    let remainder = 0;
-    for (let i = 0; i < n; i++) {
-      const { density, defined } = quantity.overBox(lo, hi, [i]);
-      const { v, h } = density;
-      if (defined !== Defined.Everywhere || !isBounded(v) || !isBounded(h)) return null;
-      if (i === 0) I.copy(range, v);
-      bends.push(I.interval(h.lo, h.hi));
-      remainder += (largest(h) / 2) * radii[i]! * radii[i]!;
+    if (defined === Defined.Everywhere) I.copy(range, q.v);
+    else I.setEntire(range);
+    if (!isBounded(range) && moment === null) {
+      const most = left === 0 ? null : this.integral(this.weighted, box, left);
+      if (most === null) throw this.refused(box);
+      return { box, open: left, range, mass, moment: most.value, owed: null };
     }
-    for (let i = 0; i < n; i++) {
-      for (let j = 0; j < i; j++) {
-        I.copy(this.bend, quantity.overBox(lo, hi, [i, j]).density.h);
-        if (!isBounded(this.bend)) return null;
-        I.subtract(this.bend, this.bend, bends[i]!);
-        I.subtract(this.bend, this.bend, bends[j]!);
-        remainder += (largest(this.bend) / 2) * radii[i]! * radii[j]!;
-      }
-    }
-    for (let i = 0; i < n; i++) {
-      const { density } = quantity.overBox(centre, centre, [i]);
-      if (i === 0) I.copy(value, density.v);
-      const slope = density.d.lo / 2 + density.d.hi / 2;
-      slopes.push(slope);
-      remainder += (density.d.hi - density.d.lo) * radii[i]!;
-    }
-    return { range, value, slopes, remainder: remainder * (1 + ROOM) };
+    const owed =
+      moment && moment.owed.map((each, i) => each + Math.abs(this.centre) * density.owed[i]!);
+    return { box, open: left, range, mass, moment: moment && moment.value, owed };
   }
 
-  private measure(box: Box, open: number): I.Interval {
+  /** Tightens the mass of a box by the tangent plane of ln f, if there is one. */
+  private meetPlane(mass: I.Interval, rest: Encloser, box: Box): void {
+    const { space, envelope } = this;
+    if (space.axes.some((_, i) => space.isCounted(i)) || mass.lo === mass.hi) return;
+    const plane = planeOver(space, box, rest);
+    this.spent += rest.nSteps * (space.n + (space.n * (space.n + 1)) / 2);
+    if (plane === null) return;
+    const { lowerMass, upperMass } = planeMasses(space, box, plane, envelope.exponent);
+    I.meet(mass, { lo: lowerMass, hi: upperMass });
+  }
+
+  private measure(box: Box, open: number): Integral {
     const { lo, hi } = this.space.measure(box);
-    return I.interval(open === 0 ? lo : 0, hi);
+    return { value: I.interval(open === 0 ? lo : 0, hi), owed: box.lo.map(() => 0) };
   }
 
   /** Encloses the integral of a formula over a box; null where it is undefined or has no bound. */
-  private integral(encloser: Encloser, box: Box, open: number): I.Interval | null {
+  private integral(encloser: Encloser, box: Box, open: number): Integral | null {
     const { space } = this;
     const { lo, hi } = space.corners(box);
     this.spent += encloser.nSteps;
     const { density, defined } = encloser.overBox(lo, hi, []);
     const { v } = density;
-    if (defined !== Defined.Everywhere || !(v.lo > -Infinity && v.hi < Infinity)) return null;
+    if (defined !== Defined.Everywhere || !isBounded(v)) return null;
     const measure = space.measure(box);
     const size = I.interval(measure.lo, measure.hi);
     const range = I.interval(v.lo, v.hi);
     if (open !== 0) I.hull(range, range, I.interval(0));
-    const out = I.interval();
-    I.multiply(out, range, size);
-    if (open === 0 && v.lo !== v.hi) this.tighten(out, encloser, box, size);
-    return out;
+    const value = I.interval();
+    I.multiply(value, range, size);
+    const owed = box.lo.map(() => 0);
+    if (open === 0 && v.lo !== v.hi) this.tighten(value, owed, encloser, box, size);
+    return { value, owed };
   }
 
-  /** By the midpoint rule with its remainder, where there are second derivatives. */
-  private tighten(out: I.Interval, encloser: Encloser, box: Box, size: I.Interval): void {
-    const { space, bend, term } = this;
-    const n = space.n;
+  /** By the midpoint rule, one axis after the other; sets what each leaves open. */
+  private tighten(
+    out: I.Interval,
+    owed: number[],
+    encloser: Encloser,
+    box: Box,
+    size: I.Interval,
+  ): void {
+    const { space, term } = this;
     const { lo, hi } = space.corners(box);
-    const wide = Array.from({ length: n }, (_, i) => i).filter((i) => hi[i]! > lo[i]!);
-    if (wide.some((i) => space.isCounted(i))) return;
-    const centre = space.centre(box);
+    const centre = lo.map((end, i) => end + (hi[i]! - end) / 2);
     const mean = I.interval();
-    this.spent += encloser.nSteps * (1 + (wide.length * (wide.length + 1)) / 2);
+    this.spent += encloser.nSteps;
     I.copy(mean, encloser.overBox(centre, centre, []).density.v);
-    const bends = new Map<number, I.Interval>();
-    for (const i of wide) {
-      const { h, d } = encloser.overBox(lo, hi, [i]).density;
-      if (!(h.lo > -Infinity && h.hi < Infinity)) return;
-      bends.set(i, I.interval(h.lo, h.hi));
-      const width = addUp(hi[i]!, -lo[i]!);
-      I.scale(term, h, (width * width) / 24);
-      // The factor w²/24 is rounded; so is the centre, which leaves a little of the slope.
-      widen(term, 1e-14);
-      I.add(mean, mean, term);
-      const off = Math.abs(centre[i]! - lo[i]! - (hi[i]! - centre[i]!)) / 2;
-      const slope = Math.max(Math.abs(d.lo), Math.abs(d.hi));
-      if (off > 0) I.add(mean, mean, I.interval(-slope * off * 1.01, slope * off * 1.01));
-    }
-    for (const [k, i] of wide.entries()) {
-      for (const j of wide.slice(0, k)) {
-        I.copy(bend, encloser.overBox(lo, hi, [i, j]).density.h);
-        if (!(bend.lo > -Infinity && bend.hi < Infinity)) return;
-        I.subtract(bend, bend, bends.get(i)!);
-        I.subtract(bend, bend, bends.get(j)!);
-        const most = Math.max(Math.abs(bend.lo), Math.abs(bend.hi)) / 2;
-        const area = addUp(hi[i]!, -lo[i]!) * addUp(hi[j]!, -lo[j]!);
-        const reach = ((most * area) / 16) * (1 + 1e-12);
-        I.add(mean, mean, I.interval(-reach, reach));
+    const [from, to] = [[...centre], [...centre]];
+    for (let i = 0; i < space.n; i++) {
+      if (!(hi[i]! > lo[i]!)) continue;
+      [from[i], to[i]] = [lo[i]!, hi[i]!];
+      this.spent += encloser.nSteps;
+      const { d, h } = encloser.overBox(from, to, [i]).density;
+      if (!isBounded(d)) {
+        // What this axis adds has no bound of its own: the range serves.
+        owed.fill(0);
+        return;
       }
+      const width = hi[i]! - lo[i]!;
+      const nValues = space.isCounted(i) ? box.hi[i]! - box.lo[i]! + 1 : Infinity;
+      const away = (width / 4) * (nValues < Infinity ? nValues / (nValues - 1) : 1) * (1 + ROOM);
+      const reach = ((d.hi - d.lo) / 2) * away * (1 + ROOM);
+      // The middle is a double: it is off by so much at most.
+      const off = 2 * ulp(Math.max(Math.abs(lo[i]!), Math.abs(hi[i]!))) * largest(d);
+      I.set(term, -reach, reach);
+      if (isBounded(h)) {
+        const bend = I.interval();
+        I.scale(bend, h, this.halfSquare(box, i));
+        widen(bend, ROOM);
+        I.meet(term, bend);
+      }
+      I.set(term, term.lo - off, term.hi + off);
+      owed[i] = (term.hi - term.lo) * size.hi;
+      I.add(mean, mean, term);
     }
     I.multiply(mean, mean, size);
-    if (mean.lo === mean.lo && mean.hi === mean.hi) I.meet(out, mean);
+    if (isBounded(mean)) I.meet(out, mean);
   }
 
   private refused(box: Box): InputError {
@@ -355,6 +371,11 @@ class BoxExpecter {
 
 function middleOf({ lo, hi }: I.Interval): number {
   return lo / 2 + hi / 2;
+}
+
+/** A number put within an interval; its middle for no number. */
+function within(bounds: I.Interval, x: number): number {
+  return x === x ? Math.min(bounds.hi, Math.max(bounds.lo, x)) : middleOf(bounds);
 }
 
 function widen(out: I.Interval, share: number): void {

@@ -9,6 +9,7 @@ import { cellTargets, type CellTarget } from '../draw/severalTargets';
 import { FALSE_ALARM, goodnessOfFit, rankCorrelation, Z_FALSE_ALARM } from '../draw/statistics';
 import { boxFuzz } from '../envelope/boxFuzz';
 import { provedBoxes, type AxisText } from '../envelope/boxProof';
+import { meanFuzz } from '../exact/boxMeans';
 import { randomGuarded } from '../envelope/randomGuarded';
 
 const ROWS = 1e7;
@@ -110,7 +111,7 @@ describe('proveBoxes at length', () => {
       cube('abpq', 0, 1),
       'SQRT((a-p)^2+(b-q)^2)',
       0.5214054331647,
-      2e-3,
+      2e-4,
     ],
     [
       'the mean of the larger of a normal pair, √((1 − ρ)/π) (Clark 1961, from memory)',
@@ -128,5 +129,12 @@ describe('proveBoxes at length', () => {
     expect(atLeast).toBeLessThan(exact + 1e-6);
     expect(atMost).toBeGreaterThan(exact - 1e-6);
     expect(Math.abs(value - exact)).toBeLessThan(near);
+    expect(atMost - atLeast).toBeLessThan(0.02);
+  });
+
+  test('EXPECT encloses the means of 25 random polynomials over mixed variables [law]', () => {
+    const { faults, widest } = meanFuzz('long box means', 25);
+    expect(faults).toEqual([]);
+    expect(widest).toBeLessThan(0.01);
   });
 });
