@@ -89,6 +89,9 @@ function part(
   ];
 }
 
+/** Three digits say enough of a p-value. */
+const inShort = (pValue: number): string => shortNumber(Number(pValue.toPrecision(3)));
+
 function overall(lines: readonly FitLine[], level: number, nRows: number): string {
   const compared = lines.filter(({ pValue }) => pValue !== null);
   const signs = compared.filter(({ pValue }) => pValue! < level);
@@ -98,5 +101,5 @@ function overall(lines: readonly FitLine[], level: number, nRows: number): strin
     return `signs against the shape in ${signs.length} of ${compared.length} comparisons: ${items}; at most 1 in 100 columns that follow their shape shows any${few}`;
   }
   const least = compared.reduce((a, b) => (b.pValue! < a.pValue! ? b : a));
-  return `no sign against the shape in ${compared.length} comparisons: the least p-value is ${shortNumber(least.pValue!)} (${least.item}), below ${shortNumber(level)} it would be a sign${few}`;
+  return `no sign against the shape in ${compared.length} comparisons: the least p-value is ${inShort(least.pValue!)} (${least.item}), below ${inShort(level)} it would be a sign${few}`;
 }

@@ -29,7 +29,7 @@ describe('the frame', () => {
       'Start over',
       'Shapes',
       'Cell address: type one and press Enter',
-      'Grid: arrow keys move, typing edits',
+      'Grid: arrow keys move, typing edits, F6 leaves',
     ]);
   });
 

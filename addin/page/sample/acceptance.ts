@@ -19,7 +19,7 @@ export function acceptanceSheet(): SheetPlan {
   const sheet = new SheetPlan('Acceptance', { columns: 42, rows: SHEET_ROWS, frozenRows: 0 });
   const narrow = Array.from({ length: 36 }, () => 88);
   sheet
-    .columnWidths([230, 240, 24, 230, 240, 24, ...narrow])
+    .columnWidths([256, 240, 24, 256, 240, 24, ...narrow])
     .put('A1', 'Acceptance: the evidence that each column is drawn correctly', 'title')
     .put(
       'A2',

@@ -13,15 +13,23 @@ const { firstRow: FIRST, mostRows: MOST_ROWS } = SEASON;
 const HEAD = FIRST - 1;
 const LAST_ROW = HEAD + MOST_ROWS;
 
-const INPUTS: readonly (readonly [string, number, string])[] = [
-  ['yield', 0.87, '1,000 bottles a tonne'],
-  ['store', 760, '1,000 bottles that it holds'],
-  ['elsewhere', 0.15, 'euros a bottle beyond that'],
-  ['cost', 0.32, 'euros a bottle'],
-  ['press', 28, '1,000 euros each'],
-  ['cold store', 0.4, '1,000 euros a day'],
+/** The name that formulas here go by, its words on the sheet, value, and unit. */
+const INPUTS: readonly (readonly [string, string, number, string])[] = [
+  ['yield', 'yield', 0.87, '1,000 bottles a tonne'],
+  ['store', 'the store holds', 760, '1,000 bottles'],
+  ['elsewhere', 'storing the rest elsewhere', 0.15, 'euros a bottle'],
+  ['cost', 'making a bottle', 0.32, 'euros a bottle'],
+  ['press', 'running a press', 28, '1,000 euros a season'],
+  ['cold store', 'cold store', 0.4, '1,000 euros a day'],
 ];
-const INPUTS_ROW = 6;
+/** First rows of the parts; their section titles and notes stand above. */
+const SHORT_ROW = 6;
+const INPUTS_ROW = 12;
+const BEST_ROW = 21;
+const CHANCES_ROW = 36;
+const DRIVERS_ROW = 21;
+const CHECK_ROW = 33;
+
 const cellOf = (name: string): string =>
   `$B$${INPUTS_ROW + INPUTS.findIndex(([own]) => own === name)}`;
 
@@ -34,31 +42,37 @@ const table = (columns: readonly string[]): string =>
   `VSTACK(${SEASON.cases},HSTACK(${columns.map(spillOf).join(',')}))`;
 
 /** The unknowns of the middle case, each below its name. */
-const DRIVING = `VSTACK({"harvest","price","days","taken","spoilt"},HSTACK(${[
+const DRIVING = `VSTACK({"harvest","price","days stored","presses take","spoilt"},HSTACK(${[
   ...[SEASON.harvest, SEASON.price, SEASON.days],
   ...[SEASON.taken(2), SEASON.spoilt],
 ].join(',')}))`;
 
-/** First rows of the answers; their section titles stand above. */
-const BEST_ROW = 14;
-const CHANCES_ROW = 28;
-const DRIVERS_ROW = 40;
-const CHECK_ROW = 15;
-
 const BEST_CASES = `B${BEST_ROW}:D${BEST_ROW}`;
 /** The number of the case that comes first, among the three. */
 const FIRST_CASE = `MATCH(1,B${BEST_ROW + 1}:D${BEST_ROW + 1},0)`;
-const VERDICT =
-  `="largest mean margin: "&INDEX(${BEST_CASES},1,${FIRST_CASE})&", the best in "` +
-  `&TEXT(INDEX(B${BEST_ROW + 5}:D${BEST_ROW + 5},1,${FIRST_CASE}),"0%")&" of the scenarios"`;
+
+/** A figure of the first case, from a row below the three cases, as text. */
+const figure = (row: number, format: string): string =>
+  `TEXT(INDEX(B${row}:D${row},1,${FIRST_CASE}),"${format}")`;
+
+/** Said first: the gist of each part below. */
+const SHORT: readonly string[] = [
+  `=INDEX(${BEST_CASES},1,${FIRST_CASE})&" bring the largest mean margin: "&${figure(BEST_ROW + 2, '0.0')}` +
+    `&" thousand euros (95 % interval "&${figure(BEST_ROW + 3, '0.0')}&" to "&${figure(BEST_ROW + 4, '0.0')}` +
+    `&"), the best in "&${figure(BEST_ROW + 5, '0%')}&" of the scenarios"`,
+  `="they fill more bottles than the store holds with a chance of "&${figure(CHANCES_ROW + 5, '0%')}` +
+    `&" (95 % interval "&${figure(CHANCES_ROW + 6, '0%')}&" to "&${figure(CHANCES_ROW + 7, '0%')}&")"`,
+  `="what moves the margin of "&C${BEST_ROW}&" most: "&G${DRIVERS_ROW}&", "&TEXT(G${DRIVERS_ROW + 4},"0%")&" of its variance"`,
+  `="the harvest as drawn: "&INDEX(F${CHECK_ROW}#,2,2)`,
+];
 
 export function decisionSheet(): SheetPlan {
   const sheet = new SheetPlan('Decision', { columns: 24, rows: LAST_ROW, frozenRows: 0 })
-    .columnWidths([230, 90, 90, 90, 24, 310, 90, 90, 90, 90, 90, 90, 90, 24])
+    .columnWidths([230, 90, 90, 90, 24, 270, 90, 90, 90, 90, 90, 90, 24, 24, 100])
     .put('A1', 'Decision: how many presses?', 'title')
     .put(
       'A2',
-      'Scenarios come from sheet Season. Change a number of presses there, or a yellow cell here.',
+      'Each scenario of sheet Season becomes bottles and a margin (columns O to X). Change a number of presses there, or a yellow cell here.',
       'note',
     )
     .put(
@@ -66,11 +80,17 @@ export function decisionSheet(): SheetPlan {
       'The draws follow the stated shapes; they do not make the shapes right. No substitute for professional judgement.',
       'caution',
     )
-    .put('A5', 'What a season brings and costs', 'section')
-    .putRows('A', INPUTS_ROW, INPUTS)
+    .put(`A${SHORT_ROW - 1}`, 'In short', 'section')
+    .put(`A${INPUTS_ROW - 1}`, '5  What a season brings and costs', 'section')
+    .putRows(
+      'A',
+      INPUTS_ROW,
+      INPUTS.map(([, ...shown]) => shown),
+    )
     .look(`A${INPUTS_ROW}:A${INPUTS_ROW + 5}`, 'word')
     .look(`B${INPUTS_ROW}:B${INPUTS_ROW + 5}`, 'input')
     .look(`C${INPUTS_ROW}:C${INPUTS_ROW + 5}`, 'unit');
+  SHORT.forEach((text, i) => sheet.put(`A${SHORT_ROW + i}`, text, 'verdict'));
   scenarios(sheet);
   answers(sheet);
   return sheet;
@@ -78,7 +98,17 @@ export function decisionSheet(): SheetPlan {
 
 function scenarios(sheet: SheetPlan): void {
   sheet
-    .put('O5', 'The season under each number of presses, a scenario a row', 'section')
+    .put('O4', '5  The season under each number of presses, a scenario a row', 'section')
+    .put(
+      'O5',
+      'bottles = yield x what is delivered, or what the presses take if that is less; overflow = bottles beyond what the store holds',
+      'note',
+    )
+    .put(
+      'O6',
+      'margin = bottles x (price - making) - overflow x elsewhere - presses x running one - days x cold store',
+      'note',
+    )
     .put(`O${HEAD - 1}`, 'tonnes', 'unit')
     .put(`O${HEAD}`, 'delivered')
     .look(`O${HEAD}:X${HEAD}`, 'head')
@@ -117,7 +147,8 @@ function scenarios(sheet: SheetPlan): void {
 function answers(sheet: SheetPlan): void {
   const best = (first: number, last = first): string => `B${BEST_ROW + first}:D${BEST_ROW + last}`;
   sheet
-    .put(`A${BEST_ROW - 1}`, 'Which case to choose: the margin, 1,000 euros', 'section')
+    .put(`A${BEST_ROW - 2}`, '6  Which case to choose: the margin, 1,000 euros', 'section')
+    .put(`A${BEST_ROW - 1}`, 'regret: how much less than the best of the same scenario', 'unit')
     .put(`A${BEST_ROW}`, `=TRANSPOSE(UNDERCURVE.BESTOF(${table(MARGIN)},TRUE))`)
     .look(`A${BEST_ROW}:D${BEST_ROW}`, 'head')
     .look(`A${BEST_ROW + 1}:A${BEST_ROW + 11}`, 'word')
@@ -125,20 +156,30 @@ function answers(sheet: SheetPlan): void {
     .format(best(2, 4), '0.0')
     .format(best(5, 7), '0.0%')
     .format(best(8, 10), '0.0')
-    .put(`A${BEST_ROW + 12}`, VERDICT, 'verdict')
-    .put(`A${CHANCES_ROW - 1}`, 'The chance of more bottles than the store holds', 'section')
+    .put(`A${CHANCES_ROW - 2}`, '7  The chance of more bottles than the store holds', 'section')
+    .put(`A${CHANCES_ROW - 1}`, 'above the threshold: bottles that must go elsewhere', 'unit')
     .put(`A${CHANCES_ROW}`, `=UNDERCURVE.EXCEEDANCE(${table(BOTTLES)},${cellOf('store')})`)
     .look(`A${CHANCES_ROW}:D${CHANCES_ROW}`, 'head')
     .look(`A${CHANCES_ROW + 1}:A${CHANCES_ROW + 14}`, 'word')
     .look(`B${CHANCES_ROW + 1}:D${CHANCES_ROW + 14}`, 'result')
     .format(`B${CHANCES_ROW + 5}:D${CHANCES_ROW + 13}`, '0.0%')
-    .put(`F${DRIVERS_ROW - 1}`, 'What moves the margin of the middle case', 'section')
+    .put(`F${DRIVERS_ROW - 2}`, `="8  What moves the margin of "&C${BEST_ROW}`, 'section')
+    .put(
+      `F${DRIVERS_ROW - 1}`,
+      'share of variance: how much less the margin would vary if this input were known; the largest first',
+      'unit',
+    )
     .put(`F${DRIVERS_ROW}`, `=TRANSPOSE(UNDERCURVE.DRIVERS(${DRIVING},${spillOf(MARGIN[1])}))`)
     .look(`F${DRIVERS_ROW}:L${DRIVERS_ROW}`, 'head')
     .look(`F${DRIVERS_ROW + 1}:F${DRIVERS_ROW + 7}`, 'word')
     .look(`G${DRIVERS_ROW + 1}:L${DRIVERS_ROW + 7}`, 'result')
     .format(`G${DRIVERS_ROW + 1}:L${DRIVERS_ROW + 6}`, '0.00')
-    .put(`F${CHECK_ROW - 2}`, 'Check: the linked harvest against its shape', 'section')
+    .put(`F${CHECK_ROW - 3}`, '9  Check: the linked harvest against its shape, tonnes', 'section')
+    .put(
+      `F${CHECK_ROW - 2}`,
+      'drawn should lie from "allowed from" to "allowed to"; the overall line allows for the number of comparisons',
+      'unit',
+    )
     .put(`F${CHECK_ROW - 1}`, `=INDEX(F${CHECK_ROW}#,2,2)`, 'verdict')
     .put(`F${CHECK_ROW}`, `=UNDERCURVE.CHECK(${SEASON.harvest},${SEASON.harvestShape})`)
     .look(`F${CHECK_ROW}:K${CHECK_ROW}`, 'head')
@@ -149,10 +190,10 @@ function answers(sheet: SheetPlan): void {
     .chart({
       id: 'margin-by-presses',
       col: 5,
-      row: 3,
+      row: 9,
       shift: 0,
       width: 480,
-      height: 190,
+      height: 204,
       data: barsChart({
         title: 'Mean margin by the number of presses',
         x: 'case',

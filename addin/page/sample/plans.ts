@@ -67,11 +67,12 @@ export function plansSheet(): SheetPlan {
     .look('H6:H9', 'word')
     .look('I6:I9', 'input')
     .put('H10', 'room: tonnes the cold store holds', 'unit')
+    .put('H11', 'hours: of pressing; cost: how strongly hours weigh', 'unit')
     .putRows('K', 5, [['how the even plans were drawn']])
     .look('K5:L5', 'head')
     .put('K6', `=UNDERCURVE.ACCEPTANCE(${arguments_(CONDITIONS, 'plans')})`, 'word')
-    .look('K7:K40', 'word')
-    .look('L6:L40', 'result')
+    .look('K7:K50', 'word')
+    .look('L6:L50', 'result')
     .putRows('N', 5, [
       ['whole crates', '', 'kind', 'from', 'to', 'step'],
       ['red+green+yellow=24', '', 'red', 0, 24, 1],

@@ -3,6 +3,8 @@
  * days in the cold store are drawn given the harvest, what the presses take is drawn for three
  * numbers of presses, and events of spoilage are summed. All figures invented.
  */
+import { scatterChart } from './charts';
+import { GREEN } from './looks';
 import { SEED } from './quantities';
 import { SheetPlan } from './sheet';
 
@@ -36,7 +38,7 @@ export const SEASON = {
 export function seasonSheet(): SheetPlan {
   const sheet = new SheetPlan('Season', { columns: 21, rows: LAST_ROW, frozenRows: 0 })
     .columnWidths([
-      ...[110, 110, 110, 110, 110, 60, 16, 16, 16, 80, 80],
+      ...[120, 130, 150, 110, 130, 130, 16, 16, 16, 80, 80],
       ...[80, 80, 80, 90, 90, 90, 80, 80, 80, 80],
     ])
     .put('A1', 'Season: inputs that belong together', 'title')
@@ -67,13 +69,15 @@ export function seasonSheet(): SheetPlan {
   return sheet;
 }
 
+/** A shape block from this cell on: name, value, and where it has one its unit. */
 function block(sheet: SheetPlan, column: string, row: number, lines: (string | number)[][]): void {
-  const next = String.fromCharCode(column.charCodeAt(0) + 1);
+  const [next, third] = [1, 2].map((n) => String.fromCharCode(column.charCodeAt(0) + n));
   const last = row + lines.length - 1;
   sheet
     .putRows(column, row, lines)
     .look(`${column}${row}:${column}${last}`, 'word')
-    .look(`${next}${row}:${next}${last}`, 'input');
+    .look(`${next}${row}:${next}${last}`, 'input')
+    .look(`${third}${row}:${third}${last}`, 'unit');
 }
 
 function linked(sheet: SheetPlan): void {
@@ -90,20 +94,36 @@ function linked(sheet: SheetPlan): void {
     .look('C10', 'input')
     .put('D10', 'from -1 to 1; 0 for no link', 'unit')
     .put('A13', 'harvest, tonnes', 'unit')
-    .put('D13', 'price, euros a bottle', 'unit');
+    .put('D13', 'price, euros a bottle', 'unit')
+    .chart({
+      id: 'harvest-and-price',
+      col: 4,
+      row: 19,
+      shift: 8,
+      width: 300,
+      height: 250,
+      data: scatterChart(
+        'Harvest and price, linked',
+        'harvest, tonnes',
+        'price, euros a bottle',
+        `Season!L${HEAD}:L${LAST_ROW}`,
+        `Season!M${HEAD}:M${LAST_ROW}`,
+        GREEN,
+      ),
+    });
   block(sheet, 'A', 14, [
     ['density', 'EXP(-0.5*((x-usual)/spread)^2)'],
-    ['from', 300],
-    ['to', 1500],
-    ['usual', 900],
-    ['spread', 130],
+    ['from', 300, 'the least possible'],
+    ['to', 1500, 'the most possible'],
+    ['usual', 900, 'the usual season'],
+    ['spread', 130, 'how far from it'],
   ]);
   block(sheet, 'D', 14, [
     ['density', 'EXP(-ABS(x-usual)/spread)'],
-    ['from', 0.4],
-    ['to', 0.9],
-    ['usual', 0.64],
-    ['spread', 0.04],
+    ['from', 0.4, 'the least possible'],
+    ['to', 0.9, 'the most possible'],
+    ['usual', 0.64, 'the likeliest'],
+    ['spread', 0.04, 'how far from it'],
   ]);
 }
 
@@ -113,9 +133,9 @@ function chain(sheet: SheetPlan): void {
     .put('A21', 'days; the harvest of the same row in steps of 20 tonnes', 'unit');
   block(sheet, 'A', 22, [
     ['density', 'x^2*EXP(-3*x/(days*harvest/900))'],
-    ['from', 0],
-    ['to', 150],
-    ['days', 24],
+    ['from', 0, 'days'],
+    ['to', 150, 'days'],
+    ['days', 24, 'the mean, of a harvest of 900 tonnes'],
   ]);
 }
 
@@ -133,10 +153,10 @@ function whatIf(sheet: SheetPlan): void {
     .put('A32', 'tonnes', 'unit');
   block(sheet, 'A', 33, [
     ['density', 'EXP(-0.5*((x-presses*each)/(spread*SQRT(presses)))^2)'],
-    ['from', 0],
-    ['to', 4000],
-    ['each', 290],
-    ['spread', 35],
+    ['from', 0, 'tonnes'],
+    ['to', 4000, 'tonnes'],
+    ['each', 290, 'tonnes a press in the usual season'],
+    ['spread', 35, 'tonnes, how far one press is from that'],
   ]);
 }
 
@@ -149,14 +169,14 @@ function spoilage(sheet: SheetPlan): void {
     ['density', 'rate^x/FACT(x)'],
     ['from', 0],
     ['to', 40],
-    ['step', 1],
-    ['rate', 2.5],
+    ['step', 1, 'whole events'],
+    ['rate', 2.5, 'the mean'],
   ]);
   block(sheet, 'D', 41, [
     ['density', 'EXP(-x/usual)'],
     ['from', 0],
     ['to', 'unbounded'],
-    ['usual', 9],
+    ['usual', 9, 'the mean'],
   ]);
 }
 
@@ -165,9 +185,10 @@ function scenarios(sheet: SheetPlan): void {
     `=UNDERCURVE.DRAW(${shape},,$B$5,$B$6,${label})`;
   const share = (k: number): string => `CHOOSECOLS(J${FIRST}#,${k})`;
   sheet
-    .put('J5', 'The season, a scenario a row', 'section')
+    .put('J4', 'The season, a scenario a row', 'section')
+    .put('J5', 'The number above a column is that of the section which states it.', 'note')
     .putRows('J', HEAD - 2, [
-      ['1 shares', '', '1 linked', '', '2 chain', '3 what if', '', '', '4 count', '4 totals'],
+      ['1  shares', '', '1  linked', '', '2  chain', '3  what if', '', '', '4  count', '4  totals'],
       ['', '', 'tonnes', 'euros', 'days', 'tonnes', 'tonnes', 'tonnes', '', 'tonnes', 'tonnes'],
       ['harvest', 'price', 'harvest', 'price', 'days'],
     ])

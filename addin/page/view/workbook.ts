@@ -200,6 +200,6 @@ export class WorkbookView extends Spreadsheet {
       editor?.setAttribute('aria-label', label);
     };
     name(this.content.el, 'Content of the selected cell');
-    name(this.gridFrame.el, `Grid: arrow keys move, typing edits`);
+    name(this.gridFrame.el, 'Grid: arrow keys move, typing edits, F6 leaves');
   }
 }

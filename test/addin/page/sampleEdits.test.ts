@@ -81,7 +81,7 @@ describe('an edit of the sample', () => {
     ['how often something spoils', 'Season', 'B45', '3', EVENTS],
     ['how much spoils', 'Season', 'E44', '8', EVENT_SIZE],
     ['the rows of the season', 'Season', 'B5', '300', SCENARIOS],
-    ['what the store holds', 'Decision', 'B7', '650', [...MARGINS, ...OVERFLOWS]],
+    ['what the store holds', 'Decision', 'B13', '650', [...MARGINS, ...OVERFLOWS]],
     ['an unused cell', 'Shapes', 'J30', '1', []],
     ['the edge of a bin', 'Acceptance', 'AE30', '25', []],
   ])('editing %s recalculates what depends on it and nothing else [law]', (...edit) => {

@@ -18,7 +18,7 @@ const numbers = (sheet: string, column: string): number[] =>
   rectangle(grid, sheet, [column], 9, 8 + N).map(([cell]) => Number(cell));
 
 /** Rows as columns. */
-const turned = (rows: Range) => rows[0]!.map((_, j) => rows.map((row) => row[j]));
+const turned = (rows: Range): Range => rows[0]!.map((_, j) => rows.map((row) => row[j]!));
 
 const farthest = (a: readonly number[], b: readonly number[]): number =>
   Math.max(...a.map((x, i) => Math.abs(x - b[i]!)));
@@ -85,15 +85,28 @@ describe('the sample, from links to a decision', () => {
       names,
       ...rectangle(grid, 'Decision', letters, 9, 8 + N),
     ];
-    expect(grid.readSpill('Decision', 'A28')).toEqual(
+    expect(grid.readSpill('Decision', 'A36')).toEqual(
       call('EXCEEDANCE', columns(['P', 'Q', 'R']), one(760)),
     );
     const best = call('BESTOF', columns(['V', 'W', 'X']), [[true]]);
-    const shown = grid.readSpill('Decision', 'A14');
+    const shown = grid.readSpill('Decision', 'A21');
     expect(shown).toEqual(turned(best));
-    const share = Math.round(100 * (best[2]!.at(best[0]!.indexOf('chance to be best')) as number));
-    expect(grid.read('Decision', 'A26')).toBe(
-      `largest mean margin: 3 presses, the best in ${share}% of the scenarios`,
+    const figure = (item: string, table: Range = best): number =>
+      Number(table[2]![table[0]!.indexOf(item)]);
+    const [mean, from, to] = ['mean', 'mean, 95 % interval from', 'mean, 95 % interval to'].map(
+      (item) => figure(item).toFixed(1),
+    );
+    const percent = (share: number): string => `${Math.round(100 * share)}%`;
+    expect(grid.read('Decision', 'A6')).toBe(
+      `3 presses bring the largest mean margin: ${mean} thousand euros (95 % interval ${from} to ${to}), ` +
+        `the best in ${percent(figure('chance to be best'))} of the scenarios`,
+    );
+    const chances = turned(grid.readSpill('Decision', 'A36'));
+    const [above, least, most] = ['', ', 95 % interval from', ', 95 % interval to'].map((end) =>
+      percent(figure(`chance above${end}`, chances)),
+    );
+    expect(grid.read('Decision', 'A7')).toBe(
+      `they fill more bottles than the store holds with a chance of ${above} (95 % interval ${least} to ${most})`,
     );
     // Two presses leave apples behind, four cost more than they bring.
     expect(shown.find(([item]) => item === 'place')).toEqual(['place', 3, 1, 2]);
@@ -102,19 +115,25 @@ describe('the sample, from links to a decision', () => {
   test('sampleWorkbook() ranks what moves the margin of three presses [law]', () => {
     const letters = ['L', 'M', 'N', 'P', 'S'];
     const inputs = [
-      ['harvest', 'price', 'days', 'taken', 'spoilt'],
+      ['harvest', 'price', 'days stored', 'presses take', 'spoilt'],
       ...rectangle(grid, 'Season', letters, 9, 8 + N),
     ];
     const margin = rectangle(grid, 'Decision', ['W'], 9, 8 + N);
     const drivers = call('DRIVERS', inputs, margin);
     // A blank of ours spills as an empty text.
-    expect(grid.readSpill('Decision', 'F40')).toEqual(
+    expect(grid.readSpill('Decision', 'F21')).toEqual(
       turned(drivers.map((row) => row.map((cell) => cell ?? ''))),
     );
-    expect(drivers[1]?.[0]).toBe('price');
+    const share = Number(drivers[1]?.[drivers[0]!.indexOf('share of variance')]);
+    expect(grid.read('Decision', 'A8')).toBe(
+      `what moves the margin of 3 presses most: price, ${Math.round(100 * share)}% of its variance`,
+    );
   });
 
   test('sampleWorkbook() finds no sign against the linked harvest [law]', () => {
-    expect(grid.read('Decision', 'F14')).toMatch(/^no sign against the shape/);
+    expect(grid.read('Decision', 'F32')).toMatch(/^no sign against the shape/);
+    expect(grid.read('Decision', 'A9')).toBe(
+      `the harvest as drawn: ${grid.read('Decision', 'F32')}`,
+    );
   });
 });
