@@ -32,6 +32,8 @@ const strokes: Plugin = {
     for (const dataset of chart.data.datasets) {
       Object.assign(dataset, STROKES[dataset.label ?? '']);
     }
+    // Heights are read from 0 on; where points lie is not.
+    if (isScatter(chart)) Object.assign(chart.options.scales?.['y'] ?? {}, { beginAtZero: false });
   },
   // The legend is rebuilt by then; its lines get the dashes too.
   afterUpdate(chart) {
@@ -77,9 +79,13 @@ export function loadCharts(): void {
   Object.assign(globalThis, { Chart });
 }
 
+function isScatter({ data }: Chart): boolean {
+  return data.datasets.every((dataset) => 'showLine' in dataset && dataset.showLine === false);
+}
+
 /** Lets the x-axis of a line end where its data end, still numbered at round values. */
 function endWithData(scale: Scale): void {
-  if (!(scale instanceof LinearScale)) return;
+  if (!(scale instanceof LinearScale) || isScatter(scale.chart)) return;
   const { min, max } = scale.getMinMax(false);
   scale.ticks = scale.ticks.filter(({ value }) => min <= value && value <= max);
   scale.min = min;

@@ -80,7 +80,8 @@ function readLine(
   const label = words.get('label') ?? null;
   const where = label === null ? place : `${place} ${quoted(label)}`;
   const hasLimits = [...words].some(([name, cell]) => isEnd(name) && !isBlankOrZero(cell));
-  if (!hasLimits) {
+  // With one end's column alone the other is missing, even where the one says 0.
+  if (!hasLimits && words.has('from') && words.has('to')) {
     words.delete('from');
     words.delete('to');
   }

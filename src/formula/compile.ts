@@ -266,11 +266,7 @@ class Compiler {
     }
     const row = VOCABULARY.get(callee.toUpperCase());
     if (!row || !/^[A-Z]/i.test(callee)) {
-      throw this.error(
-        at,
-        `"${cited(callee)}" is not a known function`,
-        `use one of: ${functionNames().join(', ')}`,
-      );
+      throw this.error(at, `"${cited(callee)}" is not a known function`, suggestions(callee));
     }
     return this.applyNamed(row, tree, scope);
   }
@@ -451,6 +447,15 @@ class Compiler {
 /** Names of the functions of the vocabulary, operators left out. */
 export function functionNames(): readonly string[] {
   return [...VOCABULARY.keys()].filter((name) => /^[A-Z]/.test(name));
+}
+
+/** The functions that begin as the unknown one does, or all where none does. */
+function suggestions(unknown: string): string {
+  const initial = unknown.charAt(0).toUpperCase();
+  const alike = functionNames().filter((name) => name.startsWith(initial));
+  return alike.length === 0
+    ? `use one of: ${functionNames().join(', ')}`
+    : `use a known one (${alike.join(', ')} begin${alike.length === 1 ? 's' : ''} with ${initial})`;
 }
 
 function counted(n: number, noun: string): string {

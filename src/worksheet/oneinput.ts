@@ -5,6 +5,7 @@
 import type { Range } from '../density/cells';
 import type { Family, Places } from '../density/shape';
 import { readFamily } from '../density/shape';
+import { functionNames } from '../formula/compile';
 import { nameKey } from '../formula/names';
 import { InputError } from '../errors';
 import type { Key } from '../random/key';
@@ -61,6 +62,16 @@ export function endNamed(name: string): 'from' | 'to' | null {
   return key === 'from' || key === 'to' ? key : null;
 }
 
+/** The givens as written, then what else stands in formulas and limits except the functions, x and `unbounded`. */
+function namesToGive(family: Family): readonly string[] {
+  const givens = family.givens.map((given) => given.trim());
+  const known = new Set([...givens, ...functionNames(), 'x', 'unbounded'].map(nameKey));
+  return [
+    ...givens,
+    ...[...family.names()].filter((name) => !known.has(name)).map((name) => name.toLowerCase()),
+  ];
+}
+
 /**
  * Makes sure that a name can take other values: a given, a name that the formula or the limits use,
  * or an end of the limits.
@@ -71,7 +82,7 @@ export function checkName(name: string, family: Family, where: string): void {
   const isKnown = family.names().has(key);
   if (endNamed(name) === null) {
     if (isKnown) return;
-    const known = [...family.givens.map((given) => given.trim()), 'from', 'to'].join(', ');
+    const known = [...namesToGive(family), 'from', 'to'].join(', ');
     throw new InputError(
       where,
       `"${name.trim()}" is no given and no end of the limits`,

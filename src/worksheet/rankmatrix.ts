@@ -1,6 +1,15 @@
 /** The matrix of wished rank correlations that LINKEDSHARES and ALIGNRANKS take. */
 import type { Cell, Range } from '../density/cells';
-import { given, isBlank, isText, numberIn, passErrors, sizeOf } from '../density/cells';
+import {
+  given,
+  isBlank,
+  isText,
+  numberIn,
+  passErrors,
+  quoted,
+  sizeOf,
+  word,
+} from '../density/cells';
 import { nearestRankCorrelations, scoreCorrelations } from '../draw/rankcorrelation';
 import { InputError } from '../errors';
 import type { Matrix } from '../numeric/matrix';
@@ -17,8 +26,8 @@ interface Wished {
 }
 
 /**
- * Reads the matrix; a row and a column of names before it are passed over.
- * @throws {InputError} for text, another shape than a square, a diagonal other than 1, numbers
+ * Reads the matrix; a row and a column of names before it must agree where both stand.
+ * @throws {InputError} for text, another shape than a square, names of rows and columns that differ, a diagonal other than 1, numbers
  * outside −1 … 1, two sides that differ, and correlations that no columns have together; the last
  * names the nearest ones that are possible.
  */
@@ -55,11 +64,26 @@ function withoutNames(range: Range, where: string): Named {
   const below = range.slice(top);
   const first = below.map((row) => row[0]!);
   const left = range[0]!.length > 1 && first.some(isText) && first.every(isName) ? 1 : 0;
+  if (top === 1 && left === 1) requireSameNames(range[0]!.slice(1), first, where);
   return {
     cells: below.map((row) => row.slice(left)),
     placeOf: (i, j) =>
       range.length === 1 ? where : `${where}, row ${i + top + 1}, column ${j + left + 1}`,
   };
+}
+
+/** The matrix reads the same by rows and by columns only if their names do. */
+function requireSameNames(columns: readonly Cell[], rows: readonly Cell[], where: string): void {
+  columns.forEach((column, i) => {
+    const row = rows[i];
+    if (!isText(column) || row === undefined || !isText(row)) return;
+    if (word(row) === word(column)) return;
+    throw new InputError(
+      `${where}, row ${i + 2}`,
+      `its name is ${quoted(row)}, that of column ${i + 2} is ${quoted(column)}`,
+      'give rows and columns the same names in the same order',
+    );
+  });
 }
 
 function requireCorrelations(ranks: Matrix, placeOf: Named['placeOf']): void {

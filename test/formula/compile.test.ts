@@ -190,6 +190,13 @@ describe('compile', () => {
     );
   });
 
+  it('an unknown function is answered with those that begin alike [law]', () => {
+    expect(refusalOf('NORMDIST(x,1,2,FALSE)')).toBe(
+      'Formula, character 1: "NORMDIST" is not a known function; use a known one (NOT, NORM.S.DIST, NORM.DIST begin with N).',
+    );
+    expect(refusalOf('KURT(x)')).toMatch(/; use one of: POWER, AND, .*YEAR.*\.$/);
+  });
+
   it('functionNames() are all names that may be called [law]', () => {
     expect(functionNames()).toContain('TANH');
     expect(functionNames().every((name) => /^[A-Z][A-Z0-9.]*$/.test(name))).toBe(true);

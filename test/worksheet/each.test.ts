@@ -193,7 +193,7 @@ describe('each', () => {
           ['k', 'tt'],
           [3, 4],
         ]),
-      'lines (argument 5), column 2: "tt" is no given and no end of the limits; use one of: t, from, to.',
+      'lines (argument 5), column 2: "tt" is no given and no end of the limits; use one of: t, k, from, to.',
     ],
     [
       'a name that stands twice',

@@ -403,6 +403,19 @@ const refused: readonly (readonly [string, () => unknown, string])[] = [
     'rankcorrelations (argument 1), row 2, column 3: "high" is not a number; give a number.',
   ],
   [
+    'names in another order',
+    () =>
+      shares(
+        [
+          ['', 'a', 'b'],
+          ['b', 1, 0.5],
+          ['a', 0.5, 1],
+        ],
+        [[5]],
+      ),
+    'rankcorrelations (argument 1), row 2: its name is "b", that of column 2 is "a"; give rows and columns the same names in the same order.',
+  ],
+  [
     'another diagonal',
     () =>
       shares(

@@ -227,6 +227,11 @@ describe('a mistake in a shape list names its line', () => {
       'density (argument 1), line 1 "a": the list has no column "to"; add a column to and its value.',
     ],
     [
+      'a heading to that is misspelt beside a from of 0',
+      small(['from', 'too', 'rows'], ['a', 'EXP(-(x^2))', 0, 3, 100]),
+      'density (argument 1), line 1 "a": the list has no column "to"; add a column to and its value.',
+    ],
+    [
       'a step',
       small(['from', 'to', 'step', 'rows'], ['a', '1', 0, 9, -1, 100]),
       'density (argument 1), line 1 "a", step: -1 is negative; give the distance of neighbouring values, such as 1, or 0 for a continuous quantity.',

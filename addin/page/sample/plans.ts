@@ -67,7 +67,7 @@ export function plansSheet(): SheetPlan {
     .look('H6:H9', 'word')
     .look('I6:I9', 'input')
     .put('H10', 'room: tonnes the cold store holds', 'unit')
-    .put('H11', 'hours: of pressing; cost: how strongly hours weigh', 'unit')
+    .put('H11', 'hours, cost: hours of pressing', 'unit')
     .putRows('K', 5, [['how the even plans were drawn']])
     .look('K5:L5', 'head')
     .put('K6', `=UNDERCURVE.ACCEPTANCE(${arguments_(CONDITIONS, 'plans')})`, 'word')
