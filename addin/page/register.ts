@@ -53,7 +53,8 @@ export function registerFunctions(
           long && takesLong(entry.name, ranges)
             ? long.replyFor(entry.name, ranges, place)
             : undefined;
-        const result = answer(entry, args as readonly GridArgument[], later);
+        const format = place && this.getters.getCell(place)?.format;
+        const result = answer(entry, args as readonly GridArgument[], later, format);
         onCall(entry.name, place, performance.now() - started);
         return result;
       },
@@ -61,17 +62,21 @@ export function registerFunctions(
   }
 }
 
-/** What the grid shows for a call: the columns of the result, or one error cell. Never throws. */
+/**
+ * What the grid shows for a call: the columns of the result, numbers in `format` where their
+ * cells have none of their own, or one error cell. Never throws.
+ */
 export function answer(
   entry: Pick<CatalogueEntry, 'call'>,
   args: readonly GridArgument[],
   later: ReplyLater = () => undefined,
+  format?: string,
 ): GridCell | GridCell[][] {
   try {
     const ranges = args.map((argument) => toRange(argument, helpers.isEvaluationError));
     const reply = later(ranges);
     if (reply === null) return { value: WORKING, message: 'The proof is being worked out.' };
-    return toColumns(reply ? cellsOf(reply) : entry.call(ranges));
+    return toColumns(reply ? cellsOf(reply) : entry.call(ranges), format);
   } catch (problem) {
     if (problem instanceof CellErrorPassed) {
       return findErrorCell(args, problem.code) ?? { value: problem.code, message: problem.code };

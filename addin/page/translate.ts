@@ -11,6 +11,8 @@ import type { Cell, ErrorCell, Range } from '../../src/index';
 export interface GridCell {
   readonly value: number | string | boolean | null;
   readonly message?: string;
+  /** How the grid shows a number, such as `0.00`. */
+  readonly format?: string;
 }
 /** An argument as the grid hands it over: omitted, one cell, or columns of cells. */
 export type GridArgument = undefined | GridCell | readonly (readonly GridCell[])[];
@@ -30,16 +32,16 @@ export function toRange(argument: GridArgument, isErrorCode: IsErrorCode): Range
 }
 
 /**
- * A result as columns of grid cells.
+ * A result as columns of grid cells, numbers in a format if one is given.
  * @throws {Error} a bug of ours: a ragged result, or a cell the grid would show as 0 (NaN, infinity).
  */
-export function toColumns(result: Range): GridCell[][] {
+export function toColumns(result: Range, format?: string): GridCell[][] {
   const width = result[0]?.length ?? 0;
   if (width === 0) throw new Error('bug: an empty result');
   const columns: GridCell[][] = Array.from({ length: width }, () => []);
   for (const row of result) {
     if (row.length !== width) throw new Error('bug: a ragged result');
-    row.forEach((cell, i) => columns[i]?.push(toGridCell(cell)));
+    row.forEach((cell, i) => columns[i]?.push(toGridCell(cell, format)));
   }
   return columns;
 }
@@ -72,10 +74,10 @@ function toCell(cell: GridCell | undefined, isErrorCode: IsErrorCode): Cell {
   return value;
 }
 
-function toGridCell(cell: Cell): GridCell {
+function toGridCell(cell: Cell, format: string | undefined): GridCell {
   if (typeof cell === 'number') {
     if (!Number.isFinite(cell)) throw new Error(`bug: a result of ${cell}`);
-    return { value: cell + 0 };
+    return format === undefined ? { value: cell + 0 } : { value: cell + 0, format };
   }
   if (cell === null) return { value: '' };
   if (isErrorCell(cell)) return { value: cell.error, message: cell.error };

@@ -206,5 +206,5 @@ function drawn(sheet: SheetPlan): void {
     .put(`K${DRAWN_HEAD}`, 'waiting', 'head')
     .put('J21', `=UNDERCURVE.DRAW(${COLD.shape},${COLD.limits},${ROWS},${SEED},J20${COLD.givens})`)
     .put('K21', `=UNDERCURVE.DRAW(${WAITING},,${ROWS},${SEED},K20)`)
-    .format('J21:K10020', '0.00');
+    .format('J21:K21', '0.00');
 }

@@ -116,7 +116,8 @@ function scenarios(sheet: SheetPlan): void {
       `O${FIRST}`,
       `=IF(${SEASON.harvest}>${SEASON.spoilt},${SEASON.harvest}-${SEASON.spoilt},0)`,
     )
-    .format(`O${FIRST}:X${LAST_ROW}`, '0.0');
+    .format(`O${FIRST}:X${FIRST}`, '0.0')
+    .format(`S${FIRST}:U${LAST_ROW}`, '0.0');
   const heads = [
     ['P', 'bottles, thousands'],
     ['S', 'overflow, thousands'],

@@ -53,7 +53,7 @@ export function drawsSheet(): SheetPlan {
     .look('A6:C6', 'head')
     .look('B6', 'input')
     .look('A7:C7', 'unit')
-    .format(`B8:C${SHEET_ROWS}`, '0.00')
+    .format('B8:C8', '0.00')
     .putRows('E', 6, [
       ['of the draws', `=${APPLES.label}`, `=${DOWNTIME.label}`],
       ['', APPLES.unit, DOWNTIME.unit],

@@ -142,7 +142,7 @@ function results(sheet: SheetPlan): void {
     .put(`I${FIRST}`, BOTTLES)
     .put(`J${FIRST}`, MARGIN)
     .format(`I${FIRST}:J${LAST_ROW}`, '0.0')
-    .format(`L${FIRST}:W${LAST_ROW}`, '0.000')
+    .format(`L${FIRST}`, '0.000')
     .put(`A${FIGURES_ROW - 2}`, "The season's margin", 'section')
     .putRows('A', FIGURES_ROW, FIGURES)
     .look(`A${FIGURES_ROW}:A${FIGURES_ROW + 4}`, 'word')

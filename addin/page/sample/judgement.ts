@@ -230,7 +230,7 @@ function draws(sheet: SheetPlan): void {
     .look('N6:S6', 'head')
     .look('N7:N10', 'word')
     .format('P7:S10', '0.00')
-    .format(`P${FIRST}:S${LAST_ROW}`, '0.00');
+    .format(`P${FIRST}:S${FIRST}`, '0.00');
   for (const { label, unit, spill, drawn } of MADE) {
     sheet
       .put(`${drawn}6`, `=${drawn}${HEAD}`)

@@ -206,9 +206,10 @@ function scenarios(sheet: SheetPlan): void {
     .put(`O${HEAD}`, `=UNDERCURVE.CASES(${PRESSES_SHAPE},,$B$5,$B$6,"taken",$A$29:$D$30)`)
     .put(`R${FIRST}`, drawn(EVENTS_SHAPE, `R${HEAD}`))
     .put(`S${HEAD}`, `=UNDERCURVE.TOTAL(R${FIRST}#,${TONNES_SHAPE},,,$B$6,"spoilt")`)
-    .format(`J${FIRST}:K${LAST_ROW}`, '0.0000')
-    .format(`L${FIRST}:L${LAST_ROW}`, '0.0')
-    .format(`M${FIRST}:M${LAST_ROW}`, '0.000')
-    .format(`N${FIRST}:Q${LAST_ROW}`, '0.0')
+    .format(`J${FIRST}`, '0.0000')
+    .format(`L${FIRST}`, '0.0')
+    .format(`M${FIRST}`, '0.000')
+    .format(`N${FIRST}`, '0.0')
+    .format(`O${HEAD}`, '0.0')
     .format(`S${FIRST}:T${LAST_ROW}`, '0.0');
 }

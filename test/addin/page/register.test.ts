@@ -147,3 +147,18 @@ describe('answer(entry, args)', () => {
     expect(answer({ call: () => [[NaN]] }, [])).toEqual(shown);
   });
 });
+
+describe('registerFunctions(catalogue), looks', () => {
+  test('a result has the number format of its first cell, and a cell keeps its own [law]', () => {
+    const data = workbookOf({ Sheet1: { A1: '=UNDERCURVE.TEST.KEEP(1)', B1: '=A1#+0' } });
+    const formats = ['0.00', '0.0'];
+    Object.assign(data.sheets[0]!, { formats: { A1: 1, A3: 2 } });
+    const { getters } = gridOf({ ...data, formats: { 1: formats[0], 2: formats[1] } }, log).model;
+    const shown = (col: number) =>
+      [0, 1, 2].map(
+        (row) => getters.getEvaluatedCell({ sheetId: 'Sheet1', col, row }).formattedValue,
+      );
+    expect(shown(0)).toEqual(['10.00', '20.00', '30.0']);
+    expect(shown(1)).toEqual(['10.00', '20.00', '30.0']);
+  });
+});
