@@ -92,3 +92,14 @@ function readLine(
 function isEnd(name: BlockWord): boolean {
   return name === 'from' || name === 'to';
 }
+
+/** Names the line of a list in a complaint that does not name it yet. */
+export function inLine<T>(line: string | undefined, work: () => T): T {
+  try {
+    return work();
+  } catch (error) {
+    if (line !== undefined && error instanceof InputError && !error.where.startsWith(line))
+      throw error.within(line);
+    throw error;
+  }
+}

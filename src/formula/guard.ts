@@ -52,7 +52,7 @@ class Assumptions {
   }
 }
 
-export interface Guarded {
+interface Guarded {
   readonly tape: Tape;
   /** True if a condition told something of what it guards, not only where that is asked. */
   readonly isTold: boolean;

@@ -23,7 +23,7 @@ interface Sum {
 }
 
 /** u = factor · d + shift, the shift with room for rounding. */
-export interface Multiple {
+interface Multiple {
   readonly factor: number;
   readonly shift: number;
   readonly room: number;

@@ -2,7 +2,7 @@
 import type { Range } from '../density/cells';
 import { CURRENT_METHOD } from '../density/givens';
 import { endCell } from '../density/limits';
-import type { PlainShape } from '../density/shape';
+import type { PlainShape } from '../density/kinds';
 import type { Lattice } from '../density/lattice';
 import type { Column } from '../draw/rejection';
 import type { Envelope } from '../envelope/envelope';

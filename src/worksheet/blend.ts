@@ -2,7 +2,7 @@
 import { areaUnder, poolOfTables } from '../density/blend';
 import type { Cell, Range } from '../density/cells';
 import { counted, given } from '../density/cells';
-import type { FormulaShape, PlainShape, TableShape } from '../density/shape';
+import type { FormulaShape, PlainShape, TableShape } from '../density/kinds';
 import { readShapes } from '../density/shape';
 import { DEFAULT_VARIABLE } from '../density/limits';
 import { InputError } from '../errors';

@@ -1,8 +1,9 @@
 /** CASES: a what-if table, one column of draws a case, its rows paired. */
 import type { Cell, Range } from '../density/cells';
 import { given, isBlankOrZero, isText, passErrors, quoted, sizeOf } from '../density/cells';
-import type { Family, Overrides, PlainShape } from '../density/shape';
-import { inLine } from '../density/shape';
+import type { Overrides, PlainShape } from '../density/kinds';
+import type { Family } from '../density/shape';
+import { inLine } from '../density/shapelist';
 import { InputError } from '../errors';
 import { nameKey } from '../formula/names';
 import { argumentOr } from './keys';

@@ -1,8 +1,9 @@
 /** EACH: one draw a line of conditions, such as days in store given the harvest of that row. */
 import type { Cell, Range } from '../density/cells';
 import { given, isBlankOrZero, isText, passErrors, quoted, sizeOf } from '../density/cells';
-import type { Family, Overrides, PlainShape } from '../density/shape';
-import { inLine } from '../density/shape';
+import type { Overrides, PlainShape } from '../density/kinds';
+import type { Family } from '../density/shape';
+import { inLine } from '../density/shapelist';
 import { drawEach } from '../draw/each';
 import type { RowsOfOne } from '../draw/each';
 import { InputError } from '../errors';

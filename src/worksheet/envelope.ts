@@ -1,6 +1,6 @@
 /** ENVELOPE: the proved pieces or boxes, one a row. */
 import type { Cell, Range } from '../density/cells';
-import type { PlainShape } from '../density/shape';
+import type { PlainShape } from '../density/kinds';
 import { readAnyShapes, readShapes } from '../density/shape';
 import type { Envelope } from '../envelope/envelope';
 import type { Hat } from '../envelope/hat';

@@ -1,6 +1,6 @@
 /** EXPECT: the exact mean of a quantity under a density, with proved bounds. */
 import type { Range } from '../density/cells';
-import type { PlainShape, SeveralShape } from '../density/shape';
+import type { PlainShape, SeveralShape } from '../density/kinds';
 import { readAnyShapes } from '../density/shape';
 import { boxExpectation } from '../exact/boxexpect';
 import type { Expectation } from '../exact/expect';

@@ -3,7 +3,8 @@
  * and TOTAL draw from.
  */
 import type { Range } from '../density/cells';
-import type { Family, Places } from '../density/shape';
+import type { Places } from '../density/kinds';
+import type { Family } from '../density/shape';
 import { readFamily } from '../density/shape';
 import { functionNames } from '../formula/compile';
 import { nameKey } from '../formula/names';

@@ -1,7 +1,8 @@
 /** Proofs and columns of shapes of one variable, each made once while it is kept (cache.ts). */
 import type { Lattice } from '../density/lattice';
-import type { PlainShape } from '../density/shape';
-import { inLine } from '../density/shape';
+import type { PlainShape } from '../density/kinds';
+import { once } from '../density/once';
+import { inLine } from '../density/shapelist';
 import { Drawer } from '../draw/column';
 import { PointDrawer } from '../draw/points';
 import type { Column, ColumnDrawer } from '../draw/rejection';
@@ -180,11 +181,6 @@ function pointEnvelopeOf(
     const smooth = curve ?? tape;
     return { envelope: provePoints(tape, smooth, lattice), smooth };
   });
-}
-
-function once<T extends object>(make: () => T): () => T {
-  let made: T | undefined;
-  return () => (made ??= make());
 }
 
 /** The column of a proved shape under a key. */

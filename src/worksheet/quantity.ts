@@ -3,7 +3,7 @@ import type { Range } from '../density/cells';
 import { given, givenUnlessZero, isText, passErrors, quoted, singleCell } from '../density/cells';
 import { Givens, readGivens } from '../density/givens';
 import { DEFAULT_VARIABLE, readLimitCells } from '../density/limits';
-import type { PlainShape } from '../density/shape';
+import type { PlainShape } from '../density/kinds';
 import { InputError } from '../errors';
 import type { PointTape } from '../exact/expectPoints';
 import type { Source } from '../formula/compile';

@@ -4,7 +4,8 @@
  */
 import type { Range } from '../density/cells';
 import { given, isBlank, quoted } from '../density/cells';
-import type { PlainShape, SeveralShape, Shape, Shapes } from '../density/shape';
+import type { PlainShape, SeveralShape, Shape } from '../density/kinds';
+import type { Shapes } from '../density/shape';
 import type { ListLine } from '../density/shapelist';
 import { readAnyShapes, readShapes } from '../density/shape';
 import { InputError } from '../errors';

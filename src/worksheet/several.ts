@@ -1,6 +1,6 @@
 /** Proofs and rows of shapes of several variables, each made once while it is kept (cache.ts). */
 import type { Axis } from '../density/limits';
-import type { SeveralShape } from '../density/shape';
+import type { SeveralShape } from '../density/kinds';
 import type { Rows } from '../draw/several';
 import { BoxDrawer } from '../draw/several';
 import type { BoxEnvelope, Joint } from '../envelope/boxes';

@@ -2,7 +2,7 @@
 import type { Range } from '../density/cells';
 import { CURRENT_METHOD } from '../density/givens';
 import type { Axis } from '../density/limits';
-import type { SeveralShape } from '../density/shape';
+import type { SeveralShape } from '../density/kinds';
 import type { Rows } from '../draw/several';
 import type { BoxEnvelope } from '../envelope/boxes';
 import { BoxProver } from '../envelope/boxes';

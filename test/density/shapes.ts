@@ -1,6 +1,7 @@
 /** Shapes read from cells, for tests. */
 import type { Cell, Range } from '../../src/density/cells';
-import type { FormulaShape, Shapes, TableShape } from '../../src/density/shape';
+import type { FormulaShape, TableShape } from '../../src/density/kinds';
+import type { Shapes } from '../../src/density/shape';
 import { readShapes } from '../../src/density/shape';
 
 const PLACES = { density: 'density (argument 1)', limits: 'limits (argument 2)', givens: 3 };

@@ -1,5 +1,5 @@
 /** From a formula's text to its proof and its exact shares, as the worksheet functions make them. */
-import type { PlainShape } from '../../src/density/shape';
+import type { PlainShape } from '../../src/density/kinds';
 import type { Envelope } from '../../src/envelope/envelope';
 import { polylineEnvelope } from '../../src/envelope/polyline';
 import { proveEnvelope } from '../../src/envelope/prove';
