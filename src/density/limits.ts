@@ -178,7 +178,7 @@ export function readAxes(variables: readonly LimitCells[], givens: Givens): read
     const step = numberIn(cells.step, at);
     if (!(step >= 0 && step < Infinity))
       throw new InputError(at, `${step} is below 0`, 'give 0 for a continuous variable, or 1');
-    const { from, to } = readEnds(cells, givens);
+    const { from, to } = readEnds(cells, givens, step > 0);
     if (from === -Infinity || to === Infinity) {
       throw new InputError(
         where,

@@ -129,9 +129,9 @@ export function acceptedTooRarely(
   });
   return new InputError(
     WHERE,
-    `only ${shortNumber(promised)} of proposals are sure to be accepted after ${boxes.length} boxes`,
+    `only ${shortNumber(promised)} of proposals are sure to be accepted after ${boxes.length} boxes, and less than 0.01 is not drawn`,
     loose.length > 0
       ? `narrow the limits; nothing lies outside ${loose.join(', ')}`
-      : 'narrow the limits to where the density matters, or simplify the conditions',
+      : 'narrow the limits to where the density matters, simplify the conditions, or take a thin set by its thickness: a variable gap with limits of its own in place of one that is another plus gap',
   );
 }

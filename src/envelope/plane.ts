@@ -77,11 +77,14 @@ export function planeMasses(
   // The box's middle is a double beside its centre; what that moves is within the room.
   const room = ROOM * (1 + Math.abs(logHi) + Math.abs(shift)) + rise;
   const upper = elementary.exp(logHi - shift + room);
+  const least = elementary.exp(meanLo - shift - room);
+  // Over a box that is far too steep for doubles a plane tells nothing.
+  const isTold = mean < Infinity;
   return {
     upper,
     // The room in `upper` covers the rounding here; more would favour this box over others.
-    upperMass: mulUp(upper * mean, measure.hi),
-    lowerMass: mulDown(elementary.exp(meanLo - shift - room) * mean * (1 - ROOM), measure.lo),
+    upperMass: isTold ? mulUp(upper * mean, measure.hi) : Infinity,
+    lowerMass: isTold ? Math.max(0, mulDown(least * mean * (1 - ROOM), measure.lo)) : 0,
     room,
   };
 }

@@ -105,10 +105,21 @@ describe('proveBoxes', () => {
     [
       'AND(ABS(early-late)<0.00001,early<0.25)',
       UNIT,
-      'Density: only 0 of proposals are sure to be accepted after 16384 boxes; narrow the limits; nothing lies outside early from 0 to 0.25, late from 0 to 0.250061.',
+      'Density: only 0 of proposals are sure to be accepted after 16384 boxes, and less than 0.01 is not drawn; narrow the limits; nothing lies outside early from 0 to 0.25, late from 0 to 0.250061.',
     ],
   ])('of %s is refused in full words [law]', (text, axes, message) => {
     expect(messageOf(() => provedBoxes(text, axes))).toBe(message);
+  });
+
+  // 1 − e^-x at 90 is 1 in doubles: the mass is 10^-3. Over the whole limits ln f falls by 90,000.
+  test('draws a density that is far too steep for doubles over the limits [law]', () => {
+    const { lowerMass, upperMass } = provedBoxes('EXP(0-early/0.001-late)', [
+      ['early', 0, 90],
+      ['late', 0, 90],
+    ]);
+    expect(lowerMass).toBeLessThan(1e-3);
+    expect(upperMass).toBeGreaterThan(1e-3);
+    expect(lowerMass / upperMass).toBeGreaterThan(0.95);
   });
 
   test('refuses a density without a bound [law]', () => {

@@ -56,6 +56,16 @@ describe('draw in several variables', () => {
     }
   });
 
+  it('takes a counted variable of a single value [law]', () => {
+    const limits: Range = [
+      ['early', 5, 5, 1],
+      ['late', 0, 90, 1],
+    ];
+    const rows = draw([['early+late<=7']], limits, [[100]], SEED, LABEL, []) as number[][];
+    expect(new Set(rows.map(([early]) => early))).toEqual(new Set([5]));
+    expect(new Set(rows.map(([, late]) => late))).toEqual(new Set([0, 1, 2]));
+  });
+
   it('takes steps of parts and mixes counted and continuous variables [law]', () => {
     const limits: Range = [
       ['boxes', 0, 2, 0.25],
