@@ -12,6 +12,12 @@ const WORDING: Readonly<Record<string, string>> = {
   'An unexpected error occurred. Submit a support ticket at odoo.com/help.':
     'Function: it failed for a reason of its own; please report the formula and this text:',
   'Unknown function: "%s"': 'Formula: "%s" is not a function here; check the spelling.',
+  'Invalid number of arguments for the %(functionName)s function. Expected %(minArgRequired)s minimum, but got %(nbrArgSupplied)s instead.':
+    'Formula: %(functionName)s has too few arguments, %(nbrArgSupplied)s; give at least %(minArgRequired)s.',
+  'Invalid number of arguments for the %(functionName)s function. Expected %(maxArgPossible)s maximum, but got %(nbrArgSupplied)s instead.':
+    'Formula: %(functionName)s has too many arguments, %(nbrArgSupplied)s; give at most %(maxArgPossible)s.',
+  'The divisor must be different from zero.':
+    'Formula: it divides by 0; give a divisor other than 0.',
   'Invalid expression': 'Formula: it cannot be read; check brackets, quotes and separators.',
   'Invalid formula': 'Formula: it cannot be read; check brackets, quotes and separators.',
   'Wrong function call':

@@ -48,23 +48,38 @@ const DRIVING = `VSTACK({"harvest","price","days stored","presses take","spoilt"
 ].join(',')}))`;
 
 const BEST_CASES = `B${BEST_ROW}:D${BEST_ROW}`;
-/** The number of the case that comes first, among the three. */
-const FIRST_CASE = `MATCH(1,B${BEST_ROW + 1}:D${BEST_ROW + 1},0)`;
+const PLACES = `B${BEST_ROW + 1}:D${BEST_ROW + 1}`;
+/** The number of the case that comes first, the left one of a tie. */
+const FIRST_CASE = `MATCH(MIN(${PLACES}),${PLACES},0)`;
+const FIRST_NAME = `INDEX(${BEST_CASES},1,${FIRST_CASE})`;
 
 /** A figure of the first case, from a row below the three cases, as text. */
 const figure = (row: number, format: string): string =>
   `TEXT(INDEX(B${row}:D${row},1,${FIRST_CASE}),"${format}")`;
+/** An interval from the two rows from this one on. */
+const interval = (row: number, format: string): string =>
+  `" (95 % interval "&${figure(row, format)}&" to "&${figure(row + 1, format)}&")"`;
 
-/** Said first: the gist of each part below. */
-const SHORT: readonly string[] = [
-  `=INDEX(${BEST_CASES},1,${FIRST_CASE})&" bring the largest mean margin: "&${figure(BEST_ROW + 2, '0.0')}` +
-    `&" thousand euros (95 % interval "&${figure(BEST_ROW + 3, '0.0')}&" to "&${figure(BEST_ROW + 4, '0.0')}` +
-    `&"), the best in "&${figure(BEST_ROW + 5, '0%')}&" of the scenarios"`,
-  `="they fill more bottles than the store holds with a chance of "&${figure(CHANCES_ROW + 5, '0%')}` +
-    `&" (95 % interval "&${figure(CHANCES_ROW + 6, '0%')}&" to "&${figure(CHANCES_ROW + 7, '0%')}&")"`,
-  `="what moves the margin of "&C${BEST_ROW}&" most: "&G${DRIVERS_ROW}&", "&TEXT(G${DRIVERS_ROW + 4},"0%")&" of its variance"`,
-  `="the harvest as drawn: "&INDEX(F${CHECK_ROW}#,2,2)`,
-];
+/** Said first: the gist of each part below, or the error of the part that it is taken from. */
+const SHORT: readonly string[] = (
+  [
+    [
+      `A${BEST_ROW}`,
+      `${FIRST_NAME}&": the largest mean margin, "&${figure(BEST_ROW + 2, '0.0')}&" thousand euros"&` +
+        `${interval(BEST_ROW + 3, '0.0')}&", the best in "&${figure(BEST_ROW + 5, '0%')}&" of the scenarios"`,
+    ],
+    [
+      `A${CHANCES_ROW}`,
+      `${FIRST_NAME}&": more bottles than the store holds with a chance of "&` +
+        `${figure(CHANCES_ROW + 5, '0%')}&${interval(CHANCES_ROW + 6, '0%')}`,
+    ],
+    [
+      `F${DRIVERS_ROW}`,
+      `C${BEST_ROW}&": what moves the margin most is "&G${DRIVERS_ROW}&", "&TEXT(G${DRIVERS_ROW + 4},"0%")&" of its variance"`,
+    ],
+    [`F${CHECK_ROW}`, `"the harvest as drawn: "&INDEX(F${CHECK_ROW}#,2,2)`],
+  ] as const
+).map(([part, text]) => `=IF(ISERROR(${part}),${part},${text})`);
 
 export function decisionSheet(): SheetPlan {
   const sheet = new SheetPlan('Decision', { columns: 24, rows: LAST_ROW, frozenRows: 0 })

@@ -31,7 +31,9 @@ export const SEASON = {
   harvest: `Season!L${FIRST}#`,
   price: `Season!M${FIRST}#`,
   days: `Season!N${FIRST}#`,
-  taken: (k: number) => `DROP(CHOOSECOLS(Season!O${HEAD}#,${k}),1)`,
+  // DROP would hide why there are no columns.
+  taken: (k: number) =>
+    `IF(ISERROR(Season!$O$${HEAD}),Season!$O$${HEAD},DROP(CHOOSECOLS(Season!O${HEAD}#,${k}),1))`,
   spoilt: `DROP(CHOOSECOLS(Season!S${HEAD}#,1),1)`,
 } as const;
 
@@ -144,7 +146,7 @@ function whatIf(sheet: SheetPlan): void {
     .put('A27', '3  What if: tonnes that the presses take in the season', 'section')
     .put('A28', 'change a number of presses, and its column follows', 'unit')
     .putRows('A', 29, [
-      ['case', '=B30&" presses"', '=C30&" presses"', '=D30&" presses"'],
+      ['case', ...['B', 'C', 'D'].map((each) => `=${each}30&IF(${each}30=1," press"," presses")`)],
       ['presses', 2, 3, 4],
     ])
     .look('A29:D29', 'head')

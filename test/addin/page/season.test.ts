@@ -98,7 +98,7 @@ describe('the sample, from links to a decision', () => {
     );
     const percent = (share: number): string => `${Math.round(100 * share)}%`;
     expect(grid.read('Decision', 'A6')).toBe(
-      `3 presses bring the largest mean margin: ${mean} thousand euros (95 % interval ${from} to ${to}), ` +
+      `3 presses: the largest mean margin, ${mean} thousand euros (95 % interval ${from} to ${to}), ` +
         `the best in ${percent(figure('chance to be best'))} of the scenarios`,
     );
     const chances = turned(grid.readSpill('Decision', 'A36'));
@@ -106,7 +106,7 @@ describe('the sample, from links to a decision', () => {
       percent(figure(`chance above${end}`, chances)),
     );
     expect(grid.read('Decision', 'A7')).toBe(
-      `they fill more bottles than the store holds with a chance of ${above} (95 % interval ${least} to ${most})`,
+      `3 presses: more bottles than the store holds with a chance of ${above} (95 % interval ${least} to ${most})`,
     );
     // Two presses leave apples behind, four cost more than they bring.
     expect(shown.find(([item]) => item === 'place')).toEqual(['place', 3, 1, 2]);
@@ -126,7 +126,7 @@ describe('the sample, from links to a decision', () => {
     );
     const share = Number(drivers[1]?.[drivers[0]!.indexOf('share of variance')]);
     expect(grid.read('Decision', 'A8')).toBe(
-      `what moves the margin of 3 presses most: price, ${Math.round(100 * share)}% of its variance`,
+      `3 presses: what moves the margin most is price, ${Math.round(100 * share)}% of its variance`,
     );
   });
 
