@@ -7,7 +7,7 @@ import { next, prev } from '../numeric/float';
 import * as I from '../numeric/interval';
 
 /** Below this a product of doubles may have lost digits on the way. */
-const SAFE = 1e-290;
+export const SAFE = 1e-290;
 
 /** A function of x that is finite and ≥ 0 within the limits; a single undefined point has its neighbour's height. */
 export function heightOf(

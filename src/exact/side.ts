@@ -18,7 +18,7 @@ import type { Tape } from '../formula/tape';
 import * as elementary from '../numeric/elementary';
 import { powerOfTwo } from '../numeric/float';
 import type { Cell } from './cells';
-import { heightOf } from './height';
+import { heightOf, SAFE } from './height';
 import { endpointIntegral } from './quadrature';
 
 const PRECISE = 1e-15;
@@ -59,6 +59,21 @@ export function hatCell(hat: Hat, envelope: Envelope, height: (x: number) => num
     },
     parameterOf: (x) => sign * Math.min(1, shareBeyond(hat, (x - origin) * direction)),
   };
+}
+
+/**
+ * True where a double cannot hold the heights that the share beyond x is made of: under a power,
+ * whose area reaches many times farther than x. Under an exponential it ends soon after x.
+ * Measured: 12 digits of a share are told down to heights of SAFE, none where heights are 0.
+ */
+export function isTooFaint(envelope: Envelope, x: number, direction: -1 | 1): boolean {
+  return envelope.hats.some(
+    (hat) =>
+      hat.kind === 'power' &&
+      hat.direction === direction &&
+      (x - hat.origin) * direction > hat.c &&
+      heightOf(envelope)(x) < SAFE,
+  );
 }
 
 /** The integral of weight · density over what lies under a hat. */

@@ -3,7 +3,9 @@ import type { Cell, Range } from '../density/cells';
 import { given, numberIn, passErrors, quoted, singleCell, word } from '../density/cells';
 import { InputError } from '../errors';
 import type { Side } from '../exact/shares';
+import { isTooFaint } from '../exact/side';
 import { onlyShape } from './envelope';
+import type { Proved } from './proved';
 import { prove } from './proved';
 
 const DENSITY = 'density (argument 1)';
@@ -16,7 +18,8 @@ const SIDE = 'side (argument 4)';
  * The share of the area below each x.
  * Shapes: as `x`. Units: x as in the density; shares as fractions of 1.
  * Guarantee: 12 digits where the density is smooth, small shares too; 1 − ABOVE.
- * @throws {InputError} @throws {CellErrorPassed} as DRAW does, and for an x that is not a number.
+ * @throws {InputError} @throws {CellErrorPassed} as DRAW does, for an x that is not a number, and for
+ * one so far out under a power that the density is too small for a double.
  */
 export function below(
   density: Range | null,
@@ -46,8 +49,24 @@ function sharesAt(
 ): Range {
   const shape = onlyShape(density, limits, givens, { density: DENSITY, limits: LIMITS, givens: 4 });
   const points = numbersIn(x, X, 'give a number or a range of numbers');
-  const { shares } = prove(shape);
-  return points.map((row) => row.map((at) => shares[side](at)));
+  const proved = prove(shape);
+  return points.map((row, i) =>
+    row.map((at, j) => {
+      if (!isTold(proved, at, side)) {
+        throw new InputError(
+          placeOf(points, X, i, j),
+          `the density at ${at} is too small for a number, and the share beyond it with it`,
+          'give an x nearer to the middle',
+        );
+      }
+      return proved.shares[side](at);
+    }),
+  );
+}
+
+/** False where the digits of the share on that side of x are lost. */
+function isTold(proved: Proved, x: number, side: Side): boolean {
+  return proved.kind !== 'curve' || !isTooFaint(proved.envelope, x, side === 'below' ? -1 : 1);
 }
 
 /**
@@ -81,10 +100,18 @@ export function quantile(
       }
     });
   });
-  const { shares } = prove(shape);
+  const proved = prove(shape);
   return wanted.map((row, i) =>
     row.map((value, j) => {
-      const x = shares.quantile(value, from);
+      const x = proved.shares.quantile(value, from);
+      const beyond: Side = value <= 0.5 ? from : from === 'below' ? 'above' : 'below';
+      if (x - x === 0 && !isTold(proved, x, beyond)) {
+        throw new InputError(
+          placeOf(wanted, SHARE, i, j),
+          `the density at the x of share ${value} is too small for a number, and x cannot be told`,
+          'give a share further from 0 and 1',
+        );
+      }
       if (x - x === 0) return x;
       throw new InputError(
         placeOf(wanted, SHARE, i, j),

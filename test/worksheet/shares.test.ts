@@ -10,6 +10,8 @@ const BLOCK: Range = [
 ];
 const LIMITS = [[0, 4]];
 
+type Shape = [Range, Range | null];
+
 describe('below, above, quantile', () => {
   test('below(…, x) has the shape of x and is exact on a flat density [law]', () => {
     const x = [
@@ -137,6 +139,31 @@ describe('below, above, quantile', () => {
     ],
   ])('%s is refused with its place [law]', (_, run, message) => {
     expect(run).toThrow(message);
+  });
+
+  // Closed forms: above 1 the area of x^-4 beyond x is x^-3 of the whole; of 1/(1 + x²) it tends to
+  // 1/(πx). Heights fall to 1e-280 and 1e-288; doubles end at 5e-324.
+  test('above and quantile keep 12 digits far out in tails of powers, and refuse where heights are no numbers [law]', () => {
+    const cubes: Shape = [[['x^-4']], [[1, 'unbounded']]];
+    const cauchy: Shape = [[['1/(1+x^2)']], null];
+    const [[share, ...rest]] = above(...cubes, [[1e70, 1e72]], []) as [[number, number]];
+    expect(share * 1e210).toBeCloseTo(1, 12);
+    expect(rest[0] * 1e216).toBeCloseTo(1, 12);
+    const [[far]] = above(...cauchy, [[1e144]], []) as [[number]];
+    expect(far * 1e144 * Math.PI).toBeCloseTo(1, 12);
+    const [[x]] = quantile(...cubes, [[1e-216]], [['above']], []) as [[number]];
+    expect(x / 1e72).toBeCloseTo(1, 12);
+    expect(above(...cubes, [[0.5]], [])).toEqual([[1]]);
+    expect(below(...cubes, [[1e100]], [])).toEqual([[1]]);
+    expect(() => above(...cubes, [[2], [1e81]], [])).toThrow(
+      'x (argument 3), row 2: the density at 1e+81 is too small for a number, and the share beyond it with it; give an x nearer to the middle.',
+    );
+    expect(() => below(...cauchy, [[-1e162]], [])).toThrow('the density at -1e+162 is too small');
+    for (const side of ['below', 'above']) {
+      expect(() => quantile(...cauchy, [[1e-300]], [[side]], [])).toThrow(
+        'share (argument 3): the density at the x of share 1e-300 is too small for a number, and x cannot be told; give a share further from 0 and 1.',
+      );
+    }
   });
 
   test('an error cell among the numbers comes back as that error [law]', () => {
