@@ -160,7 +160,7 @@ describe('a mistake in the sample', () => {
     const grid = firstSheets();
     grid.write('Shapes', 'E14', '=1/0');
     expect(grid.message('Draws', 'C8')).toBe(
-      '#DIV/0! The divisor must be different from zero. (from Shapes!E14)',
+      '#DIV/0! Formula: it divides by 0; give a divisor other than 0. (from Shapes!E14)',
     );
   });
 
