@@ -6,13 +6,13 @@ import { VOCABULARY } from '../src/formula/vocabulary';
 
 const readme = readFileSync(resolve(__dirname, '../README.md'), 'utf8');
 /** What is typed and what comes back, one exchange after the other. */
-const [, transcript = ''] = /<!-- transcript -->\n```\n([^]+?)\n```/.exec(readme) ?? [];
-const exchanges = transcript.split('\n\n').map((exchange) => {
+const [, shown = ''] = /<!-- exchange -->\n```\n([^]+?)\n```/.exec(readme) ?? [];
+const exchanges = shown.split('\n\n').map((exchange) => {
   const [typed = '', ...answer] = exchange.split('\n');
   return [typed, answer.join('\n')] as const;
 });
 /** Examples that read a file of the reader's own cannot run. */
-const examples = [...readme.replace(transcript, '').matchAll(/^npx undercurve (?!.*@)(.+)$/gm)].map(
+const examples = [...readme.replace(shown, '').matchAll(/^npx undercurve (?!.*@)(.+)$/gm)].map(
   ([, line]) => line ?? '',
 );
 
@@ -52,7 +52,7 @@ describe('README.md', () => {
     expect(out).not.toBe('');
   });
 
-  test('has a transcript of answers and of a mistake [law]', () => {
+  test('has an exchange of answers and of a mistake [law]', () => {
     expect(exchanges).toHaveLength(3);
   });
 
