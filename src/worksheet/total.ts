@@ -1,5 +1,5 @@
 /** TOTAL: sums over a number of draws that differs from row to row. */
-import type { Range } from '../density/cells';
+import type { Cell, Range } from '../density/cells';
 import { givenUnlessZero } from '../density/cells';
 import { drawTotals } from '../draw/total';
 import { InputError } from '../errors';
@@ -52,10 +52,11 @@ export function total(
     readQuantity(formula, shape, limits, givens, { ...PLACES, quantity: EACH, name: 'Each' }).tape;
   const { drawer } = prove(shape);
   const { totals, largest } = drawTotals(drawer, key, line.numbers, tape && measureBy(tape));
-  return [
-    ['total', 'largest', 'count'],
-    ...line.numbers.map((count, i) => [totals[i]!, largest[i]!, count]),
-  ];
+  const { numbers } = line;
+  const spilled = new Array<readonly Cell[]>(numbers.length + 1);
+  spilled[0] = ['total', 'largest', 'count'];
+  for (let i = 0; i < numbers.length; i++) spilled[i + 1] = [totals[i]!, largest[i]!, numbers[i]!];
+  return spilled;
 }
 
 function readCounts(range: Range | null): Line {
