@@ -18,20 +18,25 @@ const MANY_DRAWS = 1_000_000;
 const MANY_SHARES = 2000;
 const MANY_LINES = 200;
 /** Which argument holds what is worked out one by one. */
-const ONE_BY_ONE: Readonly<Record<string, string>> = { BELOW: 'x', ABOVE: 'x', QUANTILE: 'share' };
+const ONE_BY_ONE: Readonly<Record<string, string | undefined>> = {
+  BELOW: 'x',
+  ABOVE: 'x',
+  QUANTILE: 'share',
+};
 
 /** Whether a call is worth a Worker. Guarantee: none; the answer is the same either way. */
 export function takesLong(name: string, args: Arguments): boolean {
   const parameters = catalogue.find((entry) => entry.name === name)?.parameters ?? [];
   const at = (parameter: string): Range | null =>
     args[parameters.findIndex((each) => each.name === parameter)] ?? null;
+  const each = ONE_BY_ONE[name];
   return (
     hasSeveralVariables(at('limits')) ||
     hasManyPoints(at('limits')) ||
     hasLongFormula(at('density')) ||
     (name === 'TOTAL' && sumOf(at('counts')) > MANY_DRAWS) ||
     (name === 'EACH' && hasManyLines(at('lines'))) ||
-    (name in ONE_BY_ONE && sizeOf(at(ONE_BY_ONE[name]!)) > MANY_SHARES)
+    (each !== undefined && sizeOf(at(each)) > MANY_SHARES)
   );
 }
 

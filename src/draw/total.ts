@@ -15,7 +15,7 @@ import type { ColumnDrawer, NumberSource } from './rejection';
 const BLOCK = 65_536;
 
 /** What becomes of each row: its total and its largest draw, both 0 for a row without draws. */
-export interface Totals {
+interface Totals {
   readonly totals: Float64Array;
   readonly largest: Float64Array;
 }

@@ -29,7 +29,7 @@ import { planeMasses, planeOver } from './plane';
 import type { Box } from './space';
 import { Space } from './space';
 
-export interface Condition {
+interface Condition {
   readonly text: string;
   /** The sides of an equation; null for any other condition. */
   readonly sides: readonly [left: string, right: string] | null;

@@ -17,7 +17,8 @@ import { looseProductUp, looseSumDown, looseSumUp, powerOfTwo, up } from '../num
 import { Defined, turningLevel } from './operation';
 import type { Step, Tape } from './tape';
 import { ADD } from './operations/arithmetic';
-import { CHOOSE_BY, EXP } from './vocabulary';
+import { CHOOSE_BY } from './operations/choice';
+import { EXP } from './operations/exponential';
 
 /** ln 2, enclosed. */
 const LN_2 = I.interval(0.6931471805599453, 0.6931471805599454);

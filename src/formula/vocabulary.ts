@@ -13,7 +13,7 @@ import { ADD, DIVIDE, MULTIPLY, NEGATE, SUBTRACT } from './operations/arithmetic
 import { BETA_ROWS } from './operations/betas';
 import { BRANCH_ROWS } from './operations/branch';
 import { CALENDAR_ROWS } from './operations/calendar';
-import { ABS, CHOOSE_BY, SIGN } from './operations/choice';
+import { ABS, SIGN } from './operations/choice';
 import { COUNT_ROWS } from './operations/counts';
 import { ERF, ERFC } from './operations/error';
 import { EXP, LN, LOG10 } from './operations/exponential';
@@ -37,8 +37,6 @@ import {
 } from './operations/truth';
 import { ACOS, angle, ASIN, ATAN, COS, SIN, TAN } from './operations/wave';
 import type { Maker, Row } from './row';
-
-export { CHOOSE_BY, EXP };
 
 function unary(name: string, operation: Operation): Row {
   return { name, least: 1, most: 1, operation };

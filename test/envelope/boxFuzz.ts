@@ -12,7 +12,7 @@ import { joint } from './boxProof';
 import { checkBoxes } from './checkBoxes';
 import { randomRegion } from './randomRegion';
 
-export interface BoxFuzzReport {
+interface BoxFuzzReport {
   readonly shapes: number;
   readonly proved: number;
   readonly points: number;
